@@ -1,0 +1,20 @@
+import node from '@astrojs/node';
+import react from '@astrojs/react';
+import tailwindcss from '@tailwindcss/vite';
+import { defineConfig } from 'astro/config';
+import { nodeWorker } from './scripts/vite-node-worker.mjs';
+
+export default defineConfig({
+  output: 'server',
+  adapter: node({ mode: 'middleware' }),
+  integrations: [react()],
+  devToolbar: { enabled: false },
+  // The build-time host list cannot know a deployment's name; src/middleware.ts checks the
+  // origin of every unsafe request instead, JSON included.
+  security: { checkOrigin: false },
+  experimental: { csp: true },
+  vite: {
+    plugins: [tailwindcss(), nodeWorker()],
+    ssr: { external: ['@electric-sql/pglite', '@node-rs/argon2', '@resvg/resvg-js', 'pdfkit', 'piscina'] },
+  },
+});
