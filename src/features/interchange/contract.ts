@@ -1,0 +1,65 @@
+/** Shapes of imports and exports, shared by server and client. */
+import { z } from 'zod';
+
+/** What a file can hold; the names are those of the files of the project's own formats. */
+export const IMPORT_KINDS = ['blocks', 'rotations', 'features', 'directions'] as const;
+export type ImportKind = (typeof IMPORT_KINDS)[number];
+
+export const EXPORT_NAMES = ['blocks.geojson', 'rotations.csv', 'features.geojson', 'directions.csv'] as const;
+export type ExportName = (typeof EXPORT_NAMES)[number];
+
+/** The largest file that one import reads. */
+export const IMPORT_LIMIT_BYTES = 64 * 1024 * 1024;
+
+/** A row that was not taken, and how to mend it. `column` is a heading, a property or `geometry`. */
+export const rejectedRow = z.object({
+  line: z.number().int().nullable(),
+  column: z.string().nullable(),
+  read: z.string(),
+  problem: z.string(),
+  hint: z.string(),
+});
+export type RejectedRow = z.infer<typeof rejectedRow>;
+
+/** Something that the file leaves open. Nothing is written until each is answered. */
+export const question = z.object({
+  id: z.string(),
+  ask: z.string(),
+  choices: z.array(z.string()).min(2),
+  /** Up to five places where it arises, as "line 7: 12,5". */
+  examples: z.array(z.string()),
+});
+export type Question = z.infer<typeof question>;
+
+/** One row that would be written, as the preview shows it. */
+export const previewRow = z.object({
+  line: z.number().int().nullable(),
+  change: z.enum(['new', 'replaces', 'unchanged', 'kept']),
+  cells: z.record(z.string(), z.union([z.string(), z.number(), z.null()])),
+});
+export type PreviewRow = z.infer<typeof previewRow>;
+
+export const importReport = z.object({
+  kind: z.enum(IMPORT_KINDS),
+  file: z.string(),
+  accepted: z.number().int(),
+  rejected: z.array(rejectedRow),
+  /** How many more were rejected than are listed. */
+  rejected_beyond: z.number().int(),
+  questions: z.array(question),
+  /** What was understood without changing a value: a byte-order mark, the separator, ignored columns. */
+  notes: z.array(z.string()),
+  preview: z.array(previewRow),
+  written: z.boolean(),
+  revision: z.number().int(),
+  /** The kept original; with `rejected_file` where rejected rows were kept to mend. */
+  import_id: z.string().nullable(),
+});
+export type ImportReport = z.infer<typeof importReport>;
+
+export const answers = z.record(z.string(), z.string());
+export type Answers = z.infer<typeof answers>;
+
+/** Heading of the file → column of the format, for tables with headings of their own. */
+export const columnMapping = z.record(z.string(), z.string());
+export type ColumnMapping = z.infer<typeof columnMapping>;

@@ -1,0 +1,144 @@
+/** Sets the rows of a file against the draft: unknown blocks and frames, rows already there, loops in the circuit. */
+import { compileModel } from '../../../kernel/rotations';
+import type { BlockInput } from '../../../kernel/rotations/types';
+import type { Rotation, RotationFields } from '../../ledger/contract';
+import type { RejectedRow } from '../contract';
+import type { Asking } from './ask';
+import { rotationKey, type Candidate } from './rotations';
+
+export interface DraftForRotations {
+  readonly blocks: readonly BlockInput[];
+  readonly rotations: readonly Rotation[];
+}
+
+export interface ResolvedRotations {
+  readonly create: readonly Candidate<RotationFields>[];
+  readonly replace: readonly (Candidate<RotationFields> & { readonly id: string })[];
+  readonly unchanged: readonly Candidate<RotationFields>[];
+  readonly kept: readonly Candidate<RotationFields>[];
+  readonly rejected: readonly RejectedRow[];
+  /** Codes that the answers say to add: frames for missing references, blocks without outline otherwise. */
+  readonly addFrames: readonly string[];
+  readonly addBlocks: readonly string[];
+}
+
+const ADD_FRAME = 'add as frames';
+const ADD_BLOCK = 'add without outline';
+const REJECT = 'reject these rows';
+
+export function resolveRotations(
+  candidates: readonly Candidate<RotationFields>[],
+  draft: DraftForRotations,
+  asking: Asking,
+): ResolvedRotations {
+  const rejected: RejectedRow[] = [];
+  const known = new Set(draft.blocks.map((b) => b.code));
+  const addBlocks = new Set<string>();
+  const addFrames = new Set<string>();
+  const moved = new Set(candidates.map((c) => c.fields.block));
+
+  const present = candidates.filter((candidate) => {
+    const { block, relative_to } = candidate.fields;
+    for (const code of [block, relative_to]) {
+      if (known.has(code)) continue;
+      const asReference = code === relative_to && !moved.has(code);
+      const answer = asReference
+        ? askMissing(asking, 'missing_reference', 'References', [ADD_FRAME, REJECT], candidate, code)
+        : askMissing(asking, 'missing_block', 'Blocks', [ADD_BLOCK, REJECT], candidate, code);
+      if (answer === REJECT) {
+        rejected.push(unknownCode(candidate, code, asReference));
+        return false;
+      }
+      (asReference ? addFrames : addBlocks).add(code);
+    }
+    return true;
+  });
+
+  const looped = withoutLoops(present, draft, [...addBlocks], [...addFrames], rejected);
+  return { ...against(looped, draft.rotations, asking), rejected, addFrames: [...addFrames], addBlocks: [...addBlocks] };
+}
+
+function askMissing(
+  asking: Asking,
+  id: string,
+  what: string,
+  choices: readonly string[],
+  candidate: Candidate<RotationFields>,
+  code: string,
+): string | null {
+  const ask = `${what} named in the file are not in the project. Add them?`;
+  return asking.ask(id, ask, choices, `line ${candidate.line}: ${code}`);
+}
+
+const unknownCode = (candidate: Candidate<RotationFields>, code: string, asReference: boolean): RejectedRow => ({
+  line: candidate.line,
+  column: asReference ? 'relative_to' : 'block',
+  read: code,
+  problem: 'not in the project',
+  hint: 'Import its outline first, or correct the code.',
+});
+
+function withoutLoops(
+  candidates: readonly Candidate<RotationFields>[],
+  draft: DraftForRotations,
+  addBlocks: readonly string[],
+  addFrames: readonly string[],
+  rejected: RejectedRow[],
+): readonly Candidate<RotationFields>[] {
+  const whole = { appears_ma: null, disappears_ma: null };
+  const blocks = [
+    ...draft.blocks,
+    ...addBlocks.map((code) => ({ code, kind: 'other' as const, ...whole })),
+    ...addFrames.map((code) => ({ code, kind: 'frame' as const, ...whole })),
+  ];
+  const keys = new Set(candidates.map((c) => rotationKey(c.fields)));
+  const rows = [
+    ...draft.rotations.filter((row) => !keys.has(rotationKey(row))),
+    ...candidates.map((c, i) => ({ ...c.fields, id: `file ${i}` })),
+  ];
+  const loops = compileModel(blocks, rows).problems.filter((p) => p.name === 'Cycle');
+  if (loops.length === 0) return candidates;
+  return candidates.filter(({ line, fields }) => {
+    const loop = loops.find(
+      (l) =>
+        l.loop.some((code, i) => code === fields.block && l.loop[(i + 1) % l.loop.length] === fields.relative_to) &&
+        fields.age_ma >= l.younger_ma &&
+        fields.age_ma <= l.older_ma,
+    );
+    if (!loop) return true;
+    rejected.push({
+      line,
+      column: 'relative_to',
+      read: fields.relative_to,
+      problem: `closes a loop between ${loop.older_ma} and ${loop.younger_ma} Ma: ${[...loop.loop, loop.loop[0]].join(' → ')}`,
+      hint: 'Give one of these blocks another reference at these ages: a circuit ends in a frame.',
+    });
+    return false;
+  });
+}
+
+function against(candidates: readonly Candidate<RotationFields>[], existing: readonly Rotation[], asking: Asking) {
+  const byKey = new Map(existing.map((row) => [rotationKey(row), row]));
+  const create: Candidate<RotationFields>[] = [];
+  const replace: (Candidate<RotationFields> & { id: string })[] = [];
+  const unchanged: Candidate<RotationFields>[] = [];
+  const kept: Candidate<RotationFields>[] = [];
+  for (const candidate of candidates) {
+    const row = byKey.get(rotationKey(candidate.fields));
+    if (!row) create.push(candidate);
+    else if (sameFields(candidate.fields, row)) unchanged.push(candidate);
+    else {
+      const ask = 'Rows of the same block, reference and age stand in the draft with other values. Which are to stay?';
+      const where = `line ${candidate.line}: ${row.block} in ${row.relative_to} at ${row.age_ma} Ma`;
+      if (asking.ask('existing_rows', ask, ["the file's", "the draft's"], where) === "the draft's") kept.push(candidate);
+      else replace.push({ ...candidate, id: row.id });
+    }
+  }
+  return { create, replace, unchanged, kept };
+}
+
+/** Compares every field of a file's row with the draft's. */
+export function sameFields(fields: object, row: object): boolean {
+  const other = row as Record<string, unknown>;
+  return Object.entries(fields).every(([key, value]) => JSON.stringify(value) === JSON.stringify(other[key] ?? null));
+}

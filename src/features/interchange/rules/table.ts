@@ -1,0 +1,71 @@
+/** Delimited text to rows that remember their line. RFC 4180 quoting; comma, semicolon, tab or bar between cells. */
+import { parse } from 'csv-parse/sync';
+
+export interface TableRow {
+  readonly line: number;
+  readonly cells: Readonly<Record<string, string>>;
+}
+
+export interface Table {
+  readonly delimiter: string;
+  readonly headings: readonly string[];
+  readonly rows: readonly TableRow[];
+  /** Lines whose quoting cannot be read, or with more cells than headings. */
+  readonly broken: readonly { line: number; read: string; problem: string; hint: string }[];
+}
+
+const DELIMITERS = [',', ';', '\t', '|'] as const;
+const NAMES: Record<string, string> = { ',': 'commas', ';': 'semicolons', '\t': 'tabs', '|': 'bars' };
+export const delimiterName = (delimiter: string): string => NAMES[delimiter] ?? delimiter;
+
+/** The delimiter that splits the heading line into the most cells; a comma where none does. */
+export function sniffDelimiter(text: string): string {
+  const heading = text.slice(0, text.search(/[\r\n]|$/));
+  const counts = DELIMITERS.map((d) => heading.split(d).length);
+  return DELIMITERS[counts.indexOf(Math.max(...counts))] ?? ',';
+}
+
+interface Parsed {
+  record: string[];
+  info: { lines: number };
+}
+
+export function readTable(text: string): Table {
+  const delimiter = sniffDelimiter(text);
+  let parsed: Parsed[];
+  try {
+    parsed = parse(text, {
+      delimiter,
+      info: true,
+      bom: true,
+      relax_column_count: true,
+      relax_quotes: true,
+      skip_empty_lines: true,
+      max_record_size: 1_000_000,
+    }) as unknown as Parsed[];
+  } catch (error) {
+    const line = (error as { lines?: number }).lines ?? 1;
+    const problem = 'a quoted cell is not closed';
+    const hint = 'Close the double quote, or write two of them for one inside a cell.';
+    return { delimiter, headings: [], rows: [], broken: [{ line, read: '', problem, hint }] };
+  }
+  const [first, ...rest] = parsed;
+  const headings = (first?.record ?? []).map((h) => h.trim());
+  const rows: TableRow[] = [];
+  const broken: Table['broken'][number][] = [];
+  for (const { record, info } of rest) {
+    if (record.every((cell) => cell.trim() === '')) continue;
+    const line = info.lines;
+    const extra = record.slice(headings.length).filter((cell) => cell.trim() !== '');
+    if (extra.length > 0) {
+      const hint =
+        delimiter === ','
+          ? 'Put text with commas between double quotes, and write decimals with a point.'
+          : 'Put text that holds the separator between double quotes.';
+      broken.push({ line, read: record.join(delimiter), problem: 'more cells than headings', hint });
+      continue;
+    }
+    rows.push({ line, cells: Object.fromEntries(headings.map((h, i) => [h, (record[i] ?? '').trim()])) });
+  }
+  return { delimiter, headings, rows, broken };
+}
