@@ -1,0 +1,26 @@
+/** How blocks are named in running text and in narrow headings. */
+interface Named {
+  readonly code: string;
+  readonly name: string;
+  readonly kind: string;
+}
+
+/** "Spin axis" reads "spin axis" inside a sentence; a block keeps its capital. */
+export const inText = (block: Named): string =>
+  block.kind === 'frame' ? block.name.charAt(0).toLowerCase() + block.name.slice(1) : block.name;
+
+/** "Old Harrow craton" is "Old Harrow" where room is short: a last word in lower case only says the kind. */
+export function shortName(block: Named): string {
+  if (block.kind === 'frame') return inText(block);
+  const words = block.name.split(' ');
+  const last = words[words.length - 1] ?? '';
+  return words.length > 1 && last === last.toLowerCase() ? words.slice(0, -1).join(' ') : block.name;
+}
+
+/** "MK" for "Mara Kell". */
+export function initials(name: string): string {
+  const words = name.trim().split(/\s+/);
+  const first = words[0]?.charAt(0) ?? '';
+  const last = words.length > 1 ? (words[words.length - 1]?.charAt(0) ?? '') : '';
+  return (first + last).toUpperCase();
+}
