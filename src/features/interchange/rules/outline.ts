@@ -1,6 +1,6 @@
 /** Reads one outline: a polygon or several, each ring checked, its inside settled, exchanged axes asked about. */
 import type { Geometry, MultiPolygon, Polygon, Position } from 'geojson';
-import { ringArea, toVector } from '../../../kernel/sphere';
+import { readRing, ringArea } from '../../../kernel/sphere';
 import type { Asking } from './ask';
 import type { LocatedFeature } from './geojson-text';
 import type { PropertyReader } from './properties';
@@ -52,10 +52,9 @@ export function readOutline(
  */
 function askInside(feature: LocatedFeature, geometry: Polygon | MultiPolygon, asking: Asking): 'smaller' | 'larger' {
   const outers = geometry.type === 'Polygon' ? [geometry.coordinates[0]] : geometry.coordinates.map((p) => p[0]);
-  const reversed = outers.filter((ring) => ring && ringArea(ring.map((p) => toVector(p[1]!, p[0]!))) > SPHERE / 2);
-  if (reversed.length === 0) return 'smaller';
-  const area = ringArea(reversed[0]!.map((p) => toVector(p[1]!, p[0]!)));
-  const percent = ((100 * area) / SPHERE).toFixed(1);
+  const reversed = outers.map((ring) => ringArea(readRing(ring ?? []))).find((signed) => signed < 0);
+  if (reversed === undefined) return 'smaller';
+  const percent = (100 * (1 + reversed / SPHERE)).toFixed(1);
   const code = String(feature.properties['code'] ?? `entry ${feature.index + 1}`);
   const ask =
     'Rings run clockwise, so that by their direction they cover most of the globe. Which side of them is the block?';
@@ -86,7 +85,7 @@ export const outlineFaults = {
   swapped(features: readonly LocatedFeature[], asking: Asking): boolean {
     const all = features.flatMap((f) => positions(f.geometry).map((p) => ({ line: f.line, p })));
     const beyond = all.filter(({ p }) => Math.abs(p[1]!) > 90);
-    if (beyond.length === 0 || !all.every(({ p }) => Math.abs(p[0]!) <= 90 && Math.abs(p[1]!) <= 360)) return false;
+    if (beyond.length < 2 || !all.every(({ p }) => Math.abs(p[0]!) <= 90 && Math.abs(p[1]!) <= 360)) return false;
     const ask = 'Latitudes go beyond 90°, and all positions would be valid the other way round. Are latitude and longitude exchanged?';
     let answer: string | null = null;
     for (const { line, p } of beyond.slice(0, 5)) {
