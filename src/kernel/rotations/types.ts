@@ -92,11 +92,48 @@ export interface CompiledBlock extends BlockInput {
 export type ModelProblem =
   | { readonly name: 'DuplicateBlock'; readonly block: string }
   | { readonly name: 'UnknownBlock'; readonly block: string; readonly rotation: string }
-  | { readonly name: 'MissingReference'; readonly block: string; readonly relative_to: string; readonly older_ma: number; readonly younger_ma: number }
-  | { readonly name: 'DuplicateRow'; readonly block: string; readonly relative_to: string; readonly age_ma: number; readonly rotations: readonly string[] }
-  | { readonly name: 'Cycle'; readonly loop: readonly string[]; readonly older_ma: number; readonly younger_ma: number }
+  | {
+      readonly name: 'MissingReference';
+      readonly block: string;
+      readonly relative_to: string;
+      readonly older_ma: number;
+      readonly younger_ma: number;
+    }
+  | {
+      readonly name: 'DuplicateRow';
+      readonly block: string;
+      readonly relative_to: string;
+      readonly age_ma: number;
+      readonly rotations: readonly string[];
+    }
+  | {
+      readonly name: 'Cycle';
+      readonly loop: readonly string[];
+      readonly older_ma: number;
+      readonly younger_ma: number;
+    }
   | { readonly name: 'NonIdentityAtPresent'; readonly block: string; readonly rotation: string }
-  | { readonly name: 'NearHalfTurnStage'; readonly block: string; readonly relative_to: string; readonly older_ma: number; readonly younger_ma: number; readonly angle_deg: number };
+  | {
+      readonly name: 'InvalidRow';
+      readonly block: string;
+      readonly rotation: string;
+      readonly quantity: 'age_ma' | 'pole_lat' | 'pole_lon' | 'angle_deg';
+      readonly read: string;
+    }
+  | {
+      readonly name: 'LegGap';
+      readonly block: string;
+      readonly older_ma: number;
+      readonly younger_ma: number;
+    }
+  | {
+      readonly name: 'NearHalfTurnStage';
+      readonly block: string;
+      readonly relative_to: string;
+      readonly older_ma: number;
+      readonly younger_ma: number;
+      readonly angle_deg: number;
+    };
 
 /** The `motions` answer of the API: every circuit's links, ready to evaluate at any age. */
 export interface Model {
@@ -112,6 +149,7 @@ export interface Link {
   readonly relative_to: string;
   /** `up`: R(block | relative_to) as stored; `down`: its inverse, on the way from a common ancestor to the reference. */
   readonly direction: 'up' | 'down';
+  /** The factor as it enters the product, so already inverted where `down`. */
   readonly quaternion: Quaternion;
   readonly younger: CompiledRow;
   /** The same row as `younger` exactly at a row's age. */
@@ -123,6 +161,9 @@ export interface Link {
   readonly extrapolated: boolean;
 }
 
+/**
+ * R(block | reference) at an age. `links` run from the block to the reference: the quaternion is the product of theirs, the last leftmost.
+ */
 export type Pose =
   | { readonly status: 'placed'; readonly quaternion: Quaternion; readonly links: readonly Link[] }
   | {

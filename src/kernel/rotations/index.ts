@@ -1,0 +1,15 @@
+export * from './types';
+export * from './quaternion';
+export * from './pole';
+export * from './interpolate';
+export * from './compile';
+export * from './model-index';
+export { type Beyond, legAt } from './leg-at';
+export * from './circuit';
+export * from './batch';
+export * from './batch-points';
+export * from './stage';
+export * from './velocity';
+export * from './hand-over';
+export * from './row-ages';
+export * from './drift-path';
