@@ -27,5 +27,5 @@ export const paths = {
 
 /** A local address to return to after signing in, or the fallback where it leads elsewhere. */
 export function localPath(next: string | null | undefined, fallback: string): string {
-  return next && /^\/(?![/\\])/.test(next) ? next : fallback;
+  return next && /^\/(?![/\\])[^\s\\]*$/.test(next) ? next : fallback;
 }
