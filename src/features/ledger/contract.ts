@@ -41,7 +41,9 @@ export const outlineFields = z.object({
 });
 
 /** Entries xx, xy, xz, yy, yz, zz in rad², in the present coordinates of the moving block. */
-export const covariance = z.tuple([z.number(), z.number(), z.number(), z.number(), z.number(), z.number()]);
+export const covariance = z
+  .tuple([z.number(), z.number(), z.number(), z.number(), z.number(), z.number()])
+  .readonly();
 
 export const rotationFields = z.object({
   block: slug,

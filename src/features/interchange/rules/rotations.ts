@@ -30,7 +30,7 @@ export interface FileReading<T> {
   readonly notes: string[];
 }
 
-type Draft = PoleValues & { readonly row: TableRow; readonly rest: Omit<RotationFields, keyof Omit<PoleValues, 'line'>> };
+type Draft = PoleValues & { readonly row: TableRow; readonly rest: Omit<RotationFields, 'age_ma' | 'pole_lat' | 'pole_lon' | 'angle_deg'> };
 
 export function readRotations(text: string, answers: Answers = {}, mapping: ColumnMapping = {}): FileReading<RotationFields> {
   const table = readTable(text);
@@ -128,7 +128,7 @@ function readCovariance(row: TableRow, reader: CellReader): { covariance: Covari
     reader.reject(row, 'cov_xx', `the covariance lacks ${missing}`, 'Give all six entries in rad², or none.', '');
   }
   const wrong = covariance && checkCovariance(covariance);
-  if (wrong) reader.reject(row, 'cov_xx', wrong, 'A covariance is symmetric with no negative variance in any direction.');
+  if (wrong) reader.reject(row, 'cov_xx', wrong.problem, 'A covariance is symmetric with no negative variance in any direction.');
   return { covariance: wrong ? null : covariance, cov_dof };
 }
 

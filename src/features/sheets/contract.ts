@@ -1,0 +1,68 @@
+/** What a time-slice map is asked for, shared by the print page and the endpoints. */
+import { z } from 'zod';
+import { DEFAULT_PROJECTION, PROJECTION_NAMES, type ProjectionName } from '../../kernel/cartography/projections';
+import { slug } from '../ledger/contract';
+
+export const LAYERS = ['graticule', 'coasts', 'names', 'velocity', 'path', 'ellipse'] as const;
+export type Layer = (typeof LAYERS)[number];
+export const USUAL_LAYERS: readonly Layer[] = ['graticule', 'coasts', 'names', 'path', 'ellipse'];
+
+/** Paper sizes in millimetres, long side first (ISO 216). */
+export const PAPERS = { a3: [420, 297], a4: [297, 210], a5: [210, 148] } as const;
+export type Paper = keyof typeof PAPERS;
+
+/** Other spellings of projection names that people try. */
+const ALIASES: Record<string, ProjectionName> = {
+  azimuthalequalarea: 'lambert-azimuthal',
+  lambertazimuthalequalarea: 'lambert-azimuthal',
+  lambert: 'lambert-azimuthal',
+  stereographic: 'polar-stereographic',
+  platecarree: 'equirectangular',
+};
+const plain = (name: string): string => name.toLowerCase().replace(/[^a-z]/g, '');
+const projection = z
+  .string()
+  .default(DEFAULT_PROJECTION)
+  .transform((name, context): ProjectionName => {
+    const found = PROJECTION_NAMES.find((known) => plain(known) === plain(name)) ?? ALIASES[plain(name)];
+    if (found) return found;
+    context.addIssue({ code: 'custom', message: `not a projection known here: ${PROJECTION_NAMES.join(', ')}` });
+    return z.NEVER;
+  });
+
+const layers = z
+  .string()
+  .optional()
+  .transform((text, context): Layer[] => {
+    const names = text === undefined ? [...USUAL_LAYERS] : text.split(',').filter((name) => name !== '');
+    const unknown = names.filter((name) => !LAYERS.some((layer) => layer === name));
+    if (unknown.length === 0) return names as Layer[];
+    context.addIssue({ code: 'custom', message: `no such layer: ${unknown.join(', ')}; known are ${LAYERS.join(', ')}` });
+    return z.NEVER;
+  });
+
+const degrees = (least: number, most: number) => z.coerce.number().min(least).max(most);
+
+export const sliceQuery = z.object({
+  version: z.string().default('draft'),
+  age_ma: z.coerce.number().min(0).max(4600),
+  relative_to: slug.optional(),
+  projection,
+  centre_lat: degrees(-90, 90).default(0),
+  centre_lon: degrees(-360, 360).default(0),
+  /** Degrees from the centre to the edge of an azimuthal map. */
+  reach_deg: degrees(1, 175).optional(),
+  layers,
+  paper: z.enum(['a3', 'a4', 'a5']).default('a4'),
+  orientation: z.enum(['landscape', 'portrait']).default('landscape'),
+  title: z.string().max(160).optional(),
+  caption: z.string().max(600).default(''),
+  /** Drift path to draw: a block, a point of it in present coordinates, and a step. */
+  path_block: slug.optional(),
+  path_lat: degrees(-90, 90).optional(),
+  path_lon: degrees(-360, 360).optional(),
+  path_step_ma: z.coerce.number().min(0.1).max(500).default(10),
+  /** Resolution of a PNG. */
+  dpi: z.coerce.number().int().min(50).max(400).default(200),
+});
+export type SliceQuery = z.infer<typeof sliceQuery>;

@@ -1,0 +1,70 @@
+/** Everything of a subject that has a place at an age, carried there: the same for maps and for GeoJSON. */
+import type { MultiLineString, MultiPolygon, Polygon } from 'geojson';
+import { poseAt, rotate } from '../../../kernel/rotations';
+import type { Evidence, Pose, Status, Vector3 } from '../../../kernel/rotations/types';
+import { areaKm2, boundingCap, toLatLon } from '../../../kernel/sphere';
+import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
+import { holdsAt, type SliceSubject } from './subject';
+
+export interface CarriedBlock {
+  readonly code: string;
+  readonly name: string;
+  readonly evidence: Evidence;
+  readonly area: MultiPolygon;
+  readonly area_km2: number;
+  /** Where the name stands: the middle of the cap that holds the largest part. */
+  readonly label: { readonly lat: number; readonly lon: number };
+}
+
+export interface Carried {
+  readonly blocks: readonly CarriedBlock[];
+  readonly coasts: readonly MultiLineString[];
+  /** Blocks with an outline that have no place at this age, and why. */
+  readonly missing: readonly { readonly name: string; readonly status: Status }[];
+  /** Names under which the rows, outlines and lines used are cited, in alphabetical order. */
+  readonly sources: readonly string[];
+}
+
+export function carry(subject: SliceSubject, age_ma: number, relative_to: string): Carried {
+  const blocks: CarriedBlock[] = [];
+  const coasts: MultiLineString[] = [];
+  const missing: { name: string; status: Status }[] = [];
+  const sources = new Set<string>();
+  const poses = new Map<string, Pose>();
+  for (const block of subject.blocks) {
+    const outlines = block.outlines.filter((o) => holdsAt(age_ma, o.outline_older_ma, o.outline_younger_ma));
+    const pose = poseAt(subject.model, block.code, age_ma, relative_to);
+    poses.set(block.code, pose);
+    if (block.outlines.length === 0) continue;
+    if (pose.status !== 'placed') {
+      missing.push({ name: block.name, status: pose.status });
+      continue;
+    }
+    if (outlines.length === 0) continue;
+    const polygons = outlines.flatMap((o) => polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside));
+    const sizes = polygons.map((polygon) => areaKm2(polygon));
+    const largest = polygons[sizes.indexOf(Math.max(...sizes))]!;
+    const area = carryPolygons(polygons, pose.quaternion);
+    const label = toLatLon(boundingCap(carriedVectors(largest[0]!, pose)).centre);
+    blocks.push({ code: block.code, name: block.name, evidence: block.evidence, area, area_km2: sizes.reduce((a, b) => a + b, 0), label });
+    cite(sources, pose, block.source);
+  }
+  for (const line of subject.coasts) {
+    const pose = poses.get(line.block);
+    if (pose?.status !== 'placed' || !holdsAt(age_ma, line.appears_ma, line.disappears_ma)) continue;
+    coasts.push(carryLines(lineVectors(subject.geometryOf(line.sha256)), pose.quaternion));
+    if (line.source) sources.add(line.source);
+  }
+  return { blocks, coasts, missing, sources: [...sources].sort((a, b) => a.localeCompare(b, 'en')) };
+}
+
+function carriedVectors(ring: readonly Vector3[], pose: Extract<Pose, { status: 'placed' }>): Vector3[] {
+  return ring.map((v) => rotate(pose.quaternion, v));
+}
+
+function cite(sources: Set<string>, pose: Extract<Pose, { status: 'placed' }>, outlineSource: string | null): void {
+  if (outlineSource) sources.add(outlineSource);
+  for (const link of pose.links) {
+    for (const row of [link.younger, link.older]) if (row.source && !row.implied) sources.add(row.source);
+  }
+}
