@@ -11,8 +11,8 @@ export interface Pole {
   readonly angle_deg: number;
 }
 
-/** Worst error of a round trip pole → quaternion → pole, measured as the rotation between the two, degrees. */
-export const POLE_ERROR_DEG = 1e-13;
+/** Worst error of a round trip pole → quaternion → pole, measured as the rotation between the two, degrees; near a geographic pole most. */
+export const POLE_ERROR_DEG = 1.2e-11;
 /** A rotation by less than this, degrees, has no pole worth naming: it is given as the identity, pole 90° N. */
 export const IDENTITY_TOLERANCE_DEG = 1e-13;
 

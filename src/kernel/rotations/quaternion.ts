@@ -51,7 +51,7 @@ export function exp(u: Vector3): Quaternion {
 }
 
 /**
- * Principal rotation vector, radians, of length ≤ π; the same for q and −q. An exact half-turn has two: the one whose last component
+ * Principal rotation vector, radians, of length ≤ π (to rounding); the same for q and −q. An exact half-turn has two: the one whose last component
  * other than 0 is positive (a northern pole). Inverse: {@link exp}.
  */
 export function log(q: Quaternion): Vector3 {

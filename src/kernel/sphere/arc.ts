@@ -29,12 +29,16 @@ function perpendicularTo(a: Vector3, b: Vector3): Vector3 {
 /** The place of the arc a–b nearest to v; where all are equally near, a. */
 export function nearestOnArc(v: Vector3, a: Vector3, b: Vector3): Vector3 {
   const normal = arcNormal(a, b);
-  const foot = normalizeVector(subtract(v, scale(normal, dot(v, normal))));
+  const foot = ontoCircle(normal, ontoCircle(normal, v));
   const within =
     dot(cross(normal, a), foot) >= 0 && dot(cross(b, normal), foot) >= 0 && dot(normal, normal) > 0;
   if (within) return foot;
   return angularDistance(v, b) < angularDistance(v, a) ? b : a;
 }
+
+/** Twice over it stays on the circle to rounding, however near v is to the circle's pole. */
+const ontoCircle = (normal: Vector3, v: Vector3): Vector3 =>
+  normalizeVector(subtract(v, scale(normal, dot(v, normal))));
 
 /** Angle from v to the nearest place of the arc a–b, radians. */
 export const distanceToArc = (v: Vector3, a: Vector3, b: Vector3): number =>

@@ -1,7 +1,7 @@
 import { type Vector3 } from '../rotations/types';
 import { EARTH_RADIUS_KM } from './angles';
 import { eachEdge, type Inside, type Polygon, type Ring, TIE_TOLERANCE_SR } from './ring';
-import { cross, dot, subtract } from './vector';
+import { add, cross, dot, norm, subtract } from './vector';
 
 /** Worst error of an area, steradians, for each edge of the ring. */
 export const AREA_ERROR_SR_PER_EDGE = 2e-15;
@@ -23,14 +23,33 @@ export function triangleArea(o: Vector3, a: Vector3, b: Vector3): number {
  * antimeridian and edges that are passed both ways need no care; fewer than three corners give 0.
  */
 export function ringArea(ring: Ring): number {
-  const [origin] = ring;
-  if (!origin || ring.length < 3) return 0;
+  if (ring.length < 3) return 0;
+  const origin = fanOrigin(ring);
   let sum = 0;
   eachEdge(ring, (a, b) => {
     if (a !== origin && b !== origin) sum += triangleArea(origin, a, b);
   });
   const left = sum - SPHERE_SR * Math.floor(sum / SPHERE_SR);
   return left > SPHERE_SR / 2 + TIE_TOLERANCE_SR ? left - SPHERE_SR : left;
+}
+
+/** A corner antipodal to the origin of the fan leaves its two triangles undefined, and one near it costs digits. */
+const LEAST_CLEARANCE = 0.1;
+const AXES: readonly Vector3[] = [
+  [1, 0, 0],
+  [0, 1, 0],
+  [0, 0, 1],
+  [-1, 0, 0],
+  [0, -1, 0],
+  [0, 0, -1],
+];
+
+/** The first corner, near which small rings keep their digits, or whichever axis has its antipode farthest from all corners. */
+function fanOrigin(ring: Ring): Vector3 {
+  const clearance = (o: Vector3): number => ring.reduce((least, v) => Math.min(least, norm(add(o, v))), 2);
+  const [first = AXES[0] as Vector3] = ring;
+  if (clearance(first) >= LEAST_CLEARANCE) return first;
+  return AXES.reduce((best, axis) => (clearance(axis) > clearance(best) ? axis : best), first);
 }
 
 /** True for a ring whose two sides are equal within {@link TIE_TOLERANCE_SR}. */

@@ -15,7 +15,7 @@ export const CAP_EXCESS = 0.05;
 
 /**
  * A cap that holds all the vectors and, as it is smaller than a hemisphere, every great-circle edge between them and the smaller side
- * of their ring. Where no cap of under 89° is found it is the whole sphere. Centre by Bădoiu & Clarkson (2003): step towards the farthest.
+ * of their ring. Where no cap of under 89° is found, or there are no vectors, it is the whole sphere. Centre by Bădoiu & Clarkson (2003): step towards the farthest.
  */
 export function boundingCap(vectors: readonly Vector3[]): Cap {
   let centre = vectors.reduce<Vector3>((sum, v) => add(sum, v), [0, 0, 0]);
@@ -25,7 +25,8 @@ export function boundingCap(vectors: readonly Vector3[]): Cap {
   }
   const unit = normalizeVector(centre);
   const radius = vectors.reduce((most, v) => Math.max(most, angularDistance(unit, v)), 0) + 1e-15;
-  if (radius > (89 / 180) * Math.PI) return { centre: [0, 0, 1], radius: Math.PI, cosRadius: -1 };
+  if (vectors.length === 0 || radius > (89 / 180) * Math.PI)
+    return { centre: [0, 0, 1], radius: Math.PI, cosRadius: -1 };
   return { centre: unit, radius, cosRadius: Math.cos(radius) };
 }
 

@@ -30,6 +30,7 @@ function place(ring: Ring, v: Vector3): 'within' | 'on' | 'without' {
     const [bx, by, bz] = [b[0] - v[0], b[1] - v[1], b[2] - v[2]];
     const volume = v[0] * (ay * bz - az * by) + v[1] * (az * bx - ax * bz) + v[2] * (ax * by - ay * bx);
     const product = ax * bx + ay * by + az * bz;
+    if (bx * bx + by * by + bz * bz <= BOUNDARY_TOLERANCE_RAD ** 2) return 'on';
     if (product <= 0) {
       const chord = Math.hypot(bx - ax, by - ay, bz - az);
       const sine = chord * Math.sqrt(Math.max(0, 1 - (chord * chord) / 4));

@@ -27,10 +27,12 @@ export function densify(ring: readonly Vector3[], max_deg: number, { closed = tr
   return dense;
 }
 
+/** Edges made no longer than 1° by {@link densifyStraight} stray at most this far from great circles; n times as long, n² as far. */
+export const STRAIGHT_EDGE_STRAY_DEG = 0.0044;
+
 /**
- * Adds positions [longitude, latitude] along edges that are straight in longitude and latitude (RFC 7946), so that great circles between
- * them follow those edges: they stray at most (max_deg)²/8 · tan φ radians-of-degrees, 0.011° at 60° for 1°. Longitudes run on past ±180°;
- * each step takes the shorter way round unless the positions themselves run on.
+ * Adds positions [longitude, latitude] along edges that are straight in longitude and latitude (RFC 7946), so that the great circles
+ * between them follow those edges. Each edge goes the shorter way round the globe; longitudes may then run on past ±180°.
  */
 export function densifyStraight(
   positions: readonly (readonly number[])[],

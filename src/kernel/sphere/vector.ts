@@ -1,11 +1,12 @@
 import { type Vector3 } from '../rotations/types';
 import { cosDegrees, sinDegrees, toDegrees } from './angles';
 
-/** Nearer to a pole than this (radians, 6 µm on the ground) a longitude means nothing: it is given as 0. */
-export const POLE_TOLERANCE_RAD = 1e-12;
-/** Worst error of `toVector` in each component, and of a round trip through `toLatLon` in degrees of great circle. */
+/** Nearer to a pole than this, radians (0.6 µm on the ground), a longitude means nothing: it is given as 0. */
+export const POLE_TOLERANCE_RAD = 1e-13;
+/** Worst error of {@link toVector} in each component. */
 export const VECTOR_ERROR = 3e-16;
-export const LAT_LON_ERROR_DEG = 3e-14;
+/** Worst error of a round trip through {@link toLatLon}, degrees of great circle: rounding, and the pole tolerance beside a pole. */
+export const LAT_LON_ERROR_DEG = 6e-12;
 
 export const dot = (a: Vector3, b: Vector3): number => a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
 export const norm = (a: Vector3): number => Math.sqrt(dot(a, a));
@@ -40,10 +41,10 @@ export function toVector(lat_deg: number, lon_deg: number): Vector3 {
  * (see {@link longitudeUndefined}). Inverse: {@link toVector}.
  */
 export function toLatLon(v: Vector3): { lat: number; lon: number } {
-  const lat = toDegrees(Math.atan2(v[2], Math.hypot(v[0], v[1])));
   if (longitudeUndefined(v)) return { lat: v[2] < 0 ? -90 : 90, lon: 0 };
+  const lat = toDegrees(Math.atan2(v[2], Math.hypot(v[0], v[1])));
   const lon = toDegrees(Math.atan2(v[1], v[0]));
-  return { lat, lon: lon <= -180 ? 180 : lon };
+  return { lat: lat + 0, lon: lon <= -180 ? 180 : lon + 0 };
 }
 
 /** True within {@link POLE_TOLERANCE_RAD} of a pole, for a vector or a latitude in degrees. */

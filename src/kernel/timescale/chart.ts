@@ -6,9 +6,9 @@ type Row = readonly [rank: Rank, name: string, base_ma: number, colour: string];
 export const EDITION = 'ICS 2023/09';
 
 /**
- * International Chronostratigraphic Chart, v2023/09 (Cohen, Finney, Gibbard & Fan 2013, updated), and the colours of the Commission for the
- * Geological Map of the World printed on it. Entered from memory of the published chart, the colours of periods and of the
- * epochs back to the Jurassic as in the design tokens; a printed copy decides.
+ * International Chronostratigraphic Chart, v2023/09 (Cohen, Finney, Gibbard & Fan 2013, updated): bases and colours as in the Commission's
+ * own vocabulary of that edition (CC BY 4.0). Holocene, Pleistocene and Oligocene carry the RGB codes of the Commission for the Geological
+ * Map of the World, from which the vocabulary strays by a few units. Ages marked "~" on the chart are given without the mark.
  */
 export const CHART_ROWS: readonly Row[] = [
   ['eon', 'Phanerozoic', 538.8, '#9AD9DD'],
@@ -22,6 +22,10 @@ export const CHART_ROWS: readonly Row[] = [
   ['era', 'Neoproterozoic', 1000, '#FEB342'],
   ['era', 'Mesoproterozoic', 1600, '#FDB462'],
   ['era', 'Paleoproterozoic', 2500, '#F74370'],
+  ['era', 'Neoarchean', 2800, '#F99BC1'],
+  ['era', 'Mesoarchean', 3200, '#F768A9'],
+  ['era', 'Paleoarchean', 3600, '#F4449F'],
+  ['era', 'Eoarchean', 4031, '#DA037F'],
 
   ['period', 'Quaternary', 2.58, '#F9F97F'],
   ['period', 'Neogene', 23.03, '#FFE619'],
@@ -104,7 +108,7 @@ export const CHART_ROWS: readonly Row[] = [
   ['stage', 'Rupelian', 33.9, '#FED99A'],
   ['stage', 'Priabonian', 37.71, '#FDCDA1'],
   ['stage', 'Bartonian', 41.2, '#FDC091'],
-  ['stage', 'Lutetian', 47.8, '#FCB482'],
+  ['stage', 'Lutetian', 47.8, '#FDB482'],
   ['stage', 'Ypresian', 56, '#FCA773'],
   ['stage', 'Thanetian', 59.2, '#FDBF6F'],
   ['stage', 'Selandian', 61.6, '#FEBF65'],
@@ -146,16 +150,16 @@ export const CHART_ROWS: readonly Row[] = [
   ['stage', 'Roadian', 273.01, '#FB8069'],
   ['stage', 'Kungurian', 283.5, '#E38776'],
   ['stage', 'Artinskian', 290.1, '#E37B68'],
-  ['stage', 'Sakmarian', 293.52, '#E36F5C'],
+  ['stage', 'Sakmarian', 293.51, '#E36F5C'],
   ['stage', 'Asselian', 298.9, '#E36350'],
   ['stage', 'Gzhelian', 303.7, '#CCD4C7'],
   ['stage', 'Kasimovian', 307, '#BFD0C5'],
-  ['stage', 'Moscovian', 315.2, '#C7CBB9'],
+  ['stage', 'Moscovian', 315.2, '#B3CBB9'],
   ['stage', 'Bashkirian', 323.2, '#99C2B5'],
   ['stage', 'Serpukhovian', 330.9, '#BFC26B'],
   ['stage', 'Visean', 346.7, '#A6B96C'],
   ['stage', 'Tournaisian', 358.9, '#8CB06C'],
-  ['stage', 'Famennian', 372.2, '#F2EDC5'],
+  ['stage', 'Famennian', 372.2, '#F2EDB3'],
   ['stage', 'Frasnian', 382.7, '#F2EDAD'],
   ['stage', 'Givetian', 387.7, '#F1E185'],
   ['stage', 'Eifelian', 393.3, '#F1D576'],

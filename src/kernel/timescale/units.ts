@@ -21,7 +21,7 @@ export interface Chart {
   readonly units: readonly GeologicalUnit[];
 }
 
-/** The chart's ranks reach back as far as they are divided: eons to 4567 Ma, eras and periods to 2500 Ma, epochs and stages to 538.8 Ma. */
+/** The chart's ranks reach back as far as they are divided: eons to 4567 Ma, eras to 4031 Ma, periods to 2500 Ma, epochs and stages to 538.8 Ma. */
 export const CHRONOSTRATIGRAPHIC_CHART: Chart = {
   edition: EDITION,
   units: CHART_ROWS.map(([rank, name, older_ma, colour], i) => {
