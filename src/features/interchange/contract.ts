@@ -50,6 +50,10 @@ export const importReport = z.object({
   /** What was understood without changing a value: a byte-order mark, the separator, ignored columns. */
   notes: z.array(z.string()),
   preview: z.array(previewRow),
+  /** For tables: what the file's heading line holds and which columns are read, for a mapping of one's own. */
+  table: z
+    .object({ headings: z.array(z.string()), columns: z.array(z.string()), required: z.array(z.string()) })
+    .nullable(),
   written: z.boolean(),
   revision: z.number().int(),
   /** The kept original; with `rejected_file` where rejected rows were kept to mend. */

@@ -13,6 +13,7 @@ export const DIRECTION_COLUMNS = [
   'site', 'lat', 'lon', 'block', 'age_ma', 'age_min_ma', 'age_max_ma', 'declination', 'inclination', 'strike', 'dip',
   'n', 'k', 'alpha95', 'polarity', 'shallowing_f', 'rock', 'source', 'note',
 ] as const; // prettier-ignore
+const REQUIRED = ['site', 'lat', 'lon'];
 const POLARITIES = ['normal', 'reversed', 'mixed', 'unknown'] as const;
 
 /** Least and greatest value of each number, both included. */
@@ -38,9 +39,10 @@ export function readDirections(
   mapping: ColumnMapping = {},
 ): FileReading<DirectionFields> {
   const table = readTable(text);
-  const match = matchColumns(table, DIRECTION_COLUMNS, ['site', 'lat', 'lon'], mapping);
+  const match = matchColumns(table, DIRECTION_COLUMNS, REQUIRED, mapping);
   const asking = new Asking(answers);
   const notes: string[] = [];
+  const described = { headings: table.headings, columns: DIRECTION_COLUMNS, required: REQUIRED };
   const rejected: RejectedRow[] = table.broken.map((b) => ({ ...b, column: null }));
   if (table.delimiter !== ',') notes.push(`Cells are separated by ${delimiterName(table.delimiter)}.`);
   if (match.ignored.length > 0) notes.push(`Columns not read: ${match.ignored.join(', ')}.`);
@@ -48,7 +50,7 @@ export function readDirections(
     const read = table.headings.join(table.delimiter);
     const problem = `the heading line has no ${match.missing.join(', ')}`;
     rejected.unshift({ line: 1, column: match.missing[0]!, read, problem, hint: 'Name the columns as in directions.csv, or say which of yours holds what.' });
-    return { candidates: [], rejected, asking, notes };
+    return { candidates: [], rejected, asking, notes, table: described };
   }
   const reader = new CellReader(match, asking);
   const sites = table.rows.map((row) => readSite(row, reader, blocks)).filter((site) => site !== null);
@@ -60,7 +62,7 @@ export function readDirections(
     else if (Math.abs(fields.lon) > 360) reader.reject(row, 'lon', 'longitude beyond 360°', 'Moved decimal point?');
     else candidates.push({ line: row.line, fields });
   }
-  return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes };
+  return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes, table: described };
 }
 
 function readSite(row: TableRow, reader: CellReader, blocks: ReadonlySet<string>): { row: TableRow; fields: DirectionFields } | null {

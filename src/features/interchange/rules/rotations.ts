@@ -28,6 +28,8 @@ export interface FileReading<T> {
   readonly rejected: RejectedRow[];
   readonly asking: Asking;
   readonly notes: string[];
+  /** The heading line of a table and the columns read from it; absent for GeoJSON. */
+  readonly table?: { readonly headings: readonly string[]; readonly columns: readonly string[]; readonly required: readonly string[] };
 }
 
 type Draft = PoleValues & { readonly row: TableRow; readonly rest: Omit<RotationFields, 'age_ma' | 'pole_lat' | 'pole_lon' | 'angle_deg'> };
@@ -37,6 +39,7 @@ export function readRotations(text: string, answers: Answers = {}, mapping: Colu
   const match = matchColumns(table, READ_COLUMNS, REQUIRED, mapping);
   const asking = new Asking(answers);
   const notes: string[] = [];
+  const described = { headings: table.headings, columns: READ_COLUMNS, required: REQUIRED };
   const rejected: RejectedRow[] = table.broken.map((b) => ({ ...b, column: null }));
   if (table.delimiter !== ',') notes.push(`Cells are separated by ${delimiterName(table.delimiter)}.`);
   if (match.ignored.length > 0) notes.push(`Columns not read: ${match.ignored.join(', ')}.`);
@@ -48,7 +51,7 @@ export function readRotations(text: string, answers: Answers = {}, mapping: Colu
       problem: `the heading line has no ${match.missing.join(', ')}`,
       hint: 'Name the columns as in rotations.csv, or say which of yours holds what.',
     });
-    return { candidates: [], rejected, asking, notes };
+    return { candidates: [], rejected, asking, notes, table: described };
   }
   const reader = new CellReader(match, asking);
   const drafts = table.rows.map((row) => readDraft(row, reader)).filter((draft) => draft !== null);
@@ -59,7 +62,7 @@ export function readRotations(text: string, answers: Answers = {}, mapping: Colu
   if (drafts.some((d) => Math.abs(d.pole_lon) > 180)) notes.push('Pole longitudes beyond 180° are kept as they are written.');
   const candidates = drafts.filter((draft) => inRange(draft, reader)).map(toCandidate);
   rejected.push(...reader.rejected);
-  return { candidates: withoutDuplicates(candidates, rejected), rejected, asking, notes };
+  return { candidates: withoutDuplicates(candidates, rejected), rejected, asking, notes, table: described };
 }
 
 function readDraft(row: TableRow, reader: CellReader): Draft | null {

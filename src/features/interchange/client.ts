@@ -1,0 +1,38 @@
+/** Sends a file to be read or taken; the same call previews (`dry_run`) and writes. */
+import type { Answers, ColumnMapping, ImportKind, ImportReport } from './contract';
+
+export interface ImportRequest {
+  readonly slug: string;
+  readonly file: File;
+  readonly kind: ImportKind;
+  readonly answers: Answers;
+  readonly mapping: ColumnMapping;
+  readonly dryRun: boolean;
+  readonly skipRejected: boolean;
+}
+
+/** What the server refused, in its own words. */
+export class ImportRefused extends Error {}
+
+export async function sendImport(request: ImportRequest): Promise<ImportReport> {
+  const body = new FormData();
+  body.set('kind', request.kind);
+  body.set('dry_run', String(request.dryRun));
+  body.set('skip_rejected', String(request.skipRejected));
+  body.set('answers', JSON.stringify(request.answers));
+  if (Object.keys(request.mapping).length > 0) body.set('mapping', JSON.stringify(request.mapping));
+  body.set('file', request.file);
+  const answer = await fetch(`/api/projects/${request.slug}/imports`, { method: 'POST', body });
+  if (answer.ok) return (await answer.json()) as ImportReport;
+  const problem = (await answer.json().catch(() => ({}))) as { title?: string; detail?: string };
+  throw new ImportRefused([problem.title ?? `The server answered ${answer.status}`, problem.detail].filter(Boolean).join('. '));
+}
+
+/** What a file most likely holds, by its name and first characters; the user can say otherwise. */
+export function guessKind(name: string, head: string): ImportKind {
+  const lower = name.toLowerCase();
+  if (/^\s*\uFEFF?\s*[{[]/.test(head) || /\.(geo)?json$/.test(lower)) {
+    return /"(age_ma|side|chron)"|"kind"\s*:\s*"(layer|ridge|trench|transform|suture|margin|isochron|fracture_zone|pick|rock)"/.test(head) ? 'features' : 'blocks';
+  }
+  return /inclination|declination|alpha95|site/i.test(head.split(/\r?\n/, 1)[0] ?? '') ? 'directions' : 'rotations';
+}
