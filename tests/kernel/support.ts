@@ -1,8 +1,10 @@
 import fc from 'fast-check';
 import {
   type BlockInput,
+  compileModel,
   type Covariance,
   fromPole,
+  type Model,
   type Quaternion,
   type RotationInput,
   toVector,
@@ -108,3 +110,34 @@ export const covariance: fc.Arbitrary<Covariance> = fc
     b * c + d * e,
     c * c + e * e + f * f + 1e-6,
   ]);
+
+/**
+ * A reconstruction of seven blocks over two frames: every block hangs on one of lower rank, some change over to another at a row they
+ * have in both, and their rows are spaced unevenly. Circuits reach four links.
+ */
+export const model: fc.Arbitrary<Model> = fc
+  .tuple(
+    fc.array(fc.tuple(fc.nat(), fc.nat(), fc.boolean()), { minLength: 7, maxLength: 7 }),
+    fc.array(smallRotation, { minLength: 42, maxLength: 42 }),
+    fc.array(fc.double({ min: 3, max: 30, noNaN: true }), { minLength: 6, maxLength: 6 }),
+  )
+  .map(([hangs, poles, steps]) => {
+    const codes = hangs.map((_, i) => `b${i}`);
+    const lower = (i: number, pick: number): string =>
+      ['spin', 'mantle', ...codes.slice(0, i)][pick % (2 + i)] ?? 'spin';
+    const ages = steps.map((_, k) => steps.slice(0, k + 1).reduce((sum, step) => sum + step, 0));
+    const rotations = hangs.flatMap(([first, second, changes], i) =>
+      ages.flatMap((age, k) => {
+        const [lat, lon, degrees] = poles[6 * i + k] ?? [0, 0, 0];
+        const younger = row([`b${i}`, lower(i, first), age, lat, lon, degrees]);
+        const older = row([`b${i}`, lower(i, second), age, lat, lon, degrees / 2]);
+        if (!changes || lower(i, first) === lower(i, second) || k < 3) return [younger];
+        return k === 3 ? [younger, older] : [older];
+      }),
+    );
+    const mantle = row(['mantle', 'spin', 300, 12, -38, 17]);
+    return compileModel(
+      [frame('spin'), frame('mantle'), ...codes.map((code) => block(code))],
+      [...rotations, mantle],
+    );
+  });

@@ -69,7 +69,7 @@ function driftPoint(
     return { age_ma, status: pose.status, at_row, ...nothing };
   }
   const position = rotate(pose.quaternion, present);
-  const turning = poseVelocity(pose, age_ma, model.oldest_ma);
+  const turning = poseVelocity(pose, { block, relative_to, age_ma, oldest_ma: model.oldest_ma });
   const velocity = turning.status === 'placed' ? velocityAt(position, turning.omega) : null;
   return {
     age_ma,

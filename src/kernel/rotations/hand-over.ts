@@ -1,5 +1,6 @@
+import { KernelError } from '../errors';
 import { distanceKm } from '../sphere/distance';
-import { EARTH_RADIUS_KM } from '../sphere/angles';
+import { EARTH_RADIUS_KM, toDegrees } from '../sphere/angles';
 import { circuitAt } from './circuit';
 import { evaluateLeg } from './leg-at';
 import { angleOf, between, inverse, multiply, rotate } from './quaternion';
@@ -41,23 +42,24 @@ function handOver(model: Model, block: CompiledBlock, youngerLeg: Leg, olderLeg:
     older_reference: olderLeg.relative_to,
     younger,
     older,
-    jump_deg: angle === null ? null : (angle * 180) / Math.PI,
+    jump_deg: angle === null ? null : toDegrees(angle),
     greatest_km: angle === null ? null : angle * EARTH_RADIUS_KM,
   };
 }
 
 function throughOther(model: Model, leg: Leg, reference: string, age_ma: number): Quaternion | null {
-  const known = (code: string): boolean => model.blocks.some((block) => block.code === code);
-  if (!known(leg.relative_to) || !known(reference)) return null;
   const link = circuitOrNull(model, leg.relative_to, age_ma, reference);
   return link && multiply(link, evaluateLeg(leg, age_ma).quaternion);
 }
 
+/** Unknown references and loops are problems of the model, listed there; here they only leave the jump unknown. */
 function circuitOrNull(model: Model, block: string, age_ma: number, relative_to: string): Quaternion | null {
-  const loops = model.problems.some(
-    (p) => p.name === 'Cycle' && p.younger_ma <= age_ma && age_ma <= p.older_ma,
-  );
-  return loops ? null : circuitAt(model, block, age_ma, relative_to).quaternion;
+  try {
+    return circuitAt(model, block, age_ma, relative_to).quaternion;
+  } catch (error) {
+    if (error instanceof KernelError) return null;
+    throw error;
+  }
 }
 
 /** How far a point of the block, given at its present position, jumps at a hand-over; null where that cannot be known. */

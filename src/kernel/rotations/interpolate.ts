@@ -1,4 +1,4 @@
-import { scale } from '../sphere/vector';
+import { normalizeVector, scale } from '../sphere/vector';
 import { between, exp, log, multiply } from './quaternion';
 import { type Quaternion, type Stage } from './types';
 
@@ -26,7 +26,7 @@ export function stageBetween(younger: Row, older: Row): Stage {
     younger_ma: younger.age_ma,
     older_ma: older.age_ma,
     start: younger.quaternion,
-    axis: angle > 0 ? scale(turn, 1 / angle) : [0, 0, 1],
+    axis: angle > 0 ? normalizeVector(turn) : [0, 0, 1],
     rate: angle / (older.age_ma - younger.age_ma),
   };
 }

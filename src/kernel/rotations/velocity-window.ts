@@ -36,8 +36,9 @@ export function windowedVelocity(
   let younger_ma = age_ma;
   for (const end of [...ages.filter((age) => age < age_ma).reverse(), -Infinity]) {
     const next = Math.max(end, bounds.younger);
+    if (next >= younger_ma || !placed((next + younger_ma) / 2)) break;
     const reached = placed(next);
-    younger_ma = reached ? next : Math.min(younger_ma, next + JUST_OLDER_MYR);
+    younger_ma = reached ? next : next + JUST_OLDER_MYR;
     if (!reached || end <= bounds.younger) break;
   }
 

@@ -44,21 +44,39 @@ export function angularVelocity(
   if (pose.status !== 'placed') return { status: pose.status, at: pose.at };
   return window_myr > 0
     ? windowedVelocity(model, block, age_ma, relative_to, window_myr)
-    : poseVelocity(pose, age_ma, model.oldest_ma);
+    : poseVelocity(pose, { block, relative_to, age_ma, oldest_ma: model.oldest_ma });
 }
 
-/** As {@link angularVelocity} without a window, for a pose already at hand; a circuit without links stands still from oldest_ma to 0. */
-export function poseVelocity(pose: PlacedPose, age_ma: number, oldest_ma: number): AngularVelocity {
+interface Asked {
+  readonly block: string;
+  readonly relative_to: string;
+  readonly age_ma: number;
+  readonly oldest_ma: number;
+}
+
+/**
+ * As {@link angularVelocity} without a window, for a pose already at hand. A block as seen from itself stands still from oldest_ma to 0; one
+ * that only lies where it lies at 0 Ma, without rotations, has no velocity.
+ */
+export function poseVelocity(
+  { links }: PlacedPose,
+  { block, relative_to, age_ma, oldest_ma }: Asked,
+): AngularVelocity {
   let omega: Vector3 = [0, 0, 0];
   let older_ma = Infinity;
   let younger_ma = 0;
-  for (const link of pose.links) {
+  let reached = block;
+  for (const link of links) {
+    const [from, to] =
+      link.direction === 'up' ? [link.block, link.relative_to] : [link.relative_to, link.block];
     const turning = linkVelocity(link);
-    if (!link.stage || !turning) return { status: 'outside rotations', at: link.block };
+    if (from !== reached || !link.stage || !turning) return { status: 'outside rotations', at: link.block };
+    reached = to;
     omega = add(turning, rotate(link.quaternion, omega));
     if (!link.extrapolated) older_ma = Math.min(older_ma, link.stage.older_ma);
     younger_ma = Math.max(younger_ma, link.stage.younger_ma);
   }
+  if (reached !== relative_to) return { status: 'outside rotations', at: reached };
   if (older_ma === Infinity) older_ma = Math.max(age_ma, oldest_ma);
   return { status: 'placed', omega, older_ma, younger_ma, clipped: false };
 }
