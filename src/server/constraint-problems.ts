@@ -101,12 +101,13 @@ export function constraintOf(error: unknown): { constraint: string; values: read
 }
 
 /** A broken constraint in words; null for an error of another kind, or of a constraint that no request should reach. */
-export function constraintProblem(error: unknown, path?: string) {
+export function constraintProblem(error: unknown, pathOf?: (read: string) => string | undefined) {
   const found = constraintOf(error);
   const known = found && BY_CONSTRAINT[found.constraint];
   if (!found || !known) return null;
   const { name, problem, hint } = known;
   const read = found.values.slice(1).join(', ');
+  const path = pathOf?.(read);
   return {
     name,
     constraint: found.constraint,

@@ -12,7 +12,11 @@ export interface OpenedPage {
 }
 
 /** @returns null where the actor may not see the project or may not do this in it. */
-export async function openPage(locals: App.Locals, slug: string | undefined, action: ProjectAction): Promise<OpenedPage | null> {
+export async function openPage(
+  locals: App.Locals,
+  slug: string | undefined,
+  action: ProjectAction,
+): Promise<OpenedPage | null> {
   try {
     const access = await openProject(locals.actor, slug ?? '', action);
     return { access, project: await readProject(access) };

@@ -54,6 +54,13 @@ export function fieldErrors(error: z.ZodError, root: unknown): FieldError[] {
   });
 }
 
+/** The first errors in one line. */
+export const inBrief = (errors: readonly FieldError[]): string =>
+  errors
+    .slice(0, 3)
+    .map(({ path, problem }) => (path ? `${path}: ${problem}` : problem))
+    .join('; ');
+
 /** What any thrown value is to the outside. Whatever is not foreseen is logged and answered without its text. */
 export function toProblem(error: unknown): Problem {
   if (error instanceof Problem) return error;

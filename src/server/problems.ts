@@ -28,6 +28,7 @@ export const PROBLEMS = {
   NothingToUndo: { status: 409, title: 'Nothing to undo' },
   NothingToRedo: { status: 409, title: 'Nothing to redo' },
   ChangedSince: { status: 409, title: 'Changed by someone since' },
+  NotReleasable: { status: 409, title: 'The draft is not ready to be released' },
   NothingChanged: { status: 409, title: 'Nothing differs from the last version' },
   Conflict: { status: 409, title: 'The change does not fit the rest of the project' },
   ResetLinkSpent: { status: 410, title: 'The link has been used or has expired' },

@@ -5,7 +5,7 @@ import { openProject, type Access } from './access';
 import type { Actor } from './actor';
 import { isForm, readForm, readJson } from './body';
 import { requireSite, type Action, type ProjectAction, type SiteAction } from './policy';
-import { fieldErrors, Problem, problemResponse, toProblem } from './problem';
+import { fieldErrors, inBrief, Problem, problemResponse, toProblem } from './problem';
 
 type Shape = z.ZodType | undefined;
 type Parsed<S extends Shape> = S extends z.ZodType ? z.output<S> : undefined;
@@ -16,12 +16,16 @@ export interface RouteSpec<A extends Action = Action, Q extends Shape = Shape, B
   readonly summary: string;
   readonly query?: Q;
   readonly body?: B;
+  /** Shape of the body for the API reference, where rows are checked one by one after parsing. */
+  readonly accepts?: z.ZodType;
   /** Shape of the JSON answer, for the API reference. */
   readonly answer?: z.ZodType;
   readonly status?: number;
   readonly limitBytes?: number;
   /** The page that posts this as a plain form, by the fields posted: problems go back to it as `?error=Name`. */
   readonly form?: (fields: Readonly<Record<string, string>>) => string;
+  /** Media type of an answer that is not JSON. */
+  readonly streams?: string;
   /** The edit names the revision it was made on (`If-Match`). */
   readonly edits?: boolean;
   /** Media types read, where the handler reads the body itself. */
@@ -113,13 +117,7 @@ function parse<S extends Shape>(shape: S, value: unknown, name: 'InvalidQuery' |
   const result = shape.safeParse(value);
   if (result.success) return result.data as Parsed<S>;
   const errors = fieldErrors(result.error, value);
-  throw new Problem(name, {
-    detail: errors
-      .map(({ path, problem }) => (path ? `${path}: ${problem}` : problem))
-      .slice(0, 3)
-      .join('; '),
-    errors,
-  });
+  throw new Problem(name, { detail: inBrief(errors), errors });
 }
 
 export const json = (value: unknown, status = 200, headers: Record<string, string> = {}): Response =>

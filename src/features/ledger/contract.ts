@@ -151,6 +151,27 @@ export type SourceFields = z.infer<typeof sourceFields>;
 export const TABLES = ['blocks', 'outlines', 'rotations', 'features', 'directions', 'sources'] as const;
 export type Table = (typeof TABLES)[number];
 
+/** What people enter in each table. */
+export const FIELDS = {
+  blocks: blockFields,
+  outlines: outlineFields,
+  rotations: rotationFields,
+  features: featureFields,
+  directions: directionFields,
+  sources: sourceFields,
+} as const satisfies Record<Table, z.ZodObject>;
+
+/** What each table answers. */
+export const ROWS = {
+  blocks: block,
+  outlines: outline,
+  rotations: rotation,
+  features: feature,
+  directions: direction,
+  sources: source,
+} as const;
+export type Row<T extends Table> = z.infer<(typeof ROWS)[T]>;
+
 /** Every list answer: rows in natural order, the revision they were read at, a cursor for the next page. */
 export const page = <T extends z.ZodType>(row: T) =>
   z.object({ items: z.array(row), revision: z.number().int(), next_cursor: z.string().nullable() });
@@ -173,8 +194,54 @@ export const changeEntry = z.object({
 });
 export type ChangeEntry = z.infer<typeof changeEntry>;
 
-/** Body of an outline edit: geometry in, stored by its hash. */
-export const outlineGeometry = z.object({
-  type: z.enum(['Polygon', 'MultiPolygon']),
+/** A geometry in longitude and latitude; stored once by the hash of its canonical form. */
+export const geometry = z.object({
+  type: z.enum(['Point', 'MultiPoint', 'LineString', 'MultiLineString', 'Polygon', 'MultiPolygon']),
   coordinates: z.array(z.unknown()),
+});
+export const outlineGeometry = geometry.extend({ type: z.enum(['Polygon', 'MultiPolygon']) });
+
+/** What is sent to make a row: an outline or a feature brings its geometry, or names one that the project has by hash. */
+export const CREATE = {
+  ...FIELDS,
+  outlines: outlineFields.partial({ sha256: true }).extend({ geometry: outlineGeometry.optional() }),
+  features: featureFields.partial({ sha256: true }).extend({ geometry: geometry.optional() }),
+} as const satisfies Record<Table, z.ZodObject>;
+
+/** The most rows that one edit takes. */
+export const MAX_EDITS = 5000;
+const table = z.enum(TABLES);
+const id = z.string().min(1).max(64);
+/** Cells by column; each is checked against its table's fields, and an unknown column is refused. */
+const cells = z.record(z.string(), z.unknown());
+
+/** One row of an edit. A new row may bring its own id (a UUID), so that a screen can name it before the answer. */
+export const edit = z.discriminatedUnion('op', [
+  z.strictObject({ op: z.literal('create'), table, id: z.uuid().optional(), fields: cells }),
+  z.strictObject({ op: z.literal('update'), table, id, fields: cells }),
+  z.strictObject({ op: z.literal('delete'), table, id }),
+]);
+export type Edit = z.infer<typeof edit>;
+
+/** POST …/edits: rows of any tables in one transaction, one step of undo. */
+export const editBatch = z.strictObject({
+  label: z.string().trim().min(1).max(200).optional(),
+  edits: z.array(edit).min(1).max(MAX_EDITS),
+});
+
+/** The rows touched as they now stand, those of renamed or deleted blocks included. */
+export const batchAnswer = z.object({
+  revision: z.number().int(),
+  items: z.array(z.object({ table, row: z.record(z.string(), z.unknown()) })),
+  deleted: z.array(z.object({ table, id: z.string() })),
+});
+export type BatchAnswer = z.infer<typeof batchAnswer>;
+
+export const changeList = z.object({
+  items: z.array(changeEntry),
+  revision: z.number().int(),
+  next_cursor: z.string().nullable(),
+  /** Labels of what undo and redo would do for the caller now; null where there is nothing. */
+  undo: z.string().nullable(),
+  redo: z.string().nullable(),
 });

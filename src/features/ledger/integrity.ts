@@ -1,0 +1,96 @@
+import { and, eq, isNotNull, isNull, sql } from 'drizzle-orm';
+import type { Transaction } from '~/db/client';
+import { block, rotation, source } from '~/db/schema';
+import type { FieldError } from '~/server/problem';
+import type { Table } from './contract';
+import { CARRIED, DB_TABLES } from './tables';
+
+type PathOf = (id: string) => string | undefined;
+
+/**
+ * What must hold at the end of an edit, whatever happened within: no two rotations of one block, reference and
+ * age, no two sources of one name, no row on a block that is not there. The database's own constraints, which
+ * are deferred until then, say the same without naming the cell.
+ */
+export async function integrityErrors(
+  tx: Transaction,
+  projectId: string,
+  touched: ReadonlySet<Table>,
+  pathOf: PathOf,
+): Promise<FieldError[]> {
+  const errors: FieldError[] = [];
+  if (touched.has('rotations') || touched.has('blocks'))
+    errors.push(...(await duplicateRotations(tx, projectId, pathOf)));
+  if (touched.has('sources')) errors.push(...(await duplicateSources(tx, projectId, pathOf)));
+  for (const table of CARRIED) {
+    if (touched.has(table) || touched.has('blocks'))
+      errors.push(...(await homeless(tx, projectId, table, pathOf)));
+  }
+  return errors;
+}
+
+/** Of rows alike, the one that the edit made is named; the others are what it ran into. */
+const offenders = (ids: readonly string[], pathOf: PathOf): string[] => {
+  const edited = ids.filter((id) => pathOf(id) !== undefined);
+  return (edited.length === ids.length ? edited.slice(1) : edited).map((id) => pathOf(id)!);
+};
+
+async function duplicateRotations(tx: Transaction, projectId: string, pathOf: PathOf): Promise<FieldError[]> {
+  const found = await tx
+    .select({
+      block: rotation.block,
+      relative_to: rotation.relative_to,
+      age_ma: rotation.age_ma,
+      ids: sql<string[]>`array_agg(${rotation.id} order by ${rotation.id})`,
+    })
+    .from(rotation)
+    .where(eq(rotation.project_id, projectId))
+    .groupBy(rotation.block, rotation.relative_to, rotation.age_ma)
+    .having(sql`count(*) > 1`);
+  return found.flatMap(({ block: code, relative_to, age_ma, ids }) =>
+    offenders(ids, pathOf).map((path) => ({
+      path: `${path}.age_ma`,
+      read: String(age_ma),
+      problem: `${code} has a row relative to ${relative_to} at ${age_ma} Ma already`,
+      hint: 'Change the row that is there, or give another age.',
+    })),
+  );
+}
+
+async function duplicateSources(tx: Transaction, projectId: string, pathOf: PathOf): Promise<FieldError[]> {
+  const found = await tx
+    .select({ cite: source.cite, ids: sql<string[]>`array_agg(${source.id} order by ${source.id})` })
+    .from(source)
+    .where(eq(source.project_id, projectId))
+    .groupBy(source.cite)
+    .having(sql`count(*) > 1`);
+  return found.flatMap(({ cite, ids }) =>
+    offenders(ids, pathOf).map((path) => ({
+      path: `${path}.cite`,
+      read: cite,
+      problem: 'the project has a source of this name',
+      hint: 'Add a letter, as in 2021a.',
+    })),
+  );
+}
+
+async function homeless(
+  tx: Transaction,
+  projectId: string,
+  table: (typeof CARRIED)[number],
+  pathOf: PathOf,
+): Promise<FieldError[]> {
+  const target = DB_TABLES[table] as unknown as typeof rotation;
+  const rows = await tx
+    .select({ id: target.id, code: target.block })
+    .from(target)
+    .leftJoin(block, and(eq(block.project_id, target.project_id), eq(block.code, target.block)))
+    .where(and(eq(target.project_id, projectId), isNotNull(target.block), isNull(block.id)))
+    .limit(100);
+  return rows.map(({ id, code }) => ({
+    path: [pathOf(id) ?? table, 'block'].join('.'),
+    read: code,
+    problem: 'no block of this code in the project',
+    hint: 'Add the block first, or mend its code.',
+  }));
+}

@@ -1,0 +1,28 @@
+import type { Access } from '~/server/access';
+import { VISITOR } from '~/server/actor';
+import { immutableResponse } from '~/server/etag';
+import { can } from '~/server/policy';
+import type { State } from './state';
+
+/** True where anyone may see the version, so that shared caches may keep what is said of it. */
+const isShared = (access: Access): boolean => can(VISITOR, 'version.view', { ...access, role: null });
+
+/** An answer computed from a state: immutable for a numbered version, with the revision as its tag for the draft. */
+export function stateAnswer(request: Request, access: Access, state: State, value: unknown): Response {
+  return stateText(request, access, state, JSON.stringify(value), 'application/json');
+}
+
+export function stateText(
+  request: Request,
+  access: Access,
+  state: State,
+  text: string | Uint8Array,
+  type: string,
+): Response {
+  const asked = new URL(request.url).searchParams.get('version');
+  if (state.version !== 'draft' && asked === String(state.version)) {
+    return immutableResponse(request, text, type, isShared(access));
+  }
+  const headers = { 'Content-Type': type, 'Cache-Control': 'private, no-cache', ETag: `"${state.revision}"` };
+  return new Response(text as BodyInit, { headers });
+}

@@ -1,0 +1,11 @@
+import { draftEvents } from '~/features/ledger/events';
+import { projectRoute } from '~/server/route';
+
+export const GET = projectRoute(
+  {
+    action: 'draft.view',
+    summary: 'Changes of the draft as server-sent events',
+    streams: 'text/event-stream',
+  },
+  ({ access, request }) => draftEvents(access, request.signal),
+);

@@ -1,0 +1,3 @@
+import { collection } from '~/features/ledger/routes';
+
+export const { GET, POST } = collection('features');

@@ -1,0 +1,3 @@
+import { member } from '~/features/ledger/routes';
+
+export const { PATCH, DELETE } = member('rotations');
