@@ -4,11 +4,12 @@
  */
 import { geoOrthographic, geoPath, type GeoPermissibleObjects } from 'd3-geo';
 import { Clipper } from '../../src/features/motion/globe/clip';
+import { globeGround } from '../../src/features/motion/globe/ground-globe';
 import { multiply, viewMatrix } from '../../src/features/motion/globe/matrix';
 import { paintBlocks, type DrawnBlock } from '../../src/features/motion/globe/paint-blocks';
 import { buildPatterns } from '../../src/features/motion/globe/patterns';
 import { TOKENS, type Palette } from '../../src/features/motion/globe/palette';
-import { levelFor, polygonShape } from '../../src/features/motion/globe/shape';
+import { polygonShape } from '../../src/features/motion/globe/shape';
 
 const BLOCKS = 300;
 const EVIDENCE = ['published', 'fitted', 'posed', 'unconstrained'] as const;
@@ -35,11 +36,16 @@ function bodies(vertices: number): Body[] {
     const lat = (Math.asin(z) * 180) / Math.PI;
     const lon = ((k * 137.50776405) % 360) - 180;
     const size = 4 + 5 * random();
-    const waves = Array.from({ length: 12 }, (_w, j) => [(0.25 * random()) / (1 + j / 2), random() * 7] as const);
+    const waves = Array.from(
+      { length: 12 },
+      (_w, j) => [(0.25 * random()) / (1 + j / 2), random() * 7] as const,
+    );
     const ring: [number, number][] = [];
     for (let i = 0; i < each; i++) {
       const t = (2 * Math.PI * i) / each;
-      const r = size * (1 + waves.reduce((sum, [a, p], j) => sum + a * Math.sin((j + 2) * t + p), 0) / 2 + 0.02 * random());
+      const r =
+        size *
+        (1 + waves.reduce((sum, [a, p], j) => sum + a * Math.sin((j + 2) * t + p), 0) / 2 + 0.02 * random());
       const dlat = r * Math.sin(t);
       const at = Math.max(-89.9, Math.min(89.9, lat + dlat));
       ring.push([lon + (r * Math.cos(t)) / Math.max(0.2, Math.cos((at * Math.PI) / 180)), at]);
@@ -100,38 +106,51 @@ const flushed = (ctx: CanvasRenderingContext2D) => ctx.getImageData(0, 0, 1, 1).
 
 export function run(which: 'ours' | 'd3', vertices: number, frames: number, size: number): Timing {
   const ctx = canvasOf(size);
-  const palette = { ...Object.fromEntries(TOKENS.map((name) => [name, '#1C2530'])), ...LIGHT } as unknown as Palette;
+  const palette = {
+    ...Object.fromEntries(TOKENS.map((name) => [name, '#1C2530'])),
+    ...LIGHT,
+  } as unknown as Palette;
   const patterns = buildPatterns(ctx, palette, 1);
   const moving = bodies(vertices);
   const disc = { cx: size / 2, cy: size / 2, radius: size / 2 - 8 };
   const times: number[] = [];
   const drawn: DrawnBlock[] = moving.map((body, i) => ({
-    code: `b${i}`,
     evidence: body.evidence,
     shape: polygonShape(body.geometry),
+    carrier: i,
   }));
   const clipper = new Clipper();
   const projection = geoOrthographic().scale(disc.radius).translate([disc.cx, disc.cy]).clipAngle(90);
   const path = geoPath(projection, ctx);
   const reversed = moving.map(
     (body) =>
-      ({ ...body.geometry, coordinates: body.geometry.coordinates.map((r) => [...r].reverse()) }) as GeoPermissibleObjects,
+      ({
+        ...body.geometry,
+        coordinates: body.geometry.coordinates.map((r) => [...r].reverse()),
+      }) as GeoPermissibleObjects,
   );
-  const matrices = new Float64Array(9 * BLOCKS);
+  const poses = new Float64Array(9 * BLOCKS);
+  const turned = new Float64Array(9);
+  const fit = (2 * disc.radius) / size;
   for (let frame = 0; frame < frames; frame++) {
     const started = performance.now();
-    const view = viewMatrix({ lat: 12 - frame / 5, lon: 34 + frame, roll: 0 });
-    moving.forEach((body, i) => multiply(view, spin(body.pole, body.rate * frame), matrices, 0, 9 * i));
+    const centre = { lat: 12 - frame / 5, lon: 34 + frame, roll: 0 };
+    moving.forEach((body, i) => poses.set(spin(body.pole, body.rate * frame), 9 * i));
     ctx.fillStyle = palette.globe;
     ctx.fillRect(0, 0, size, size);
     if (which === 'ours') {
-      const level = levelFor(disc.radius, 0.9);
-      paintBlocks(ctx, clipper, disc, drawn, matrices, { palette, patterns, scale: 1, level });
+      const ground = globeGround(
+        { centre, zoom: 1, width: size, height: size, scale: 1, moving: true, fit },
+        clipper,
+      );
+      paintBlocks(ctx, ground, drawn, poses, { palette, patterns, scale: 1 });
     } else {
+      const view = viewMatrix(centre);
       ctx.strokeStyle = palette.outline;
       ctx.lineWidth = 0.85;
       moving.forEach((body, i) => {
-        projection.rotate(d3Rotation(matrices.subarray(9 * i, 9 * i + 9) as Float64Array));
+        multiply(view, poses, turned, 9 * i);
+        projection.rotate(d3Rotation(turned));
         ctx.beginPath();
         path(reversed[i] as GeoPermissibleObjects);
         ctx.fillStyle = patterns[body.evidence];

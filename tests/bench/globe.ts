@@ -26,7 +26,10 @@ export const p95 = (times: readonly number[]): number => {
 
 export async function globe(frames = 120, size = 1000): Promise<BenchRow[]> {
   const page = await bundle();
-  const browser = await chromium.launch({ executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium', args: FLAGS });
+  const browser = await chromium.launch({
+    executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium',
+    args: FLAGS,
+  });
   try {
     const tab = await browser.newPage();
     await tab.setContent('<!doctype html><title>bench</title><body></body>');
@@ -34,10 +37,12 @@ export async function globe(frames = 120, size = 1000): Promise<BenchRow[]> {
     const rows: BenchRow[] = [];
     for (const vertices of [5_000, 20_000, 100_000]) {
       const measure = async (which: 'ours' | 'd3') => {
-        const { frames: times } = await tab.evaluate(
-          ([name, n, f, s]) => window.globeBench(name, n, f, s),
-          [which, vertices, frames, size] as ['ours' | 'd3', number, number, number],
-        );
+        const { frames: times } = await tab.evaluate(([name, n, f, s]) => window.globeBench(name, n, f, s), [
+          which,
+          vertices,
+          frames,
+          size,
+        ] as ['ours' | 'd3', number, number, number]);
         return p95(times.slice(10));
       };
       const ours = await measure('ours');

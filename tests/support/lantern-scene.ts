@@ -1,6 +1,12 @@
 /** The demo project's tables as a scene, from the text of its four files. */
 import { compileModel } from '../../src/kernel/rotations';
-import { EVIDENCE, type BlockInput, type Covariance, type Evidence, type RotationInput } from '../../src/kernel/rotations/types';
+import {
+  EVIDENCE,
+  type BlockInput,
+  type Covariance,
+  type Evidence,
+  type RotationInput,
+} from '../../src/kernel/rotations/types';
 import { type Direction } from '../../src/features/ledger/contract';
 import { lineShape, polygonShape } from '../../src/features/motion/globe/shape';
 import { sceneOf, type Scene, type SceneLine, type ScenePoint } from '../../src/features/motion/scene/scene';
@@ -23,10 +29,13 @@ interface FeatureCollection {
 function table(text: string): Record<string, string | null>[] {
   const [head = '', ...lines] = text.trim().split(/\r?\n/);
   const names = head.split(',');
-  return lines.map((line) => Object.fromEntries(line.split(',').map((cell, i) => [names[i] ?? '', cell === '' ? null : cell])));
+  return lines.map((line) =>
+    Object.fromEntries(line.split(',').map((cell, i) => [names[i] ?? '', cell === '' ? null : cell])),
+  );
 }
 
-const num = (cell: string | null | undefined): number | null => (cell === null || cell === undefined ? null : Number(cell));
+const num = (cell: string | null | undefined): number | null =>
+  cell === null || cell === undefined ? null : Number(cell);
 const text = (value: unknown): string => (typeof value === 'string' ? value : '');
 
 export function rotationsOf(csv: string): RotationInput[] {

@@ -2,7 +2,8 @@
 import { readFileSync } from 'node:fs';
 import { lanternScene } from './lantern-scene';
 
-const read = (name: string): string => readFileSync(new URL(`../../src/db/seed/lantern-sea/${name}`, import.meta.url), 'utf8');
+const read = (name: string): string =>
+  readFileSync(new URL(`../../src/db/seed/lantern-sea/${name}`, import.meta.url), 'utf8');
 
 export const lanternSea = () =>
   lanternScene({

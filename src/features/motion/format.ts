@@ -26,6 +26,9 @@ export function signed(value: number, digits = 0): string {
 /** Age in Ma without its unit: "62.4". */
 export const ageValue = (age_ma: number): string => number(age_ma, 1);
 
+/** "178" for a whole age, "55.2" for another: in words and ticks. */
+export const shortAge = (age_ma: number): string => ageValue(age_ma).replace(/\.0$/, '');
+
 /** "62.4 Ma". */
 export const age = (age_ma: number): string => `${ageValue(age_ma)}${NBSP}Ma`;
 

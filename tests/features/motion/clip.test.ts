@@ -39,7 +39,10 @@ function difference(rings: Ring[], centre: { lat: number; lon: number; roll: num
     .rotate([-centre.lon, -centre.lat, centre.roll]);
   // d3-geo takes the inside to the right of a ring.
   const reversed = rings.map((ring) => [...ring].reverse());
-  geoPath(projection, theirs as unknown as CanvasRenderingContext2D)({ type: 'Polygon', coordinates: reversed });
+  geoPath(
+    projection,
+    theirs as unknown as CanvasRenderingContext2D,
+  )({ type: 'Polygon', coordinates: reversed });
   let differ = 0;
   let all = 0;
   for (let x = -99; x <= 99; x += 3) {
@@ -77,12 +80,22 @@ describe('horizon clipping draws the same region as d3-geo', () => {
   it('for rings that cross the limb many times', () => {
     const teeth = Array.from({ length: 120 }, (_, i) => (i % 2 ? 94 : 82.5));
     // The inside is the smaller side: here the cap of about 89 degrees.
-    expect(difference([star(14, -37, teeth)], { lat: 14.6, lon: -36.2, roll: 11 })).toBeLessThanOrEqual(ALLOWED);
+    expect(difference([star(14, -37, teeth)], { lat: 14.6, lon: -36.2, roll: 11 })).toBeLessThanOrEqual(
+      ALLOWED,
+    );
   });
 
   it('for a block that holds the whole horizon, with a hole in view', () => {
-    const outer = star(-12, 75, Array.from({ length: 90 }, (_, i) => 89 - (i % 3)));
-    const hole = star(-15, 79, Array.from({ length: 60 }, (_, i) => 21 + (i % 5))).reverse();
+    const outer = star(
+      -12,
+      75,
+      Array.from({ length: 90 }, (_, i) => 89 - (i % 3)),
+    );
+    const hole = star(
+      -15,
+      79,
+      Array.from({ length: 60 }, (_, i) => 21 + (i % 5)),
+    ).reverse();
     expect(difference([outer, hole], { lat: -12, lon: 75, roll: 0 })).toBeLessThanOrEqual(ALLOWED);
     expect(difference([outer, hole], { lat: 12, lon: -105, roll: 0 })).toBeLessThanOrEqual(ALLOWED);
   });
@@ -90,7 +103,11 @@ describe('horizon clipping draws the same region as d3-geo', () => {
 
 describe('larger side', () => {
   it('fills all but the ring where `inside: larger` is stated', () => {
-    const ring = star(20, 30, Array.from({ length: 72 }, () => 25));
+    const ring = star(
+      20,
+      30,
+      Array.from({ length: 72 }, () => 25),
+    );
     const shape = polygonShape({ type: 'Polygon', coordinates: [ring] }, 'larger');
     const clipper = new Clipper();
     const seen = new Recorder();
@@ -111,7 +128,10 @@ describe('contains', () => {
     fc.assert(
       fc.property(centre, radii(10, 70), centre, (place, r, point) => {
         const ring = star(place.lat, place.lon, r);
-        const ours = contains(polygonShape({ type: 'Polygon', coordinates: [ring] }), vectorOf(point.lat, point.lon));
+        const ours = contains(
+          polygonShape({ type: 'Polygon', coordinates: [ring] }),
+          vectorOf(point.lat, point.lon),
+        );
         const reversed = [...ring].reverse();
         const theirs = geoContains({ type: 'Polygon', coordinates: [reversed] }, [point.lon, point.lat]);
         if (ours !== theirs) mismatches++;

@@ -26,7 +26,11 @@ export function contains(shape: Shape, p: Vec): boolean {
       const sideTo = dot(arc, to);
       if (sideFrom > 0 !== sideTo > 0) {
         const w = sideFrom / (sideFrom - sideTo);
-        const x = [from[0] + w * (to[0] - from[0]), from[1] + w * (to[1] - from[1]), from[2] + w * (to[2] - from[2])];
+        const x = [
+          from[0] + w * (to[0] - from[0]),
+          from[1] + w * (to[1] - from[1]),
+          from[2] + w * (to[2] - from[2]),
+        ];
         const along = dot(p, x) / Math.hypot(...x);
         // Only crossings ahead of the point, between it and the target, in order of distance.
         const ahead = dot(cross(arc, p), x) >= 0;

@@ -8,6 +8,7 @@ interface Axes {
 }
 
 const EARTH_KM = 6371.0088;
+export const ELLIPSE_POINTS = 48;
 
 /** East and north at a place; at a pole along the meridian of longitude 0. */
 export function eastNorth(v: Vec): { east: Vec; north: Vec } {
@@ -21,7 +22,11 @@ export function eastNorth(v: Vec): { east: Vec; north: Vec } {
   return { east, north };
 }
 
-export function ellipsePoints(v: Vec, { semi_major_km, semi_minor_km, azimuth_deg }: Axes, n = 48): Vec[] {
+export function ellipsePoints(
+  v: Vec,
+  { semi_major_km, semi_minor_km, azimuth_deg }: Axes,
+  n = ELLIPSE_POINTS,
+): Vec[] {
   const { east, north } = eastNorth(v);
   const az = (azimuth_deg * Math.PI) / 180;
   const [s, c] = [Math.sin(az), Math.cos(az)];

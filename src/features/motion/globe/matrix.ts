@@ -62,7 +62,13 @@ export function centreOf(m: ArrayLike<number>): Centre {
 }
 
 /** out = a · b; `b` may start at an offset of a packed array of matrices. */
-export function multiply(a: ArrayLike<number>, b: ArrayLike<number>, out: Float64Array, from = 0, to = 0): void {
+export function multiply(
+  a: ArrayLike<number>,
+  b: ArrayLike<number>,
+  out: Float64Array,
+  from = 0,
+  to = 0,
+): void {
   for (let r = 0; r < 3; r++) {
     const a0 = a[3 * r] as number;
     const a1 = a[3 * r + 1] as number;
@@ -89,7 +95,9 @@ export function turnBack(m: ArrayLike<number>, v: readonly [number, number, numb
 }
 
 export const dot = (a: readonly number[], b: readonly number[]): number =>
-  (a[0] as number) * (b[0] as number) + (a[1] as number) * (b[1] as number) + (a[2] as number) * (b[2] as number);
+  (a[0] as number) * (b[0] as number) +
+  (a[1] as number) * (b[1] as number) +
+  (a[2] as number) * (b[2] as number);
 
 export const cross = (a: Vec, b: Vec): Vec => [
   a[1] * b[2] - a[2] * b[1],

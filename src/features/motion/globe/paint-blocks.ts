@@ -1,14 +1,15 @@
-/** Fills and strokes of blocks and of the coasts they carry, on the globe's disc in device pixels. */
+/** Fills and strokes of blocks and of the coasts they carry, in device pixels. */
 import { type Evidence } from '../../../kernel/rotations/types';
-import { type Clipper, type Disc } from './clip';
+import { type Ground } from './ground';
 import { type Palette } from './palette';
 import { type Patterns } from './patterns';
 import { type Shape } from './shape';
 
 export interface DrawnBlock {
-  readonly code: string;
   readonly evidence: Evidence;
   readonly shape: Shape;
+  /** Index of the pose that moves it. */
+  readonly carrier: number;
 }
 
 export interface BlockStyle {
@@ -16,9 +17,6 @@ export interface BlockStyle {
   readonly patterns: Patterns;
   /** Device pixels to a CSS pixel. */
   readonly scale: number;
-  readonly level: number;
-  /** Evidence switched off in the legend leaves its blocks as bare outlines. */
-  readonly bare?: ReadonlySet<Evidence>;
 }
 
 export const OUTLINE = 0.85;
@@ -26,62 +24,51 @@ export const COAST = 0.7;
 export const UNCONSTRAINED_DASH = [6, 3.2];
 export const COAST_DASH = [2.2, 1.9];
 
-/** Draws blocks in order; `matrices` packs one 3 × 3 view matrix per block, NaN where it has no position. */
+/** Draws blocks in order; `poses` packs one 3 × 3 matrix per carrier, NaN where it has no position. */
 export function paintBlocks(
   ctx: CanvasRenderingContext2D,
-  clipper: Clipper,
-  disc: Disc,
+  ground: Ground,
   blocks: readonly DrawnBlock[],
-  matrices: Float64Array,
-  style: BlockStyle,
+  poses: Float64Array,
+  { palette, patterns, scale }: BlockStyle,
 ): void {
-  const { palette, patterns, scale, level } = style;
   ctx.strokeStyle = palette.outline;
   ctx.lineWidth = OUTLINE * scale;
   ctx.lineJoin = 'round';
   const solid: number[] = [];
   const dashed = UNCONSTRAINED_DASH.map((d) => d * scale);
-  blocks.forEach((block, i) => {
-    if (Number.isNaN(matrices[9 * i])) return;
-    const seen = clipper.load(block.shape, level, matrices, 9 * i);
-    if (seen === 'hidden') return;
+  for (const { shape, evidence, carrier } of blocks) {
+    if (Number.isNaN(poses[9 * carrier])) continue;
+    const seen = ground.load(shape, poses, 9 * carrier);
+    if (seen === 'hidden') continue;
     ctx.beginPath();
-    clipper.fill(ctx, disc);
-    if (!style.bare?.has(block.evidence)) {
-      ctx.fillStyle = patterns[block.evidence];
-      ctx.fill();
-    }
+    ground.fill(ctx);
+    ctx.fillStyle = patterns[evidence];
+    ctx.fill();
     if (seen === 'cut') {
       ctx.beginPath();
-      clipper.stroke(ctx, disc);
+      ground.edges(ctx, true);
     }
-    ctx.setLineDash(block.evidence === 'unconstrained' ? dashed : solid);
+    ctx.setLineDash(evidence === 'unconstrained' ? dashed : solid);
     ctx.stroke();
-  });
+  }
   ctx.setLineDash(solid);
-}
-
-export interface DrawnLines {
-  readonly shape: Shape;
-  /** Index into the matrices of the block that carries the lines. */
-  readonly carrier: number;
 }
 
 export function paintLines(
   ctx: CanvasRenderingContext2D,
-  clipper: Clipper,
-  disc: Disc,
-  lines: readonly DrawnLines[],
-  matrices: Float64Array,
-  { palette, scale, level }: BlockStyle,
+  ground: Ground,
+  lines: readonly Omit<DrawnBlock, 'evidence'>[],
+  poses: Float64Array,
+  { palette, scale }: BlockStyle,
 ): void {
   ctx.strokeStyle = palette.coast;
   ctx.lineWidth = COAST * scale;
   ctx.setLineDash(COAST_DASH.map((d) => d * scale));
   ctx.beginPath();
   for (const { shape, carrier } of lines) {
-    if (carrier < 0 || Number.isNaN(matrices[9 * carrier])) continue;
-    if (clipper.load(shape, level, matrices, 9 * carrier) !== 'hidden') clipper.stroke(ctx, disc, false);
+    if (carrier < 0 || Number.isNaN(poses[9 * carrier])) continue;
+    if (ground.load(shape, poses, 9 * carrier) !== 'hidden') ground.edges(ctx, false);
   }
   ctx.stroke();
   ctx.setLineDash([]);

@@ -3,8 +3,9 @@ import { kilometres } from '../format';
 import { type Arrow } from '../scene/arrows';
 import { type Separation } from '../scene/separation';
 import { type Box } from './labels';
-import { turn, unit, type Vec } from './matrix';
-import { font, haloText, place, type Look, type Pen, type XY } from './pen';
+import { type Ground } from './ground';
+import { unit, type Vec } from './matrix';
+import { font, haloText, type Pen, type XY } from './pen';
 
 /** Length of a velocity of 100 mm/yr, CSS pixels, on a globe of this radius and larger in proportion. */
 export const ARROW_PX = 36;
@@ -12,17 +13,18 @@ const ARROW_RADIUS = 245;
 /** Slower than this, mm/yr, an arrow would be a dot. */
 const STILL = 1.5;
 
-export function paintArrows(pen: Pen, { disc, view }: Look, arrows: readonly Arrow[]): void {
+export function paintArrows(pen: Pen, ground: Ground, arrows: readonly Arrow[]): void {
   const { ctx, palette, scale } = pen;
   const perUnit = ARROW_PX / 100 / ARROW_RADIUS;
   ctx.strokeStyle = ctx.fillStyle = palette.ink;
   ctx.lineWidth = 0.95 * scale;
   for (const { from, v } of arrows) {
     if (Math.hypot(...v) < STILL) continue;
-    const foot = turn(view, from);
-    if (foot[2] < 0.08) continue;
-    const tip = turn(view, unit([from[0] + v[0] * perUnit, from[1] + v[1] * perUnit, from[2] + v[2] * perUnit]));
-    arrow(pen, place(disc, foot), place(disc, tip));
+    const foot = ground.at(from);
+    const tip = ground.at(
+      unit([from[0] + v[0] * perUnit, from[1] + v[1] * perUnit, from[2] + v[2] * perUnit]),
+    );
+    if (foot && tip) arrow(pen, foot, tip);
   }
 }
 
@@ -44,11 +46,11 @@ function arrow({ ctx, scale }: Pen, [x1, y1]: XY, [x2, y2]: XY): void {
 }
 
 /** Answers the box of its figure, or none where it isn't seen. */
-export function paintSeparation(pen: Pen, { disc, view }: Look, { from, to, km }: Separation): Box[] {
+export function paintSeparation(pen: Pen, ground: Ground, { from, to, km }: Separation): Box[] {
   const { ctx, palette, scale } = pen;
-  const [a, b] = [turn(view, from), turn(view, to)];
-  if (a[2] <= 0 || b[2] <= 0) return [];
-  const [[x1, y1], [x2, y2]] = [place(disc, a), place(disc, b)];
+  const [a, b] = [ground.at(from), ground.at(to)];
+  if (!a || !b) return [];
+  const [[x1, y1], [x2, y2]] = [a, b];
   const length = Math.hypot(x2 - x1, y2 - y1) || 1;
   const [nx, ny] = [((y1 - y2) / length) * 5 * scale, ((x2 - x1) / length) * 5 * scale];
   ctx.strokeStyle = palette.kelp;
@@ -56,7 +58,11 @@ export function paintSeparation(pen: Pen, { disc, view }: Look, { from, to, km }
   ctx.beginPath();
   ctx.moveTo(x1, y1);
   ctx.lineTo(x2, y2);
-  for (const [x, y] of [[x1, y1], [x2, y2]] as const) { // prettier-ignore
+  for (const [x, y] of [
+    [x1, y1],
+    [x2, y2],
+  ] as const) {
+    // prettier-ignore
     ctx.moveTo(x - nx, y - ny);
     ctx.lineTo(x + nx, y + ny);
   }
@@ -68,20 +74,33 @@ export function paintSeparation(pen: Pen, { disc, view }: Look, { from, to, km }
   const right = Math.max(x1, x2) + 9 * scale;
   const middle = (y1 + y2) / 2;
   haloText(pen, text, right, middle, palette.kelp);
-  return [{ x: right - 2 * scale, y: middle - 8 * scale, w: ctx.measureText(text).width + 4 * scale, h: 16 * scale }];
+  return [
+    {
+      x: right - 2 * scale,
+      y: middle - 8 * scale,
+      w: ctx.measureText(text).width + 4 * scale,
+      h: 16 * scale,
+    },
+  ];
 }
 
 /** The cross under the pointer, in kelp. */
-export function paintCursor(pen: Pen, { disc, view }: Look, at: Vec): void {
-  const v = turn(view, at);
-  if (v[2] <= 0) return;
+export function paintCursor(pen: Pen, ground: Ground, v: Vec): void {
+  const at = ground.at(v);
+  if (!at) return;
   const { ctx, palette, scale } = pen;
-  const [x, y] = place(disc, v);
+  const [x, y] = at;
   const [inner, outer] = [5.5 * scale, 11 * scale];
   const trace = () => {
     ctx.beginPath();
     ctx.arc(x, y, inner, 0, 2 * Math.PI);
-    for (const [dx, dy] of [[1, 0], [-1, 0], [0, 1], [0, -1]] as const) { // prettier-ignore
+    for (const [dx, dy] of [
+      [1, 0],
+      [-1, 0],
+      [0, 1],
+      [0, -1],
+    ] as const) {
+      // prettier-ignore
       ctx.moveTo(x + dx * (inner - 2.5 * scale), y + dy * (inner - 2.5 * scale));
       ctx.lineTo(x + dx * outer, y + dy * outer);
     }
@@ -96,14 +115,14 @@ export function paintCursor(pen: Pen, { disc, view }: Look, at: Vec): void {
 }
 
 /** Names of seas and other places, in the serif. Answers the box it took. */
-export function paintPlaceName(pen: Pen, { disc, view }: Look, name: string, at: Vec): Box[] {
-  const v = turn(view, at);
-  if (v[2] < 0.15) return [];
+export function paintPlaceName(pen: Pen, ground: Ground, name: string, v: Vec): Box[] {
+  const at = ground.at(v);
+  if (!at) return [];
   const { ctx, palette, scale } = pen;
   ctx.font = font(pen, 13.5, 400, true);
   ctx.textAlign = 'center';
   ctx.textBaseline = 'middle';
-  const [x, y] = place(disc, v);
+  const [x, y] = at;
   haloText(pen, name, x, y, palette['ink-2']);
   const w = ctx.measureText(name).width;
   return [{ x: x - w / 2, y: y - 9 * scale, w, h: 18 * scale }];

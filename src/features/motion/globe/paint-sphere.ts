@@ -2,7 +2,8 @@
 import { meridian, parallel } from '../format';
 import { equator, graticule } from './graticule';
 import { turn, vectorOf } from './matrix';
-import { font, haloText, place, type Look, type Pen } from './pen';
+import { type Look } from './ground-globe';
+import { font, haloText, place, type Pen } from './pen';
 
 /** Distance between the limb's two circles, CSS pixels. */
 export const RING = 5;
@@ -84,7 +85,8 @@ export function paintLimbLabels(pen: Pen, { disc, view, width, height }: Look): 
     const x = disc.cx + r * Math.cos(angle);
     const y = disc.cy - r * Math.sin(angle);
     const text = parallel(lat);
-    if (x - ctx.measureText(text).width < 2 * scale || y < 8 * scale || y > height - 8 * scale || x > width) continue;
+    if (x - ctx.measureText(text).width < 2 * scale || y < 8 * scale || y > height - 8 * scale || x > width)
+      continue;
     ctx.fillText(text, x, y - Math.sin(angle) * 3 * scale);
   }
 }

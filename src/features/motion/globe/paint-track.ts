@@ -1,15 +1,14 @@
 /** The drift path: solid towards the past, dotted towards what was yet to come, ticks, ages and 95 % ellipses. */
 import { number } from '../format';
 import { type Track, type TrackPoint } from '../scene/track';
-import { ellipsePoints } from './ellipse';
+import { ELLIPSE_POINTS, ellipsePoints } from './ellipse';
 import { type Box } from './labels';
-import { turn, type Vec } from './matrix';
-import { dash, font, haloText, place, type Look, type Pen, type XY } from './pen';
+import { type Ground } from './ground';
+import { dash, font, haloText, type Pen, type XY } from './pen';
 
 interface Seen {
   readonly point: TrackPoint;
-  readonly view: Vec;
-  readonly at: XY;
+  readonly at: XY | null;
 }
 
 const TICK = 5.5;
@@ -17,36 +16,31 @@ const TICK = 5.5;
 const LABEL_GAP = 26;
 
 /** `ellipses` where that layer is on. Answers what the path covers, for the names to keep clear of. */
-export function paintTrack(pen: Pen, look: Look, track: Track, age: number, ellipses: boolean): Box[] {
-  const seen = track.points.map((point): Seen => {
-    const view = turn(look.view, point.v);
-    return { point, view, at: place(look.disc, view) };
-  });
+export function paintTrack(pen: Pen, ground: Ground, track: Track, age: number, ellipses: boolean): Box[] {
+  const seen = track.points.map((point): Seen => ({ point, at: ground.at(point.v) }));
   const older = seen.filter(({ point }) => point.age >= age);
   const younger = seen.filter(({ point }) => point.age <= age);
   const { ctx, palette, scale } = pen;
   ctx.strokeStyle = palette.ochre;
   ctx.lineJoin = 'round';
   ctx.lineWidth = 1.5 * scale;
-  line(pen, older);
+  line(pen, ground, older);
   dash(pen, [1, 2.2]);
-  line(pen, younger);
+  line(pen, ground, younger);
   dash(pen, []);
   ctx.lineWidth = 1.2 * scale;
   ticks(pen, seen, track.tick);
-  return labels(pen, look, older, track.tick, age, ellipses);
+  return labels(pen, ground, older, track.tick, age, ellipses);
 }
 
-function line({ ctx }: Pen, seen: readonly Seen[]): void {
+/** Broken where it goes out of sight or over the seam of a map. */
+function line({ ctx }: Pen, { width }: Ground, seen: readonly Seen[]): void {
   ctx.beginPath();
-  let down = false;
-  for (const { view, at } of seen) {
-    if (view[2] <= 0) down = false;
-    else if (down) ctx.lineTo(at[0], at[1]);
-    else {
-      ctx.moveTo(at[0], at[1]);
-      down = true;
-    }
+  let last: XY | null = null;
+  for (const { at } of seen) {
+    if (at && last && Math.abs(at[0] - last[0]) < width / 3) ctx.lineTo(at[0], at[1]);
+    else if (at) ctx.moveTo(at[0], at[1]);
+    last = at;
   }
   ctx.stroke();
 }
@@ -55,8 +49,8 @@ const isTick = (age: number, step: number): boolean => Math.abs(age / step - Mat
 
 function ticks({ ctx, scale }: Pen, seen: readonly Seen[], step: number): void {
   ctx.beginPath();
-  seen.forEach(({ point, view, at }, i) => {
-    if (view[2] <= 0 || !isTick(point.age, step)) return;
+  seen.forEach(({ point, at }, i) => {
+    if (!at || !isTick(point.age, step)) return;
     const [ax, ay] = seen[Math.max(0, i - 1)]?.at ?? at;
     const [bx, by] = seen[Math.min(seen.length - 1, i + 1)]?.at ?? at;
     const length = Math.hypot(bx - ax, by - ay);
@@ -69,41 +63,52 @@ function ticks({ ctx, scale }: Pen, seen: readonly Seen[], step: number): void {
 }
 
 /** Ages at every second tick where the path has room, each with its ellipse. */
-function labels(pen: Pen, look: Look, older: readonly Seen[], step: number, age: number, ellipses: boolean): Box[] {
+function labels(
+  pen: Pen,
+  ground: Ground,
+  older: readonly Seen[],
+  step: number,
+  age: number,
+  ellipses: boolean,
+): Box[] {
   const { ctx, palette, scale } = pen;
   const boxes: Box[] = [];
   let last: XY | null = older[0]?.at ?? null;
   ctx.font = font(pen, 11, 500);
   ctx.textBaseline = 'middle';
   ctx.textAlign = 'right';
-  for (const { point, view, at } of older) {
-    if (!isTick(point.age, 2 * step) || view[2] <= 0 || point.age === age) continue;
+  for (const { point, at } of older) {
+    if (!at || !isTick(point.age, 2 * step) || point.age === age) continue;
     if (last && Math.hypot(at[0] - last[0], at[1] - last[1]) < LABEL_GAP * scale) continue;
     last = at;
     let reach = TICK * scale;
-    if (ellipses && point.ellipse) reach = Math.max(reach, ellipse(pen, look, point, false));
+    if (ellipses && point.ellipse) reach = Math.max(reach, ellipse(pen, ground, point, false));
     const text = number(point.age, point.age % 1 ? 1 : 0);
     haloText(pen, text, at[0] - reach - 2 * scale, at[1], palette['ochre-ink']);
     const w = ctx.measureText(text).width;
-    boxes.push({ x: at[0] - reach - w - 4 * scale, y: at[1] - 7 * scale, w: w + reach + 8 * scale, h: 14 * scale });
+    boxes.push({
+      x: at[0] - reach - w - 4 * scale,
+      y: at[1] - 7 * scale,
+      w: w + reach + 8 * scale,
+      h: 14 * scale,
+    });
   }
   return boxes;
 }
 
 /** Strokes a 95 % ellipse, dashed where it is "at least"; answers how far it reaches to the left of its centre. */
-export function ellipse(pen: Pen, { view, disc }: Look, { v, ellipse: e }: TrackPoint, filled: boolean): number {
-  if (!e) return 0;
+export function ellipse(pen: Pen, ground: Ground, { v, ellipse: e }: TrackPoint, filled: boolean): number {
+  const centre = ground.at(v);
+  if (!e || !centre) return 0;
+  const ring = ellipsePoints(v, e).flatMap((p) => {
+    const at = ground.at(p);
+    return at ? [at] : [];
+  });
+  if (ring.length < ELLIPSE_POINTS || ring.some(([x]) => Math.abs(x - centre[0]) > ground.width / 3))
+    return 0;
   const { ctx, palette, scale } = pen;
-  const ring = ellipsePoints(v, e).map((p) => turn(view, p));
-  if (ring.some((p) => p[2] <= 0)) return 0;
-  const centre = place(disc, turn(view, v))[0];
-  let reach = 0;
   ctx.beginPath();
-  for (const p of ring) {
-    const [x, y] = place(disc, p);
-    reach = Math.max(reach, centre - x);
-    ctx.lineTo(x, y);
-  }
+  for (const [x, y] of ring) ctx.lineTo(x, y);
   ctx.closePath();
   if (filled) {
     ctx.fillStyle = palette['ochre-band'];
@@ -114,7 +119,7 @@ export function ellipse(pen: Pen, { view, disc }: Look, { v, ellipse: e }: Track
   dash(pen, e.at_least ? [3, 2] : []);
   ctx.stroke();
   dash(pen, []);
-  return reach;
+  return Math.max(...ring.map(([x]) => centre[0] - x));
 }
 
 /** The selected point at this age. */

@@ -27,7 +27,11 @@ const line = (ctx: CanvasRenderingContext2D, x1: number, y1: number, x2: number,
 
 const MARKS: Readonly<Record<Evidence, Marks>> = {
   published(ctx) {
-    for (const [x, y] of [[1.75, 1.75], [5.25, 5.25]] as const) { // prettier-ignore
+    for (const [x, y] of [
+      [1.75, 1.75],
+      [5.25, 5.25],
+    ] as const) {
+      // prettier-ignore
       ctx.beginPath();
       ctx.arc(x, y, 0.62, 0, 2 * Math.PI);
       ctx.fill();

@@ -1,6 +1,6 @@
 /** A canvas to draw on in device pixels, with what every painter needs. */
 import { type Clipper, type Disc } from './clip';
-import { type Mat, type Vec } from './matrix';
+import { type Vec } from './matrix';
 import { type Palette } from './palette';
 
 export interface Pen {
@@ -9,18 +9,6 @@ export interface Pen {
   /** Device pixels to a CSS pixel. */
   readonly scale: number;
   readonly clipper: Clipper;
-}
-
-/** One picture of the globe: where its disc lies and how the frame is turned. */
-export interface Look {
-  readonly disc: Disc;
-  /** Frame coordinates to view coordinates. */
-  readonly view: Mat;
-  /** Canvas size in device pixels. */
-  readonly width: number;
-  readonly height: number;
-  /** Index of the level of detail. */
-  readonly level: number;
 }
 
 export type XY = readonly [x: number, y: number];
@@ -38,12 +26,23 @@ export function viewOf({ cx, cy, radius }: Disc, [x, y]: XY): { v: Vec; onGlobe:
   return { v: [vx / r, vy / r, 0], onGlobe: false };
 }
 
-export function font({ palette, scale }: Pick<Pen, 'palette' | 'scale'>, size: number, weight = 400, serif = false): string {
+export function font(
+  { palette, scale }: Pick<Pen, 'palette' | 'scale'>,
+  size: number,
+  weight = 400,
+  serif = false,
+): string {
   return `${serif ? 'italic ' : ''}${weight} ${size * scale}px ${serif ? palette.serif : palette.sans}`;
 }
 
 /** Text over a halo of the ground it stands on. */
-export function haloText({ ctx, palette, scale }: Pen, text: string, x: number, y: number, colour: string): void {
+export function haloText(
+  { ctx, palette, scale }: Pen,
+  text: string,
+  x: number,
+  y: number,
+  colour: string,
+): void {
   ctx.lineJoin = 'round';
   ctx.lineWidth = 3 * scale;
   ctx.strokeStyle = palette.globe;

@@ -65,7 +65,9 @@ export function leftArea(ring: Points): number {
     const a = vertex(ring, i);
     const b = vertex(ring, (i + 1) % n);
     const volume =
-      c[0] * (a[1] * b[2] - a[2] * b[1]) + c[1] * (a[2] * b[0] - a[0] * b[2]) + c[2] * (a[0] * b[1] - a[1] * b[0]);
+      c[0] * (a[1] * b[2] - a[2] * b[1]) +
+      c[1] * (a[2] * b[0] - a[0] * b[2]) +
+      c[2] * (a[0] * b[1] - a[1] * b[0]);
     sum += 2 * Math.atan2(volume, 1 + dot(a, b) + dot(b, c) + dot(c, a));
   }
   return ((sum % (4 * Math.PI)) + 4 * Math.PI) % (4 * Math.PI);
@@ -163,7 +165,10 @@ function thin(part: Points, weight: Float64Array, tolerance: number): Points {
  * Shape of a block's outline. Each polygon is its outer ring and its holes. The inside is the smaller side unless
  * `larger` is stated; of two equal sides, the one to the left.
  */
-export function shapeOf(polygons: readonly (readonly Points[])[], inside: 'smaller' | 'larger' = 'smaller'): Shape {
+export function shapeOf(
+  polygons: readonly (readonly Points[])[],
+  inside: 'smaller' | 'larger' = 'smaller',
+): Shape {
   const rings: Points[] = [];
   let whole = false;
   for (const polygon of polygons) {
@@ -182,7 +187,11 @@ export function shapeOf(polygons: readonly (readonly Points[])[], inside: 'small
 
 /** Shape of open lines: coasts, ridges, paths. */
 export const linesOf = (lines: readonly Points[]): Shape =>
-  withLevels(lines.filter((line) => line.length >= 6), false, false);
+  withLevels(
+    lines.filter((line) => line.length >= 6),
+    false,
+    false,
+  );
 
 interface Geometry {
   readonly type: string;

@@ -42,7 +42,8 @@ function feetOf(shape: Shape): readonly Vec[] {
 function middle(shape: Shape): Vec[] {
   const sum: Vec = [0, 0, 0];
   for (const part of shape.levels[0] ?? []) {
-    for (let i = 0; i < part.length / 3; i++) vertex(part, i).forEach((x, k) => (sum[k] = (sum[k] as number) + x));
+    for (let i = 0; i < part.length / 3; i++)
+      vertex(part, i).forEach((x, k) => (sum[k] = (sum[k] as number) + x));
   }
   const p = unit(sum);
   return contains(shape, p) ? [p] : [];

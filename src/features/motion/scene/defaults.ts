@@ -7,7 +7,8 @@ import { ownPoint } from './points';
 import { findSceneBlock, type Scene } from './scene';
 
 const rowCount = (model: Model, code: string): number =>
-  model.blocks.find((block) => block.code === code)?.legs.reduce((sum, { rows }) => sum + rows.length, 0) ?? 0;
+  model.blocks.find((block) => block.code === code)?.legs.reduce((sum, { rows }) => sum + rows.length, 0) ??
+  0;
 
 /** The frame at the top of a block's circuit; else the first frame, else the block itself. */
 export function rootFrame(model: Model, code: string | null): string {
@@ -18,7 +19,9 @@ export function rootFrame(model: Model, code: string | null): string {
     const above: string | undefined = block.legs.at(-1)?.relative_to;
     block = model.blocks.find((candidate) => candidate.code === above) ?? block;
   }
-  return block?.code ?? model.blocks.find(({ kind }) => kind === 'frame')?.code ?? model.blocks[0]?.code ?? '';
+  return (
+    block?.code ?? model.blocks.find(({ kind }) => kind === 'frame')?.code ?? model.blocks[0]?.code ?? ''
+  );
 }
 
 function firstBlock(scene: Scene): string | null {

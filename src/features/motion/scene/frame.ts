@@ -33,10 +33,15 @@ export function frameAt(model: Model, age: number, heldStill: string): Frame {
 export function frameKeeper(): typeof frameAt {
   let last: Frame | null = null;
   return (model, age, heldStill) => {
-    if (last?.model !== model || last.age !== age || last.heldStill !== heldStill) last = frameAt(model, age, heldStill);
+    if (last?.model !== model || last.age !== age || last.heldStill !== heldStill)
+      last = frameAt(model, age, heldStill);
     return last;
   };
 }
+
+const presents = frameKeeper();
+/** Today's map: every block still present lies where it lies. */
+export const presentFrame = (model: Model, heldStill: string): Frame => presents(model, 0, heldStill);
 
 /** A block's 3 × 3 matrix in a frame, or null where it has no position. */
 export function matrixOf(frame: Frame, code: string): Float64Array | null {

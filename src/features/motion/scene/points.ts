@@ -24,7 +24,15 @@ export function ownPoint(scene: Scene, block: SceneBlock): NamedPoint | null {
   const site = scene.directions.find((direction) => direction.block === block.code);
   if (site) return named(site.lat, site.lon, block, site.site);
   const middle = middleOf(block);
-  return middle && { ...middle, block: block.code, name: null, subject: `the middle of ${inText(block)}`, plural: false };
+  return (
+    middle && {
+      ...middle,
+      block: block.code,
+      name: null,
+      subject: `the middle of ${inText(block)}`,
+      plural: false,
+    }
+  );
 }
 
 /** The point a selection stands for. */
@@ -33,7 +41,8 @@ export function selectedPoint(scene: Scene, code: string | null, point: Point | 
   if (!block) return null;
   if (!point) return ownPoint(scene, block);
   const known = scene.points.find(
-    ({ block: on, lat, lon, kind }) => on === code && kind === 'rock' && near(lat, point.lat) && near(lon, point.lon),
+    ({ block: on, lat, lon, kind }) =>
+      on === code && kind === 'rock' && near(lat, point.lat) && near(lon, point.lon),
   );
   return named(point.lat, point.lon, block, known?.name ?? null);
 }

@@ -38,7 +38,12 @@ export function separationAt(scene: Scene, frame: Frame, code: string, other: st
   const [a, b] = shapes;
   const [ma, mb] = [matrixOf(frame, code), matrixOf(frame, other)];
   if (!a || !b || !ma || !mb) return null;
-  const between = closest(a, b, (v) => turnBack(mb, turn(ma, v)), (v) => turnBack(ma, turn(mb, v)));
+  const between = closest(
+    a,
+    b,
+    (v) => turnBack(mb, turn(ma, v)),
+    (v) => turnBack(ma, turn(mb, v)),
+  );
   if (!between) return null;
   const from = turn(ma, between.a);
   const to = turn(mb, between.b);
@@ -82,13 +87,18 @@ function closest(a: Shape, b: Shape, toB: (v: Vec) => Vec, toA: (v: Vec) => Vec)
   );
 }
 
-const size = (parts: readonly Points[] | undefined): number => (parts ?? []).reduce((sum, p) => sum + p.length / 3, 0);
+const size = (parts: readonly Points[] | undefined): number =>
+  (parts ?? []).reduce((sum, p) => sum + p.length / 3, 0);
 
 /** The vertex itself and the nearest points of the two edges that meet there. */
 function besides(ring: Points, i: number, from: Vec): Vec[] {
   const n = ring.length / 3;
   const here = vertex(ring, i);
-  return [here, onEdge(from, here, vertex(ring, (i + 1) % n)), onEdge(from, vertex(ring, (i + n - 1) % n), here)];
+  return [
+    here,
+    onEdge(from, here, vertex(ring, (i + 1) % n)),
+    onEdge(from, vertex(ring, (i + n - 1) % n), here),
+  ];
 }
 
 function onEdge(from: Vec, a: Vec, b: Vec): Vec {

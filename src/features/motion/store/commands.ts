@@ -1,5 +1,5 @@
 /** One object for each command, shared by its button, its key and its place in a list. */
-import { open, select, setView, stepAge, toggleTables, turnTo, zoomTo } from './actions';
+import { open, select, setView, stepAge, toggleTables, turnTo, zoomBy, zoomTo } from './actions';
 import { type Centre } from '../globe/matrix';
 import { type WorkbenchStore } from './state';
 
@@ -35,7 +35,12 @@ export const ageStep = (event: KeyLike): number => (event.shiftKey ? 10 : event.
 const arrow = (event: KeyLike): number => (event.key === 'ArrowUp' ? -1 : event.key === 'ArrowDown' ? 1 : 0);
 const upDown = (event: KeyLike): boolean => !event.ctrlKey && !event.metaKey && arrow(event) !== 0;
 
-const ageCommand = (id: string, label: string, keys: string[], wants: (event: KeyLike) => boolean): Command => ({
+const ageCommand = (
+  id: string,
+  label: string,
+  keys: string[],
+  wants: (event: KeyLike) => boolean,
+): Command => ({
   id,
   label,
   keys,
@@ -47,7 +52,12 @@ const ageCommand = (id: string, label: string, keys: string[], wants: (event: Ke
 export const COMMANDS = {
   step: ageCommand('step', 'Age by 1 Myr', ['↑', '↓'], (event) => !event.shiftKey && !event.altKey),
   leap: ageCommand('leap', 'Age by 10 Myr', ['Shift ↑', 'Shift ↓'], (event) => event.shiftKey),
-  nudge: ageCommand('nudge', 'Age by 0.1 Myr', ['Alt ↑', 'Alt ↓'], (event) => event.altKey && !event.shiftKey),
+  nudge: ageCommand(
+    'nudge',
+    'Age by 0.1 Myr',
+    ['Alt ↑', 'Alt ↓'],
+    (event) => event.altKey && !event.shiftKey,
+  ),
   jump: {
     id: 'jump',
     label: 'Jump to an age or a block',
@@ -62,7 +72,7 @@ export const COMMANDS = {
     keys: ['+'],
     group: 'view',
     matches: plain('+', '='),
-    run: ({ store }) => zoomTo(store, store.getState().zoom * 1.25),
+    run: ({ store }) => zoomBy(store, 1.25),
   },
   zoomOut: {
     id: 'zoom-out',
@@ -70,7 +80,7 @@ export const COMMANDS = {
     keys: ['−'],
     group: 'view',
     matches: plain('-', '−', '_'),
-    run: ({ store }) => zoomTo(store, store.getState().zoom / 1.25),
+    run: ({ store }) => zoomBy(store, 0.8),
   },
   home: {
     id: 'home',

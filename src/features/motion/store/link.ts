@@ -77,7 +77,11 @@ export function followInAddress(
   const write = () => {
     const query = toQuery(store.getState());
     if (`?${query}` !== page.location.search) {
-      page.history.replaceState(page.history.state, '', `${page.location.pathname}?${query}${page.location.hash}`);
+      page.history.replaceState(
+        page.history.state,
+        '',
+        `${page.location.pathname}?${query}${page.location.hash}`,
+      );
     }
   };
   const stop = store.subscribe(() => {

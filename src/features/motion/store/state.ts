@@ -1,7 +1,8 @@
 /** What a workbench shows, and nothing that can be worked out from it. */
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import { EVIDENCE, type Evidence, type Model } from '../../../kernel/rotations/types';
-import { type Centre, type Vec } from '../globe/matrix';
+import { type Centre } from '../globe/matrix';
+import { type Cursor } from '../scene/cursor';
 
 export const VIEWS = ['globe', 'map', 'then-and-now'] as const;
 export type View = (typeof VIEWS)[number];
@@ -44,8 +45,7 @@ export interface Linked {
 export interface Passing {
   /** True while the age line or the globe is being moved: drawing may be coarser. */
   readonly moving: boolean;
-  /** Where the pointer is on the globe, in the held-still frame; for then and now, on the selected block's present ground. */
-  readonly cursor: { readonly at: Vec; readonly on: 'then' | 'now' } | null;
+  readonly cursor: Cursor | null;
   /** A model compiled from rows as they are being edited; shown instead of the saved one. */
   readonly draftModel: Model | null;
   readonly open: 'jump' | 'keys' | null;

@@ -1,0 +1,106 @@
+/** The right half of the workbench: globe, map, or then and now, with the legend. */
+import { Segmented } from '../../../../components/ui/Segmented';
+import { age as ageText, coordinates, meridian, parallel } from '../../format';
+import { placeOf } from '../../globe/matrix';
+import { setView } from '../../store/actions';
+import { type View } from '../../store/state';
+import { useBench, useWorkbench } from '../bench';
+import { useNames } from '../use-names';
+import { BlockList } from './BlockList';
+import { GlobeCanvas } from './GlobeCanvas';
+import { Legend, LegendRow } from './Legend';
+import { ThenAndNow } from './ThenAndNow';
+
+const VIEWS: readonly { readonly id: View; readonly label: string }[] = [
+  { id: 'globe', label: 'Globe' },
+  { id: 'map', label: 'Map' },
+  { id: 'then-and-now', label: 'Then and now' },
+];
+
+/** "Spin axis frame", "Sable held still". */
+export function useFrameName(): string {
+  const { scene } = useBench();
+  const heldStill = useWorkbench((state) => state.heldStill);
+  const block = scene.blocks.find(({ code }) => code === heldStill);
+  if (!block) return heldStill;
+  return block.kind === 'frame' ? `${block.name} frame` : `${block.short} held still`;
+}
+
+function Heading({ view }: { view: View }) {
+  const frame = useFrameName();
+  const age = useWorkbench((state) => state.age);
+  const centre = useWorkbench((state) => state.centre);
+  if (view === 'then-and-now') {
+    return (
+      <>
+        <h2 className="t-answer">Then and now</h2>
+        <p className="t-body text-ink-2 max-sm:hidden">both orthographic, the same scale</p>
+      </>
+    );
+  }
+  const where =
+    view === 'map'
+      ? `Mollweide, equal-area, centred on ${meridian(Math.round(centre.lon))}`
+      : `orthographic, centred on ${parallel(Math.round(centre.lat))}, ${meridian(Math.round(centre.lon))}`;
+  return (
+    <>
+      <h2 className="t-answer whitespace-nowrap">
+        {frame}, {ageText(age)}
+      </h2>
+      <p className="t-body text-ink-2 max-md:hidden">{where}</p>
+    </>
+  );
+}
+
+/** Where the pointer is; empty while it is elsewhere. */
+function UnderPointer() {
+  const cursor = useWorkbench((state) => state.cursor);
+  const nameOf = useNames();
+  const place = cursor && placeOf(cursor.at);
+  return (
+    <p
+      className="t-label tabular text-ink-2 pointer-events-none absolute bottom-2 left-5 h-[14px]"
+      aria-hidden="true"
+    >
+      {place &&
+        `${coordinates(place.lat, place.lon)}${cursor?.hit ? `, on ${nameOf(cursor.hit.block)}` : ''}`}
+    </p>
+  );
+}
+
+export function GlobePanel() {
+  const { store } = useBench();
+  const view = useWorkbench((state) => state.view);
+  const frame = useFrameName();
+  return (
+    <section aria-label="Globe" className="flex h-full min-h-0 flex-col">
+      <header className="flex min-h-11 flex-wrap items-center gap-x-4 gap-y-1 px-5 pt-1.5 max-md:px-3.5">
+        <Heading view={view} />
+        <div className="ml-auto">
+          <Segmented label="View" options={VIEWS} value={view} onChange={(next) => setView(store, next)} />
+        </div>
+      </header>
+      {view === 'then-and-now' ? (
+        <>
+          <ThenAndNow />
+          <LegendRow />
+        </>
+      ) : (
+        <div className="grid min-h-0 grow grid-cols-[minmax(0,1fr)_190px] gap-x-2 pr-5 max-md:grid-cols-1 max-md:pr-0">
+          <div className="relative min-h-[320px]">
+            <GlobeCanvas
+              label={`${frame}: drag to turn, arrows turn, plus and minus zoom`}
+              describedBy="block-list"
+              flat={view === 'map'}
+            />
+            <UnderPointer />
+          </div>
+          <div className="overflow-auto py-4 max-md:hidden">
+            <Legend />
+          </div>
+        </div>
+      )}
+      <BlockList id="block-list" />
+    </section>
+  );
+}

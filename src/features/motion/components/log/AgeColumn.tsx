@@ -1,0 +1,127 @@
+/** The age column: periods and epochs in the chart's colours, its edition named, ages ticked. */
+import { CHRONOSTRATIGRAPHIC_CHART, unitsBetween, type GeologicalUnit } from '../../../../kernel/timescale';
+import { yOf, type LogLayout, type Strip } from '../../log/layout';
+import { axisStep } from '../../scene/scene';
+
+const PERIOD = { x: 38, width: 24 } as const;
+const EPOCH = { x: 62, width: 18 } as const;
+/** Room a name needs along the column, pixels to a letter. */
+const LETTER = 5.4;
+const SHORT: Record<string, string> = { Oligocene: 'Oligo.', Paleocene: 'Paleo.', Pleistocene: 'Pleist.' };
+
+/** "Late Cretaceous" reads "Late" beside its period. */
+const epochName = (name: string): string =>
+  /^(Late|Middle|Early) /.exec(name)?.[1]?.replace('Middle', 'Mid') ?? name;
+
+export function AgeColumn({
+  layout,
+  strip,
+  compact = false,
+}: {
+  layout: LogLayout;
+  strip: Strip;
+  compact?: boolean;
+}) {
+  const { oldest, head } = layout;
+  const step = axisStep(oldest);
+  const shift = strip.x - (compact ? 4 : 0);
+  const label = step * 2;
+  const ages = Array.from({ length: Math.floor(oldest / (step / 2)) + 1 }, (_, i) => (i * step) / 2);
+  return (
+    <g
+      transform={`translate(${shift} 0)`}
+      role="group"
+      aria-label={`Age in Ma, ${CHRONOSTRATIGRAPHIC_CHART.edition}`}
+    >
+      <text x={12} y={20} className="t-head fill-ink">
+        Age
+      </text>
+      <text x={12} y={35} className="t-label fill-ink-2">
+        Ma
+      </text>
+      {head > 70 && (
+        <text x={12} y={54} className="t-label fill-ink-2">
+          {CHRONOSTRATIGRAPHIC_CHART.edition}
+        </text>
+      )}
+      {(['period', 'epoch'] as const).map((rank) => (
+        <Units
+          key={rank}
+          layout={layout}
+          units={unitsBetween(oldest, 0, rank)}
+          {...(rank === 'period' ? PERIOD : EPOCH)}
+        />
+      ))}
+      <line
+        x1={PERIOD.x + 0.5}
+        x2={PERIOD.x + 0.5}
+        y1={yOf(layout, 0)}
+        y2={yOf(layout, oldest)}
+        className="stroke-frame"
+      />
+      {ages.map((age) => {
+        const y = yOf(layout, age);
+        const long = age % step === 0;
+        return (
+          <g key={age}>
+            <line
+              x1={PERIOD.x - (long ? 6 : 4)}
+              x2={PERIOD.x}
+              y1={y}
+              y2={y}
+              className="stroke-ink"
+              strokeWidth=".8"
+            />
+            {age % label === 0 && (
+              <text x={PERIOD.x - 9} y={y + 3.8} textAnchor="end" className="t-label tabular fill-ink">
+                {age}
+              </text>
+            )}
+          </g>
+        );
+      })}
+    </g>
+  );
+}
+
+interface UnitsProps {
+  readonly layout: LogLayout;
+  readonly units: readonly GeologicalUnit[];
+  readonly x: number;
+  readonly width: number;
+}
+
+function Units({ layout, units, x, width }: UnitsProps) {
+  return units.map((unit) => {
+    const y1 = yOf(layout, unit.younger_ma);
+    const y2 = yOf(layout, Math.min(layout.oldest, unit.older_ma));
+    const name = unit.rank === 'epoch' ? epochName(unit.name) : unit.name;
+    const text = [name, SHORT[name]].find(
+      (candidate) => candidate && candidate.length * LETTER + 6 < y2 - y1,
+    );
+    const ink = unit.name === 'Triassic' ? 'fill-white' : 'fill-[#1C2530]';
+    return (
+      <g key={unit.name}>
+        <rect
+          x={x}
+          y={y1}
+          width={width}
+          height={Math.max(0.3, y2 - y1)}
+          fill={unit.colour}
+          className="stroke-frame"
+          strokeWidth=".5"
+        />
+        {text && (
+          <text
+            transform={`translate(${x + width / 2 + 3.6} ${(y1 + y2) / 2}) rotate(-90)`}
+            textAnchor="middle"
+            className={`t-tick ${ink}`}
+          >
+            {text}
+          </text>
+        )}
+        <title>{`${unit.name}, ${unit.older_ma} to ${unit.younger_ma} Ma`}</title>
+      </g>
+    );
+  });
+}

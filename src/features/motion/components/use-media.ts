@@ -1,0 +1,20 @@
+/** Whether a media query holds; on the server it does not. */
+import { useCallback, useSyncExternalStore } from 'react';
+
+export function useMedia(query: string): boolean {
+  const subscribe = useCallback(
+    (listener: () => void) => {
+      const media = window.matchMedia(query);
+      media.addEventListener('change', listener);
+      return () => media.removeEventListener('change', listener);
+    },
+    [query],
+  );
+  return useSyncExternalStore(
+    subscribe,
+    () => window.matchMedia(query).matches,
+    () => false,
+  );
+}
+
+export const PHONE = '(max-width: 767px)';

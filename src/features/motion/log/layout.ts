@@ -1,0 +1,64 @@
+/** Where the log's strips stand, CSS pixels. All share one age axis. */
+export type StripId = 'age' | 'rotations' | 'latitude' | 'speed';
+
+export interface Strip {
+  readonly id: StripId;
+  readonly x: number;
+  readonly width: number;
+}
+
+export interface LogLayout {
+  readonly width: number;
+  readonly height: number;
+  /** Height of the headings; the rule below them. */
+  readonly head: number;
+  /** y of 0 Ma and of the oldest age. */
+  readonly top: number;
+  readonly bottom: number;
+  readonly oldest: number;
+  readonly strips: readonly Strip[];
+}
+
+export const HEAD = 85;
+const BELOW_HEAD = 7;
+const FOOT = 12;
+const AGE = 88;
+export const LINK_PITCH = 43;
+const LINK_MARGIN = 12;
+const SPEED = { least: 84, most: 150, share: 0.2 } as const;
+
+interface Asked {
+  readonly width: number;
+  readonly height: number;
+  readonly oldest: number;
+  readonly head?: number;
+  readonly links: number;
+  readonly strips: readonly StripId[];
+}
+
+/** Latitude takes what the others leave; a lone strip takes all. */
+export function layoutOf({ width, height, oldest, head = HEAD, links, strips }: Asked): LogLayout {
+  const room = width - AGE;
+  const others = strips.filter((id) => id !== 'age');
+  const fixed: Partial<Record<StripId, number>> = {
+    age: AGE,
+    rotations: Math.min(room / 2, LINK_MARGIN + LINK_PITCH * Math.max(2, links)),
+    speed: Math.min(SPEED.most, Math.max(SPEED.least, SPEED.share * width)),
+  };
+  if (others.length === 1 && others[0]) fixed[others[0]] = room;
+  const taken = strips.reduce((sum, id) => sum + (fixed[id] ?? 0), 0);
+  let x = 0;
+  const placed = strips.map((id): Strip => {
+    const strip = { id, x, width: fixed[id] ?? Math.max(80, width - taken) };
+    x += strip.width;
+    return strip;
+  });
+  return { width, height, head, top: head + BELOW_HEAD, bottom: height - FOOT, oldest, strips: placed };
+}
+
+/** y of an age. Inverse: `ageAt`. */
+export const yOf = ({ top, bottom, oldest }: LogLayout, age: number): number =>
+  top + (age / oldest) * (bottom - top);
+
+export const ageAt = ({ top, bottom, oldest }: LogLayout, y: number): number =>
+  Math.min(oldest, Math.max(0, ((y - top) / (bottom - top)) * oldest));
