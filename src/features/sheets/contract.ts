@@ -41,17 +41,23 @@ const layers = z
     return z.NEVER;
   });
 
-const degrees = (least: number, most: number) => z.coerce.number().min(least).max(most);
+/** A number in an address: a blank is missing, not 0. */
+const number = (least: number, most: number) =>
+  z
+    .union([z.number(), z.string().trim().min(1, 'missing').transform(Number)])
+    .refine((value) => Number.isFinite(value) && value >= least && value <= most, `a number from ${least} to ${most}`);
 
 export const sliceQuery = z.object({
-  version: z.string().default('draft'),
-  age_ma: z.coerce.number().min(0).max(4600),
+  version: z
+    .union([z.literal('draft'), z.string().regex(/^[1-9]\d{0,8}$/, '"draft" or a version’s number').transform(Number)])
+    .optional(),
+  age_ma: number(0, 4600),
   relative_to: slug.optional(),
   projection,
-  centre_lat: degrees(-90, 90).default(0),
-  centre_lon: degrees(-360, 360).default(0),
+  centre_lat: number(-90, 90).default(0),
+  centre_lon: number(-360, 360).default(0),
   /** Degrees from the centre to the edge of an azimuthal map. */
-  reach_deg: degrees(1, 175).optional(),
+  reach_deg: number(1, 175).optional(),
   layers,
   paper: z.enum(['a3', 'a4', 'a5']).default('a4'),
   orientation: z.enum(['landscape', 'portrait']).default('landscape'),
@@ -59,10 +65,10 @@ export const sliceQuery = z.object({
   caption: z.string().max(600).default(''),
   /** Drift path to draw: a block, a point of it in present coordinates, and a step. */
   path_block: slug.optional(),
-  path_lat: degrees(-90, 90).optional(),
-  path_lon: degrees(-360, 360).optional(),
-  path_step_ma: z.coerce.number().min(0.1).max(500).default(10),
+  path_lat: number(-90, 90).optional(),
+  path_lon: number(-360, 360).optional(),
+  path_step_ma: number(0.1, 500).default(10),
   /** Resolution of a PNG. */
-  dpi: z.coerce.number().int().min(50).max(400).default(200),
+  dpi: number(50, 400).default(200),
 });
 export type SliceQuery = z.infer<typeof sliceQuery>;

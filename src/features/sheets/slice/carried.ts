@@ -52,7 +52,9 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
   for (const line of subject.coasts) {
     const pose = poses.get(line.block);
     if (pose?.status !== 'placed' || !holdsAt(age_ma, line.appears_ma, line.disappears_ma)) continue;
-    coasts.push(carryLines(lineVectors(subject.geometryOf(line.sha256)), pose.quaternion));
+    const lines = lineVectors(subject.geometryOf(line.sha256));
+    if (lines.length === 0) continue;
+    coasts.push(carryLines(lines, pose.quaternion));
     if (line.source) sources.add(line.source);
   }
   return { blocks, coasts, missing, sources: [...sources].sort((a, b) => a.localeCompare(b, 'en')) };

@@ -7,6 +7,7 @@ import { pathSvg, type DrawnPath } from './drift';
 import { graticuleLabels, graticuleSvg } from './graticule';
 import { COAST, INK, OUTLINE, PAPER } from './palette';
 import { element, textElement } from './svg';
+import { arrowSvg, type Arrow } from './velocity';
 import { visible } from './visible';
 
 export interface MapRequest {
@@ -14,9 +15,10 @@ export interface MapRequest {
   readonly projection: GeoProjection;
   readonly layers: readonly Layer[];
   readonly path: DrawnPath | null;
+  readonly arrows: readonly Arrow[];
 }
 
-export function mapSvg({ carried, projection, layers, path }: MapRequest): string {
+export function mapSvg({ carried, projection, layers, path, arrows }: MapRequest): string {
   const draw = geoPath(projection).digits(2);
   const has = (layer: Layer): boolean => layers.includes(layer);
   const sphere = draw({ type: 'Sphere' }) ?? '';
@@ -25,6 +27,7 @@ export function mapSvg({ carried, projection, layers, path }: MapRequest): strin
     has('graticule') ? graticuleSvg(projection) : '',
     ...carried.blocks.map((block) => blockSvg(block, draw(block.area) ?? '')),
     has('coasts') ? coastsSvg(carried, (line) => draw(line) ?? '') : '',
+    has('velocity') ? arrows.map((arrow) => arrowSvg(arrow, projection)).join('') : '',
     path && has('path') ? pathSvg(path, projection, has('ellipse')) : '',
     element('path', { class: 'limb', d: sphere, fill: 'none', stroke: INK, 'stroke-width': 0.9 }),
     has('names') ? namesSvg(carried.blocks, projection) : '',

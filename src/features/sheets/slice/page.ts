@@ -12,6 +12,7 @@ import { breakLines, embeddedFontRules, textWidth } from './fonts';
 import { mapSvg } from './map';
 import { EVIDENCE_PATTERNS, INK, INK_2, OCHRE, OUTLINE, PAPER, COAST } from './palette';
 import type { SliceSubject } from './subject';
+import { ARROW_PT_PER_100_MM_YR, blockArrows } from './velocity';
 import { element, escapeXml, textElement, type TextStyle } from './svg';
 
 /** Points for a millimetre. */
@@ -67,6 +68,9 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
   const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
   const projection = fitProjection(query.projection, centre, box, query.reach_deg ?? null);
   const drawnPath = path && { points: path.points, age_ma: query.age_ma, label_step_ma: 2 * query.path_step_ma };
+  const arrows = query.layers.includes('velocity')
+    ? carried.blocks.flatMap((block) => blockArrows(subject.model, block, query.age_ma, subject.frame.code))
+    : [];
   const footTop = height - MARGIN - foot;
   const right = MARGIN + left + GUTTER;
   const title = query.title ?? `${subject.title}, ${age(query.age_ma)}`;
@@ -74,7 +78,7 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
     element('rect', { width, height, fill: PAPER }),
     textElement(MARGIN, MARGIN + 14, title, TITLE),
     textElement(MARGIN, MARGIN + 30, subtitle(subject, query.age_ma), SUBTITLE),
-    `<g class="map">${mapSvg({ carried, projection, layers: query.layers, path: drawnPath })}</g>`,
+    `<g class="map">${mapSvg({ carried, projection, layers: query.layers, path: drawnPath, arrows })}</g>`,
     element('path', { d: `M${MARGIN} ${footTop}H${width - MARGIN}`, stroke: INK, 'stroke-width': 0.8 }),
     writeLines(words, MARGIN, footTop + 14),
     legendSvg(entries, right, footTop + 14),
@@ -157,6 +161,12 @@ function legendEntries(carried: Carried, query: SliceQuery, path: boolean): Lege
     const sample = (x: number, y: number): string =>
       element('path', { d: `M${x} ${y - 1.5}h17M${x + 8.5} ${y - 4.5}v6`, stroke: OCHRE, 'stroke-width': 1.2 });
     entries.push({ text: 'drift path', sample });
+  }
+  if (query.layers.includes('velocity')) {
+    const [tip, look] = [ARROW_PT_PER_100_MM_YR, { fill: 'none', stroke: INK, 'stroke-width': 0.8 }];
+    const sample = (x: number, y: number): string =>
+      element('path', { d: `M${x} ${y - 1.5}h${tip}m-3 -1.6l3 1.6l-3 1.6`, ...look });
+    entries.push({ text: '  100 mm/yr', sample });
   }
   if (carried.coasts.length > 0 && query.layers.includes('coasts')) {
     const look = { fill: 'none', stroke: COAST, 'stroke-width': 0.6, 'stroke-dasharray': '1.8 1.5' };

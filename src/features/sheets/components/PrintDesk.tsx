@@ -1,0 +1,99 @@
+/** One time slice on paper: the page as it will print in the middle, what is on it to the right, files below. */
+import { useDeferredValue, useEffect, useState } from 'react';
+import { sliceHref, sliceSearch, type SliceSettings } from '../address';
+import { CaptionControls, LayerControls, MapControls, PageControls, PathControls, type Choice } from './PrintControls';
+
+export interface PrintDeskProps {
+  readonly slug: string;
+  readonly version: string;
+  readonly settings: SliceSettings;
+  readonly frames: readonly Choice[];
+  readonly blocks: readonly Choice[];
+  readonly oldest_ma: number;
+}
+
+export type Change = (change: Partial<SliceSettings>) => void;
+
+export default function PrintDesk({ slug, version, settings: initial, frames, blocks, oldest_ma }: PrintDeskProps) {
+  const [settings, setSettings] = useState(initial);
+  const change: Change = (part) => setSettings((now) => ({ ...now, ...part }));
+  const search = sliceSearch(settings, version);
+  const settled = useSettled(useDeferredValue(search));
+  useEffect(() => history.replaceState(null, '', search), [search]);
+  return (
+    <div className="grid min-h-[calc(100dvh-52px)] grid-cols-[minmax(0,1fr)_300px] max-lg:grid-cols-1">
+      <Preview href={sliceHref(slug, 'svg', settled)} pending={settled !== search} settings={settings} />
+      <form className="flex flex-col gap-6 border-l border-frame p-5 max-lg:border-t max-lg:border-l-0" onSubmit={(e) => e.preventDefault()}>
+        <h1 className="sr-only">Print a time slice</h1>
+        <PageControls settings={settings} change={change} />
+        <MapControls settings={settings} change={change} frames={frames} oldest_ma={oldest_ma} />
+        <LayerControls settings={settings} change={change} />
+        <PathControls settings={settings} change={change} blocks={blocks} />
+        <CaptionControls settings={settings} change={change} />
+        <div className="mt-auto border-t border-frame pt-4">
+          <div className="flex flex-wrap gap-2">
+            <a className="button button-main" href={sliceHref(slug, 'pdf', search)} download>
+              Print PDF
+            </a>
+            {['svg', 'png', 'geojson'].map((format) => (
+              <a key={format} className="button" href={sliceHref(slug, format, search)} download>
+                {format === 'geojson' ? 'GeoJSON' : format.toUpperCase()}
+              </a>
+            ))}
+          </div>
+        </div>
+      </form>
+    </div>
+  );
+}
+
+/** The value once it has rested for a moment, so that typing does not draw a page for each key. */
+function useSettled(value: string): string {
+  const [settled, setSettled] = useState(value);
+  useEffect(() => {
+    const timer = setTimeout(() => setSettled(value), 250);
+    return () => clearTimeout(timer);
+  }, [value]);
+  return settled;
+}
+
+interface PreviewProps {
+  readonly href: string;
+  readonly pending: boolean;
+  readonly settings: SliceSettings;
+}
+
+function Preview({ href, pending, settings }: PreviewProps) {
+  const [state, setState] = useState<'drawing' | 'shown' | 'failed'>('drawing');
+  const [problem, setProblem] = useState('');
+  useEffect(() => setState('drawing'), [href]);
+  const explain = async (): Promise<void> => {
+    setState('failed');
+    const answer = await fetch(href);
+    if (answer.ok) return setState('shown');
+    const body = (await answer.json().catch(() => ({}))) as { title?: string; detail?: string };
+    setProblem([body.title, body.detail].filter(Boolean).join('. '));
+  };
+  return (
+    <section className="flex flex-col items-center justify-center bg-sunk p-8 max-md:p-3" aria-label="The page as it will print">
+      <p className="mb-3 h-5 t-body text-ink-2" role="status">
+        {state === 'failed' ? '' : pending || state === 'drawing' ? 'Drawing …' : ''}
+      </p>
+      {state === 'failed' ? (
+        <p className="wrong" role="alert">
+          Not drawn. {problem}
+        </p>
+      ) : null}
+      <img
+        src={href}
+        alt={`Time slice at ${settings.age_ma} Ma`}
+        className={`max-h-[78dvh] max-w-full border border-rule-2 bg-white ${state === 'failed' ? 'hidden' : ''}`}
+        onLoad={() => setState('shown')}
+        onError={() => void explain()}
+      />
+      <p className="mt-3 t-body text-ink-2">
+        {settings.paper.toUpperCase()} {settings.orientation}
+      </p>
+    </section>
+  );
+}

@@ -1,0 +1,87 @@
+/** Time slices of a state: the page as SVG, PNG or PDF, and the same positions as GeoJSON. */
+import { loadShapes } from '~/features/ledger/shapes';
+import { loadState, type State } from '~/features/ledger/state';
+import { modelOf } from '~/features/motion/model';
+import { shortHash } from '~/features/versions/hash';
+import { driftPath } from '~/kernel/rotations';
+import { createIndex, requireBlock } from '~/kernel/rotations/model-index';
+import { demand, type Access } from '~/server/access';
+import { runInWorker } from '~/server/workers';
+import { coordinates } from '~/features/motion/format';
+import type { SliceQuery } from './contract';
+import type { RenderJob } from './render.task';
+import renderTask from './render.task.ts?nodeworker';
+import { carry } from './slice/carried';
+import { sliceGeojson } from './slice/geojson';
+import { sliceFileName, slicePage, type Page } from './slice/page';
+import type { SliceSubject } from './slice/subject';
+
+export const SLICE_FORMATS = { svg: 'image/svg+xml', png: 'image/png', pdf: 'application/pdf', geojson: 'application/geo+json' } as const;
+export type SliceFormat = keyof typeof SLICE_FORMATS;
+
+export interface Slice {
+  readonly body: string | Uint8Array;
+  readonly name: string;
+  readonly state: State;
+}
+
+const day = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' });
+
+/** @throws KernelError for an unknown frame or block, Problem where the version may not be seen */
+export async function drawSlice(access: Access, query: SliceQuery, format: SliceFormat, signal?: AbortSignal): Promise<Slice> {
+  demand(access, 'compute');
+  const state = await loadState(access, query.version);
+  const subject = await subjectOf(access, state, query);
+  const carried = carry(subject, query.age_ma, subject.frame.code);
+  const name = sliceFileName(access.project.slug, String(state.version), query.age_ma, format);
+  if (format === 'geojson') return { body: JSON.stringify(sliceGeojson(subject, carried, query)), name, state };
+  const page = slicePage({ subject, carried, query, path: pathOf(subject, query) });
+  if (format === 'svg') return { body: page.svg, name, state };
+  return { body: await render(page, format, query, subject.title, signal), name, state };
+}
+
+function render(page: Page, format: 'png' | 'pdf', query: SliceQuery, title: string, signal?: AbortSignal): Promise<Uint8Array> {
+  return runInWorker<RenderJob, Uint8Array>(renderTask, { ...page, format, dpi: query.dpi, title }, signal);
+}
+
+/** The frame asked for, else the one the project opens with, else the first frame of the model. */
+function frameCode(access: Access, state: State, query: SliceQuery): string {
+  const known = state.blocks.map((block) => block.code);
+  const usual = access.project.held_still;
+  return (
+    query.relative_to ??
+    (usual && known.includes(usual) ? usual : undefined) ??
+    state.blocks.find((block) => block.kind === 'frame')?.code ??
+    known[0] ??
+    ''
+  );
+}
+
+async function subjectOf(access: Access, state: State, query: SliceQuery): Promise<SliceSubject> {
+  const model = modelOf(state);
+  const code = frameCode(access, state, query);
+  requireBlock(model, code, 'relative_to');
+  const frame = state.blocks[createIndex(model).get(code)!]!;
+  const coasts = state.features.filter((feature) => feature.kind === 'layer');
+  const hashes = [...state.outlines, ...coasts].map((row) => row.sha256);
+  return {
+    title: access.project.title,
+    version: state.sha256 === null ? `Draft, revision ${state.revision}` : `Version ${state.version}, sha256 ${shortHash(state.sha256)}`,
+    licence: access.project.licence,
+    date: day.format(new Date()),
+    model,
+    frame: { code: frame.code, name: frame.name },
+    blocks: state.blocks,
+    coasts,
+    geometryOf: await loadShapes(hashes),
+  };
+}
+
+function pathOf(subject: SliceSubject, query: SliceQuery): { name: string; points: ReturnType<typeof driftPath> } | null {
+  const { path_block: block, path_lat: lat, path_lon: lon, path_step_ma: step_ma } = query;
+  if (block === undefined || lat === undefined || lon === undefined) return null;
+  const span = { older_ma: Math.max(subject.model.oldest_ma, step_ma), younger_ma: 0, step_ma };
+  const points = driftPath(subject.model, { block, lat, lon, ...span, relative_to: subject.frame.code });
+  const name = subject.blocks.find((one) => one.code === block)?.name ?? block;
+  return { name: `${name} at ${coordinates(lat, lon)}`, points };
+}
