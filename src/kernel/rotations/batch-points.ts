@@ -67,7 +67,7 @@ export function reconstructPoints(
   const matrices = new Float64Array(9 * model.blocks.length);
   const ofBlocks = new Uint8Array(model.blocks.length);
   matricesAt(model, age_ma, relative_to, matrices, ofBlocks, options);
-  const [right, down] = direction === 'past' ? [1, 3] : [3, 1];
+  if (direction === 'present') transposeEach(matrices);
   for (let p = 0, i = 0; p < blockOf.length; p++, i += 3) {
     const block = blockOf[p]!;
     const status = ofBlocks[block];
@@ -76,11 +76,23 @@ export function reconstructPoints(
       xyzOut.fill(NaN, i, i + 3);
       continue;
     }
+    const m = 9 * block;
     const x = xyzIn[i]!;
     const y = xyzIn[i + 1]!;
     const z = xyzIn[i + 2]!;
-    for (let row = 0, m = 9 * block; row < 3; row++, m += down) {
-      xyzOut[i + row] = matrices[m]! * x + matrices[m + right]! * y + matrices[m + 2 * right]! * z;
-    }
+    xyzOut[i] = matrices[m]! * x + matrices[m + 1]! * y + matrices[m + 2]! * z;
+    xyzOut[i + 1] = matrices[m + 3]! * x + matrices[m + 4]! * y + matrices[m + 5]! * z;
+    xyzOut[i + 2] = matrices[m + 6]! * x + matrices[m + 7]! * y + matrices[m + 8]! * z;
+  }
+}
+
+function transposeEach(matrices: Float64Array): void {
+  const swap = (i: number, j: number): void => {
+    [matrices[i], matrices[j]] = [matrices[j]!, matrices[i]!];
+  };
+  for (let m = 0; m < matrices.length; m += 9) {
+    swap(m + 1, m + 3);
+    swap(m + 2, m + 6);
+    swap(m + 5, m + 7);
   }
 }

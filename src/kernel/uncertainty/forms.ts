@@ -1,6 +1,6 @@
 import { KernelError } from '../errors';
 import { type Covariance, type Matrix3 } from '../rotations/types';
-import { toDegrees, toRadians } from '../sphere/angles';
+import { acos, toDegrees, toRadians } from '../sphere/angles';
 import { CHI_SQUARE_2_95 } from './f-distribution';
 import { scaleCovariance, toSymmetric, trace } from './matrix3';
 
@@ -85,11 +85,13 @@ export function eigenvalues([xx, xy, xz, yy, yz, zz]: Covariance): [
   greatest: number,
 ] {
   const mean = (xx + yy + zz) / 3;
-  const [a, b, c] = [xx - mean, yy - mean, zz - mean];
-  const spread = Math.sqrt((a * a + b * b + c * c + 2 * (xy * xy + xz * xz + yz * yz)) / 6);
+  const off = xy * xy + xz * xz + yz * yz;
+  const spread = Math.sqrt(((xx - mean) ** 2 + (yy - mean) ** 2 + (zz - mean) ** 2 + 2 * off) / 6);
   if (spread === 0) return [mean, mean, mean];
-  const determinant = a * (b * c - yz * yz) - xy * (xy * c - yz * xz) + xz * (xy * yz - b * xz);
-  const angle = Math.acos(Math.min(1, Math.max(-1, determinant / (2 * spread ** 3)))) / 3;
+  const [a, b, c] = [(xx - mean) / spread, (yy - mean) / spread, (zz - mean) / spread];
+  const [d, e, f] = [xy / spread, xz / spread, yz / spread];
+  const determinant = a * (b * c - f * f) - d * (d * c - f * e) + e * (d * f - b * e);
+  const angle = acos(determinant / 2) / 3;
   const greatest = mean + 2 * spread * Math.cos(angle);
   const least = mean + 2 * spread * Math.cos(angle + (2 * Math.PI) / 3);
   return [least, 3 * mean - greatest - least, greatest];

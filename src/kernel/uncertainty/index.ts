@@ -1,4 +1,5 @@
 export * from './pose-uncertainty';
+export * from './stage-uncertainty';
 export * from './ellipse';
 export * from './shares';
 export * from './forms';
