@@ -72,6 +72,18 @@ export const speed = (mm_yr: number, digits = 0): string => `${number(mm_yr, dig
 /** A share of one as "24 %". */
 export const percent = (share: number, digits = 0): string => `${number(100 * share, digits)}${NBSP}%`;
 
+/** Shares of one as whole percents that add up to 100 (largest remainders). */
+export function percents(shares: readonly number[]): number[] {
+  const floors = shares.map((share) => Math.floor(100 * share));
+  const order = shares
+    .map((share, i) => ({ i, rest: 100 * share - (floors[i] ?? 0) }))
+    .sort((a, b) => b.rest - a.rest);
+  const left =
+    Math.round(100 * shares.reduce((sum, share) => sum + share, 0)) - floors.reduce((sum, n) => sum + n, 0);
+  for (const { i } of order.slice(0, left)) floors[i] = (floors[i] ?? 0) + 1;
+  return floors;
+}
+
 /** Semi-axes of a 95 % ellipse: "298 × 220 km (95 %)". */
 export function ellipse(semi_major_km: number, semi_minor_km: number): string {
   return `${number(semi_major_km)} × ${number(semi_minor_km)}${NBSP}km (95${NBSP}%)`;

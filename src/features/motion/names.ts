@@ -17,6 +17,9 @@ export function shortName(block: Named): string {
   return words.length > 1 && last === last.toLowerCase() ? words.slice(0, -1).join(' ') : block.name;
 }
 
+/** On the map "terrane", "block" and "microcontinent" go without saying; a craton, arc or plateau is named as one. */
+export const mapName = (block: Named): string => block.name.replace(/ (terrane|block|microcontinent)$/, '');
+
 /** "MK" for "Mara Kell". */
 export function initials(name: string): string {
   const words = name.trim().split(/\s+/);

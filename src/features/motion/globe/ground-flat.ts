@@ -3,9 +3,8 @@ import { geoGraticule, geoPath, type GeoProjection, type GeoStream } from 'd3-ge
 import { geoMollweide } from 'd3-geo-projection';
 import { meridian, parallel } from '../format';
 import { type PathSink } from './clip';
-import { type Ground, type GroundOptions } from './ground';
+import { type Figure, type Ground, type GroundOptions } from './ground';
 import { placeOf, vectorOf } from './matrix';
-import { font, haloText, type Pen } from './pen';
 import { levelFor, type Points, type Shape } from './shape';
 
 const MARGIN = 20;
@@ -40,9 +39,10 @@ function sinkStream(sink: PathSink): GeoStream {
     polygonStart: () => (inPolygon = true),
     polygonEnd: () => (inPolygon = false),
     sphere: () => undefined,
-  } as GeoStream;
+  };
 }
 
+const LONGITUDES = Array.from({ length: 12 }, (_, i) => 30 * i - 150);
 const DEGREES = 180 / Math.PI;
 
 /** Streams one part turned by its pose; d3-geo takes the inside to the right, so rings run backwards. */
@@ -80,22 +80,18 @@ export function flatGround(options: GroundOptions): Ground {
     for (const part of shape.levels[level] ?? []) streamPart(stream, part, pose, at, closed);
     if (closed) stream.polygonEnd();
   };
-  const labels = (pen: Pen) => {
-    pen.ctx.font = font(pen, 10.5);
-    pen.ctx.textBaseline = 'middle';
-    for (const lat of [60, 30, 0, -30, -60]) {
+  const figures = (scale: number): Figure[] => {
+    const parallels = [60, 30, 0, -30, -60].flatMap((lat): Figure[] => {
       const edge = projection([options.centre.lon - 179.9, lat]);
-      if (!edge || edge[0] < 4 * pen.scale) continue;
-      pen.ctx.textAlign = 'right';
-      haloText(pen, parallel(lat), edge[0] - 5 * pen.scale, edge[1], pen.palette['ink-3']);
-    }
-    pen.ctx.textAlign = 'center';
-    for (let lon = -150; lon <= 180; lon += 30) {
+      return edge ? [{ text: parallel(lat), x: edge[0] - 5 * scale, y: edge[1], align: 'right' }] : [];
+    });
+    const meridians = LONGITUDES.flatMap((lon): Figure[] => {
       const at = projection([lon, 0]);
       const { lon: away } = placeOf(vectorOf(0, lon - options.centre.lon));
-      if (at && Math.abs(away) < 165)
-        haloText(pen, meridian(lon), at[0], at[1] - 8 * pen.scale, pen.palette['ink-3']);
-    }
+      if (!at || Math.abs(away) > 165) return [];
+      return [{ text: meridian(lon), x: at[0], y: at[1] - 8 * scale, align: 'center' }];
+    });
+    return [...parallels, ...meridians];
   };
   return {
     width,
@@ -141,10 +137,11 @@ export function flatGround(options: GroundOptions): Ground {
     paintOver({ ctx, palette, scale }) {
       ctx.beginPath();
       geoPath(projection, ctx)({ type: 'Sphere' });
-      ctx.strokeStyle = palette.ink;
+      ctx.strokeStyle = palette.frame;
       ctx.lineWidth = 1.3 * scale;
       ctx.stroke();
     },
-    paintLabels: labels,
+    holds: () => true,
+    figures,
   };
 }

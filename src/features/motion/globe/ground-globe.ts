@@ -2,7 +2,7 @@
 import { type Clipper, type Disc } from './clip';
 import { type Ground, type GroundOptions } from './ground';
 import { multiply, turn, turnBack, viewMatrix, type Mat } from './matrix';
-import { paintDisc, paintGraticule, paintLimb, paintLimbLabels, paintMeridianLabels } from './paint-sphere';
+import { paintDisc, paintGraticule, paintLimb, paintLimbLabels, meridianFigures } from './paint-sphere';
 import { place, viewOf } from './pen';
 import { levelFor } from './shape';
 
@@ -16,6 +16,8 @@ export interface Look {
 
 /** Room around the limb for its labels, CSS pixels. */
 const MARGIN = 24;
+/** The same on a small canvas, where labels may be cut. */
+const SMALL = { side: 320, margin: 13 } as const;
 /** Points nearer to the limb than this (cosine of the angle to the viewer) are not marked. */
 const EDGE = 0.02;
 /** Error of the drawn level of detail, device pixels. */
@@ -24,7 +26,8 @@ const FINE = 0.3;
 
 export function discOf({ zoom, width, height, scale, fit }: GroundOptions): Disc {
   const half = Math.min(width, height) / 2;
-  const radius = (fit ? fit * half : Math.max(40, half - MARGIN)) * zoom * scale;
+  const radius =
+    (fit ? fit * half : Math.max(40, half - (2 * half < SMALL.side ? SMALL.margin : MARGIN))) * zoom * scale;
   return { cx: (width / 2) * scale, cy: (height / 2) * scale, radius };
 }
 
@@ -61,6 +64,7 @@ export function globeGround(options: GroundOptions, clipper: Clipper): Ground {
       paintLimb(pen, look);
       if (graticule) paintLimbLabels(pen, look);
     },
-    paintLabels: (pen) => paintMeridianLabels(pen, look),
+    holds: (x, y) => Math.hypot(x - disc.cx, y - disc.cy) <= disc.radius,
+    figures: (scale) => meridianFigures(look, scale),
   };
 }

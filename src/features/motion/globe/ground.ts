@@ -20,7 +20,17 @@ export interface Ground {
   paintUnder(pen: Pen, graticule: boolean): void;
   /** Limb or frame, with labels where the graticule is on. */
   paintOver(pen: Pen, graticule: boolean): void;
-  paintLabels(pen: Pen): void;
+  /** Whether a point of the canvas belongs to the picture. */
+  holds(x: number, y: number): boolean;
+  /** Figures of the graticule, to be drawn where nothing else stands. */
+  figures(scale: number): Figure[];
+}
+
+export interface Figure {
+  readonly text: string;
+  readonly x: number;
+  readonly y: number;
+  readonly align: 'center' | 'right';
 }
 
 export interface GroundOptions {

@@ -20,28 +20,45 @@ export interface LabelWish {
   readonly must?: boolean;
 }
 
-const overlap = (a: Box, b: Box): boolean =>
+/** A name that would stand on other blocks by more than this share is left out. */
+const MOST_COVERED = 0.5;
+
+export const overlap = (a: Box, b: Box): boolean =>
   a.x < b.x + b.w && b.x < a.x + a.w && a.y < b.y + b.h && b.y < a.y + a.h;
 
-/** Index of each label's place, by key; a label without room is left out. */
+const shared = (a: Box, b: Box): number =>
+  Math.max(0, Math.min(a.x + a.w, b.x + b.w) - Math.max(a.x, b.x)) *
+  Math.max(0, Math.min(a.y + a.h, b.y + b.h) - Math.max(a.y, b.y));
+
+/**
+ * Index of each label's place, by key; a label without room is left out. `soft` boxes (other blocks) may be covered,
+ * but of the free places the one that covers least of them is taken.
+ */
 export function placeLabels(
   wishes: readonly LabelWish[],
   obstacles: readonly Box[],
-  bounds: Box,
+  fits: (box: Box) => boolean,
   last: ReadonlyMap<string, number> = new Map(),
+  soft: readonly (Box & { readonly key: string })[] = [],
 ): Map<string, number> {
   const taken = [...obstacles];
   const placed = new Map<string, number>();
-  const inside = ({ x, y, w, h }: Box) =>
-    x >= bounds.x && y >= bounds.y && x + w <= bounds.x + bounds.w && y + h <= bounds.y + bounds.h;
   for (const wish of [...wishes].sort((a, b) => a.priority - b.priority)) {
     const before = last.get(wish.key);
     const order = wish.places.map((_, i) => i);
     if (before !== undefined && before < order.length) order.unshift(...order.splice(before, 1));
-    const free = order.find((i) => {
-      const box = wish.places[i] as Box;
-      return inside(box) && !taken.some((other) => overlap(box, other));
-    });
+    const covered = (box: Box) =>
+      soft.reduce((sum, other) => sum + (other.key === wish.key ? 0 : shared(box, other)), 0) /
+      (box.w * box.h);
+    const free = order
+      .filter((i) => {
+        const box = wish.places[i] as Box;
+        return fits(box) && !taken.some((other) => overlap(box, other));
+      })
+      .map((i) => ({ i, cost: covered(wish.places[i] as Box) }))
+      .filter(({ cost }) => wish.must || cost < MOST_COVERED)
+      // What covers little is as good as free; the sort is stable, so the wish's own order decides.
+      .sort((a, b) => Math.max(0.1, a.cost) - Math.max(0.1, b.cost))[0]?.i;
     const index = free ?? (wish.must ? 0 : undefined);
     const box = index === undefined ? undefined : wish.places[index];
     if (index === undefined || !box) continue;

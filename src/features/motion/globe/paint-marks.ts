@@ -32,7 +32,7 @@ function arrow({ ctx, scale }: Pen, [x1, y1]: XY, [x2, y2]: XY): void {
   const length = Math.hypot(x2 - x1, y2 - y1);
   if (length < 0.5 * scale) return;
   const [ux, uy] = [(x2 - x1) / length, (y2 - y1) / length];
-  const head = Math.min(5.5 * scale, Math.max(2.5 * scale, length * 0.45));
+  const head = Math.min(5.5 * scale, Math.max(2 * scale, length * 0.3));
   ctx.beginPath();
   ctx.moveTo(x1, y1);
   ctx.lineTo(x2, y2);
@@ -41,7 +41,7 @@ function arrow({ ctx, scale }: Pen, [x1, y1]: XY, [x2, y2]: XY): void {
   ctx.lineTo(x2 - ux * head + uy * head * 0.42, y2 - uy * head - ux * head * 0.42);
   ctx.stroke();
   ctx.beginPath();
-  ctx.arc(x1, y1, 1.1 * scale, 0, 2 * Math.PI);
+  ctx.arc(x1, y1, 1 * scale, 0, 2 * Math.PI);
   ctx.fill();
 }
 

@@ -1,5 +1,6 @@
 /** Names of blocks: inside where there is room, beside where there is not, on two lines near the limb. */
 import { type Extent } from './block-extent';
+import { type Kept } from './paint-track';
 import { placeLabels, type Box, type LabelWish } from './labels';
 import { font, haloText, type Pen } from './pen';
 
@@ -51,7 +52,13 @@ function settings(pen: Pen, { name, extent, selected }: NameWish): Setting[] {
     at(one, extent.x + room / 6, extent.y + tall / 4),
   ];
   const narrow = [at(two, extent.x, extent.y), at(two, extent.x, extent.y + tall / 6)];
-  if (selected) return [...beside.slice(1), beside[0] as Setting, ...within];
+  if (selected) {
+    const flush = [extent.left + w1 / 2, extent.right - w1 / 2].flatMap((x) => [
+      at(one, x, extent.top - gap),
+      at(one, x, extent.bottom + gap),
+    ]);
+    return [...beside.slice(1, 4), ...flush, beside[0] as Setting, ...beside.slice(4), ...within];
+  }
   if (w1 < room * 0.8 && tall > 3 * LINE * scale) return [...within, ...beside];
   if (width(two) < room * 0.9 && tall > 4 * LINE * scale) return [...narrow, ...beside];
   return [...beside, ...narrow];
@@ -61,8 +68,8 @@ function settings(pen: Pen, { name, extent, selected }: NameWish): Setting[] {
 export function paintNames(
   pen: Pen,
   wishes: readonly NameWish[],
-  obstacles: readonly Box[],
-  bounds: Box,
+  { clear, avoid }: Kept,
+  fits: (box: Box) => boolean,
   memory: Map<string, number>,
 ): Box[] {
   const { ctx, palette, scale } = pen;
@@ -73,7 +80,11 @@ export function paintNames(
     places: (set.get(wish.key) ?? []).map(({ box }) => box),
     must: wish.selected,
   }));
-  const placed = placeLabels(labels, obstacles, bounds, memory);
+  const others = wishes.map(({ key, extent: { left, right, top, bottom } }) => {
+    return { key, x: left, y: top, w: right - left, h: bottom - top };
+  });
+  const soft = [...others, ...avoid.map((box) => ({ ...box, key: '' }))];
+  const placed = placeLabels(labels, clear, fits, memory, soft);
   memory.clear();
   for (const [key, index] of placed) memory.set(key, index);
   ctx.textAlign = 'center';

@@ -2,8 +2,9 @@
 import { meridian, parallel } from '../format';
 import { equator, graticule } from './graticule';
 import { turn, vectorOf } from './matrix';
+import { type Figure } from './ground';
 import { type Look } from './ground-globe';
-import { font, haloText, place, type Pen } from './pen';
+import { font, place, type Pen } from './pen';
 
 /** Distance between the limb's two circles, CSS pixels. */
 export const RING = 5;
@@ -36,7 +37,7 @@ export function paintGraticule(pen: Pen, { disc, view }: Look, all: boolean): vo
 export function paintLimb(pen: Pen, look: Look): void {
   const { ctx, palette, scale } = pen;
   const { disc } = look;
-  ctx.strokeStyle = palette.ink;
+  ctx.strokeStyle = palette.frame;
   ctx.lineWidth = 1.3 * scale;
   ctx.beginPath();
   ctx.arc(disc.cx, disc.cy, disc.radius, 0, 2 * Math.PI);
@@ -91,16 +92,14 @@ export function paintLimbLabels(pen: Pen, { disc, view, width, height }: Look): 
   }
 }
 
-/** Longitudes along the equator, which blocks may cover. */
-export function paintMeridianLabels(pen: Pen, { disc, view }: Look): void {
-  const { ctx, palette, scale } = pen;
-  ctx.font = font(pen, 10.5);
-  ctx.textBaseline = 'bottom';
-  ctx.textAlign = 'center';
-  for (let lon = -150; lon <= 180; lon += 30) {
+/** Longitudes along the equator. */
+export function meridianFigures({ disc, view }: Look, scale: number): Figure[] {
+  return LONGITUDES.flatMap((lon) => {
     const v = turn(view, vectorOf(0, lon));
-    if (v[2] < 0.3) continue;
+    if (v[2] < 0.3) return [];
     const [x, y] = place(disc, v);
-    haloText(pen, meridian(lon), x, y - 3 * scale, palette['ink-3']);
-  }
+    return [{ text: meridian(lon), x, y: y - 9 * scale, align: 'center' as const }];
+  });
 }
+
+const LONGITUDES = Array.from({ length: 12 }, (_, i) => 30 * i - 150);

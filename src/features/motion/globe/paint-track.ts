@@ -6,6 +6,12 @@ import { type Box } from './labels';
 import { type Ground } from './ground';
 import { dash, font, haloText, type Pen, type XY } from './pen';
 
+/** What names must not cover, and what they should keep off. */
+export interface Kept {
+  readonly clear: readonly Box[];
+  readonly avoid: readonly Box[];
+}
+
 interface Seen {
   readonly point: TrackPoint;
   readonly at: XY | null;
@@ -13,10 +19,10 @@ interface Seen {
 
 const TICK = 5.5;
 /** Least distance between two labelled ages, CSS pixels. */
-const LABEL_GAP = 26;
+const LABEL_GAP = 20;
 
 /** `ellipses` where that layer is on. Answers what the path covers, for the names to keep clear of. */
-export function paintTrack(pen: Pen, ground: Ground, track: Track, age: number, ellipses: boolean): Box[] {
+export function paintTrack(pen: Pen, ground: Ground, track: Track, age: number, ellipses: boolean): Kept {
   const seen = track.points.map((point): Seen => ({ point, at: ground.at(point.v) }));
   const older = seen.filter(({ point }) => point.age >= age);
   const younger = seen.filter(({ point }) => point.age <= age);
@@ -30,7 +36,15 @@ export function paintTrack(pen: Pen, ground: Ground, track: Track, age: number, 
   dash(pen, []);
   ctx.lineWidth = 1.2 * scale;
   ticks(pen, seen, track.tick);
-  return labels(pen, ground, older, track.tick, age, ellipses);
+  return { clear: labels(pen, ground, older, track.tick, age, ellipses), avoid: along(seen, scale) };
+}
+
+/** Small boxes along the path, so that names keep off it. */
+function along(seen: readonly Seen[], scale: number): Box[] {
+  const half = 3 * scale;
+  return seen.flatMap(({ at }, i) =>
+    at && i % 4 === 0 ? [{ x: at[0] - half, y: at[1] - half, w: 2 * half, h: 2 * half }] : [],
+  );
 }
 
 /** Broken where it goes out of sight or over the seam of a map. */

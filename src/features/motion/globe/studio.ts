@@ -1,6 +1,7 @@
 /** Paints a picture on two canvases, what stands below and what is marked on top, and keeps what both use again. */
 import { arrowsAt } from '../scene/arrows';
 import { matrixOf, type Frame } from '../scene/frame';
+import { mapName } from '../names';
 import { holdsAt, outlineAt } from '../scene/scene';
 import { extentOf } from './block-extent';
 import { Clipper } from './clip';
@@ -11,6 +12,7 @@ import { type Box } from './labels';
 import { turn, vectorOf } from './matrix';
 import { paintBlocks, paintLines } from './paint-blocks';
 import { paintArrows, paintCursor, paintPlaceName, paintSeparation } from './paint-marks';
+import { paintFigures } from './paint-figures';
 import { paintNames } from './paint-names';
 import { ellipse, paintPoint, paintTrack } from './paint-track';
 import { type Palette } from './palette';
@@ -49,16 +51,17 @@ export class Studio {
     ctx.clearRect(0, 0, ground.width, ground.height);
     this.outlineSelected(pen, ground, picture);
     if (!off.has('velocity') && frame.age > 0) paintArrows(pen, ground, arrowsAt(visible(picture), frame));
-    if (!off.has('graticule')) ground.paintLabels(pen);
     const taken: Box[] = [];
     if (separation && !off.has('separation')) taken.push(...paintSeparation(pen, ground, separation));
-    if (track && !off.has('path'))
-      taken.push(...paintTrack(pen, ground, track, frame.age, !off.has('ellipse')));
+    const path =
+      track && !off.has('path') ? paintTrack(pen, ground, track, frame.age, !off.has('ellipse')) : null;
+    taken.push(...(path?.clear ?? []));
     taken.push(...this.paintSelectedPoint(pen, ground, picture));
     if (!off.has('names')) {
-      taken.push(...paintPlaces(pen, ground, picture));
-      this.paintBlockNames(pen, ground, picture, taken);
+      if (!picture.shortNames) taken.push(...paintPlaces(pen, ground, picture));
+      taken.push(...this.paintBlockNames(pen, ground, picture, taken, path?.avoid ?? []));
     }
+    if (!off.has('graticule')) paintFigures(pen, ground, taken);
     if (cursor) paintCursor(pen, ground, cursor);
   }
 
@@ -103,19 +106,31 @@ export class Studio {
     return [{ x: at[0] - r, y: at[1] - r, w: 2 * r, h: 2 * r }];
   }
 
-  private paintBlockNames(pen: Pen, ground: Ground, picture: Picture, taken: readonly Box[]): void {
+  private paintBlockNames(
+    pen: Pen,
+    ground: Ground,
+    picture: Picture,
+    taken: readonly Box[],
+    avoid: readonly Box[],
+  ): Box[] {
     const { frame, selected, shortNames } = picture;
     const wishes = visible(picture).blocks.flatMap((block) => {
       const shape = outlineAt(block, frame.age);
       const pose = matrixOf(frame, block.code);
       const extent = shape && pose && extentOf(shape, pose, 0, ground);
       if (!extent || extent.right - extent.left < 12 * pen.scale) return [];
-      const name = shortNames && block.code !== selected ? block.short : block.name;
+      const name = block.code === selected ? block.name : shortNames ? block.short : mapName(block);
       return [{ key: block.code, name, extent, selected: block.code === selected }];
     });
-    const bounds = { x: 0, y: 0, w: ground.width, h: ground.height };
-    paintNames(pen, wishes, taken, bounds, this.memory);
+    return paintNames(pen, wishes, { clear: taken, avoid }, (box) => fits(ground, box), this.memory);
   }
+}
+
+/** On the canvas, and not hanging over the limb by more than a few letters. */
+function fits(ground: Ground, { x, y, w, h }: Box): boolean {
+  const onCanvas = x >= 0 && y >= 0 && x + w <= ground.width && y + h <= ground.height;
+  const middle = y + h / 2;
+  return onCanvas && [0.15, 0.85].every((share) => ground.holds(x + share * w, middle));
 }
 
 const apart = (age: number, frame: Frame): number => Math.abs(age - frame.age);

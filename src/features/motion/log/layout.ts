@@ -20,6 +20,8 @@ export interface LogLayout {
 }
 
 export const HEAD = 85;
+/** Of a lone strip on a phone: title and unit on one line. */
+export const COMPACT_HEAD = 62;
 const BELOW_HEAD = 7;
 const FOOT = 12;
 const AGE = 88;
@@ -42,7 +44,7 @@ export function layoutOf({ width, height, oldest, head = HEAD, links, strips }: 
   const others = strips.filter((id) => id !== 'age');
   const fixed: Partial<Record<StripId, number>> = {
     age: AGE,
-    rotations: Math.min(room / 2, LINK_MARGIN + LINK_PITCH * Math.max(2, links)),
+    rotations: Math.min(room / 2, LINK_MARGIN + LINK_PITCH * Math.max(3, links)),
     speed: Math.min(SPEED.most, Math.max(SPEED.least, SPEED.share * width)),
   };
   if (others.length === 1 && others[0]) fixed[others[0]] = room;

@@ -1,5 +1,5 @@
 /** Where the selected point is at an age, how surely, and through which rotations. */
-import { poseAt, toPole, type PlacedPose } from '../../../kernel/rotations';
+import { poseAt, toPole } from '../../../kernel/rotations';
 import { toLatLon, toVector } from '../../../kernel/sphere';
 import { rotate } from '../../../kernel/rotations/quaternion';
 import { pointEllipse, poseUncertainty, shares, type Ellipse } from '../../../kernel/uncertainty';
@@ -52,7 +52,7 @@ export function answerAt(
     placed: true,
     lat,
     lon,
-    ellipse: pointEllipse(pose as PlacedPose, uncertainty, present),
+    ellipse: pointEllipse(pose, uncertainty, present),
     rows: pose.links.map((link, i) => rowOf(link, parts.links[i] ?? 0, without)),
   };
 }

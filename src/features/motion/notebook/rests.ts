@@ -2,7 +2,7 @@
 import { handOverJumps, jumpKm, poseAt } from '../../../kernel/rotations';
 import { toVector } from '../../../kernel/sphere';
 import { type Model, type ModelProblem } from '../../../kernel/rotations/types';
-import { ageValue, kilometres, list, number, shortAge } from '../format';
+import { ageValue, kilometres, list, NBSP, number, shortAge } from '../format';
 import { type Observed } from '../log/observed';
 import { latitudeAt } from '../log/series';
 import { type NamedPoint } from '../scene/points';
@@ -67,24 +67,37 @@ function jumps(model: Model, { block, lat, lon }: NamedPoint, nameOf: (code: str
     });
 }
 
-/** A row without covariance makes the ages up to its neighbours "at least". */
+/** Rows without covariance make the ages up to their neighbours "at least"; neighbouring rows are named together. */
 function gaps(model: Model, circuit: ReadonlySet<string>, nameOf: (code: string) => string): Remark[] {
   return model.blocks
     .filter(({ code }) => circuit.has(code))
     .flatMap(({ code, legs }) =>
-      legs.flatMap(({ rows }) =>
-        rows.flatMap((row, i): Remark[] => {
-          if (row.covariance !== null || row.implied || row.age_ma === 0) return [];
-          const [younger, older] = [rows[i - 1] ?? row, rows[i + 1] ?? row];
-          return [
-            {
-              severity: 'note',
-              words: `${nameOf(code)}, row ${ageValue(row.age_ma)}, carries no covariance: ages ${shortAge(younger.age_ma)}–${shortAge(older.age_ma)} read “at least”.`,
-            },
-          ];
-        }),
-      ),
+      legs.flatMap(({ rows }) => bareRuns(rows).map((run) => bareWords(nameOf(code), rows, run))),
     );
+}
+
+type Rows = Model['blocks'][number]['legs'][number]['rows'];
+
+/** First and last index of each run of rows without covariance. */
+function bareRuns(rows: Rows): [first: number, last: number][] {
+  const runs: [number, number][] = [];
+  rows.forEach((row, i) => {
+    if (row.covariance !== null || row.implied || row.age_ma === 0) return;
+    const run = runs[runs.length - 1];
+    if (run && run[1] === i - 1) run[1] = i;
+    else runs.push([i, i]);
+  });
+  return runs;
+}
+
+function bareWords(name: string, rows: Rows, [first, last]: [number, number]): Remark {
+  const age = (i: number) => rows[i]?.age_ma ?? 0;
+  const which =
+    first === last
+      ? `row ${ageValue(age(first))}, carries`
+      : `rows ${ageValue(age(first))} to ${ageValue(age(last))}, carry`;
+  const span = `${shortAge(age(Math.max(0, first - 1)))}–${shortAge(age(Math.min(rows.length - 1, last + 1)))}`;
+  return { severity: 'note', words: `${name}, ${which} no covariance: ages ${span} read “at least”.` };
 }
 
 /** Sediments whose limits miss the predicted latitude, with the flattening that would explain it: tan I = f tan I′. */
@@ -98,7 +111,7 @@ function shallow(model: Model, point: NamedPoint, frame: string, observed: reado
     return [
       {
         severity: 'note',
-        words: `${datum.site}, ${ageValue(datum.age)} Ma: inclination reads shallow, f = ${number(f, 2)}.`,
+        words: `${datum.site}, ${ageValue(datum.age)} Ma: inclination reads shallow, f${NBSP}=${NBSP}${number(f, 2)}.`,
       },
     ];
   });

@@ -15,8 +15,8 @@ export interface Arrow {
 }
 
 const EARTH_KM = 6371.0088;
-/** Points of the whole sphere that feet are taken from; about 9 degrees apart. */
-const LATTICE = fibonacci(520);
+/** Points of the whole sphere that feet are taken from; about 13 degrees apart. */
+const LATTICE = fibonacci(260);
 const feet = new WeakMap<Shape, readonly Vec[]>();
 
 /** A spiral that spreads n points evenly over the sphere (common practice, no source). */

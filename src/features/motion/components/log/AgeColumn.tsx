@@ -6,7 +6,9 @@ import { axisStep } from '../../scene/scene';
 const PERIOD = { x: 38, width: 24 } as const;
 const EPOCH = { x: 62, width: 18 } as const;
 /** Room a name needs along the column, pixels to a letter. */
-const LETTER = 5.4;
+const LETTER = 5.1;
+/** Ticks to a labelled step. */
+const MINOR = 4;
 const SHORT: Record<string, string> = { Oligocene: 'Oligo.', Paleocene: 'Paleo.', Pleistocene: 'Pleist.' };
 
 /** "Late Cretaceous" reads "Late" beside its period. */
@@ -25,8 +27,7 @@ export function AgeColumn({
   const { oldest, head } = layout;
   const step = axisStep(oldest);
   const shift = strip.x - (compact ? 4 : 0);
-  const label = step * 2;
-  const ages = Array.from({ length: Math.floor(oldest / (step / 2)) + 1 }, (_, i) => (i * step) / 2);
+  const ages = Array.from({ length: Math.floor((oldest / step) * MINOR) + 1 }, (_, i) => (i * step) / MINOR);
   return (
     <g
       transform={`translate(${shift} 0)`}
@@ -39,11 +40,11 @@ export function AgeColumn({
       <text x={12} y={35} className="t-label fill-ink-2">
         Ma
       </text>
-      {head > 70 && (
-        <text x={12} y={54} className="t-label fill-ink-2">
+      {
+        <text x={12} y={Math.min(54, head - 8)} className="t-tick fill-ink-2">
           {CHRONOSTRATIGRAPHIC_CHART.edition}
         </text>
-      )}
+      }
       {(['period', 'epoch'] as const).map((rank) => (
         <Units
           key={rank}
@@ -61,18 +62,18 @@ export function AgeColumn({
       />
       {ages.map((age) => {
         const y = yOf(layout, age);
-        const long = age % step === 0;
+        const length = age % step === 0 ? 6 : age % (step / 2) === 0 ? 5 : 3;
         return (
           <g key={age}>
             <line
-              x1={PERIOD.x - (long ? 6 : 4)}
+              x1={PERIOD.x - length}
               x2={PERIOD.x}
               y1={y}
               y2={y}
               className="stroke-ink"
               strokeWidth=".8"
             />
-            {age % label === 0 && (
+            {age % step === 0 && (
               <text x={PERIOD.x - 9} y={y + 3.8} textAnchor="end" className="t-label tabular fill-ink">
                 {age}
               </text>
@@ -97,7 +98,7 @@ function Units({ layout, units, x, width }: UnitsProps) {
     const y2 = yOf(layout, Math.min(layout.oldest, unit.older_ma));
     const name = unit.rank === 'epoch' ? epochName(unit.name) : unit.name;
     const text = [name, SHORT[name]].find(
-      (candidate) => candidate && candidate.length * LETTER + 6 < y2 - y1,
+      (candidate) => candidate && candidate.length * LETTER + 2 < y2 - y1,
     );
     const ink = unit.name === 'Triassic' ? 'fill-white' : 'fill-[#1C2530]';
     return (
@@ -115,7 +116,7 @@ function Units({ layout, units, x, width }: UnitsProps) {
           <text
             transform={`translate(${x + width / 2 + 3.6} ${(y1 + y2) / 2}) rotate(-90)`}
             textAnchor="middle"
-            className={`t-tick ${ink}`}
+            className={`text-[9.5px] ${ink}`}
           >
             {text}
           </text>

@@ -1,7 +1,7 @@
 /** The ruled ground of a strip: its heading, the grid of ages, and a value axis along the top. */
 import { type ReactNode } from 'react';
 import { number } from '../../format';
-import { yOf, type LogLayout, type Strip } from '../../log/layout';
+import { HEAD, yOf, type LogLayout, type Strip } from '../../log/layout';
 import { axisStep } from '../../scene/scene';
 
 export interface ValueAxis {
@@ -25,6 +25,19 @@ export function plotOf(strip: Strip, { from, to }: ValueAxis): Plot {
   return { left, right, x: (value) => left + ((value - from) / (to - from)) * (right - left) };
 }
 
+/** On one line where the headings are low. */
+export function StripTitle({ layout, title, unit }: { layout: LogLayout; title: string; unit: ReactNode }) {
+  const low = layout.head < HEAD;
+  return (
+    <text x={6} y={20} className="t-head fill-ink">
+      {title}
+      <tspan {...(low ? { dx: 8 } : { x: 6, dy: 15 })} className="t-label fill-ink-2 [font-weight:400]">
+        {unit}
+      </tspan>
+    </text>
+  );
+}
+
 interface Props {
   readonly layout: LogLayout;
   readonly strip: Strip;
@@ -42,12 +55,7 @@ export function StripAxes({ layout, strip, title, unit, axis, children }: Props)
   const ages = Array.from({ length: Math.floor(oldest / (step / 2)) + 1 }, (_, i) => (i * step) / 2);
   return (
     <g transform={`translate(${strip.x} 0)`} role="group" aria-label={title}>
-      <text x={6} y={20} className="t-head fill-ink">
-        {title}
-      </text>
-      <text x={6} y={35} className="t-label fill-ink-2">
-        {unit}
-      </text>
+      <StripTitle layout={layout} title={title} unit={unit} />
       {ages.map((age) => (
         <line
           key={age}
@@ -68,7 +76,12 @@ export function StripAxes({ layout, strip, title, unit, axis, children }: Props)
               y2={bottom}
               className={value === 0 ? 'stroke-grid-2' : 'stroke-grid'}
             />
-            <text x={plot.x(value)} y={head - 6} textAnchor="middle" className="t-tick tabular fill-ink-2">
+            <text
+              x={plot.x(value)}
+              y={head - 6}
+              textAnchor={plot.x(value) < 14 ? 'start' : plot.x(value) > strip.width - 14 ? 'end' : 'middle'}
+              className="t-tick tabular fill-ink-2"
+            >
               {number(value)}
             </text>
           </g>

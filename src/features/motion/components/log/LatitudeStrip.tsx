@@ -3,7 +3,7 @@ import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
 import { type Observed } from '../../log/observed';
 import { type LatitudeSample } from '../../log/series';
-import { yOf, type LogLayout, type Strip } from '../../log/layout';
+import { HEAD, yOf, type LogLayout, type Strip } from '../../log/layout';
 import { plotOf, StripAxes, StripNote, type ValueAxis } from './Axes';
 
 interface Props {
@@ -42,13 +42,15 @@ export const LatitudeStrip = memo(function LatitudeStrip({
   const y = (age: number) => yOf(layout, age);
   return (
     <StripAxes layout={layout} strip={strip} title="Latitude" unit={`${subject}, °N`} axis={axis}>
-      <Legend />
+      <g transform={`translate(0 ${layout.head < HEAD ? -15 : 0})`}>
+        <Legend observed={observed.length > 0} />
+      </g>
       {curve.map((run, i) => (
         <g key={i}>
           <path d={band(run, x, y)} className="fill-ochre-band" />
-          {edges(run, x, y).map(({ d, atLeast }) => (
+          {edges(run, x, y).map(({ d, atLeast }, k) => (
             <path
-              key={d}
+              key={k}
               d={d}
               className="stroke-ochre fill-none"
               strokeWidth=".7"
@@ -124,7 +126,7 @@ function Datum({ datum, x, y }: { datum: Observed; x: Scale; y: Scale }) {
   );
 }
 
-function Legend() {
+function Legend({ observed }: { observed: boolean }) {
   return (
     <g aria-hidden="true">
       <rect x={6} y={46} width={16} height={8} className="fill-ochre-band" />
@@ -132,10 +134,14 @@ function Legend() {
       <text x={27} y={54} className="t-tick fill-ink-2">
         predicted
       </text>
-      <path d="M84 50h16M84 47.5v5M100 47.5v5" className="stroke-ink" strokeWidth=".85" />
-      <circle cx={92} cy={50} r="2.7" className="fill-ink" />
-      <text x={105} y={54} className="t-tick fill-ink-2">
-        observed
+      {observed && (
+        <>
+          <path d="M84 50h16M84 47.5v5M100 47.5v5" className="stroke-ink" strokeWidth=".85" />
+          <circle cx={92} cy={50} r="2.7" className="fill-ink" />
+        </>
+      )}
+      <text x={observed ? 105 : 84} y={54} className="t-tick fill-ink-2">
+        {observed ? 'observed' : 'no directions here'}
       </text>
     </g>
   );

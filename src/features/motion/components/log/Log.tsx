@@ -58,6 +58,14 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST }: Props) {
   const reach = oldestHere === null ? null : shortAge(oldestHere);
   const isOutside = useWorkbench(({ age }) => oldestHere !== null && age > oldestHere);
 
+  const beyond = useMemo(
+    () =>
+      oldestHere === null || isOutside
+        ? null
+        : { age: oldestHere, words: `no rotations older than ${shortAge(oldestHere)} Ma` },
+    [oldestHere, isOutside],
+  );
+
   const links = columns.length;
   const layout = useMemo(
     () => layoutOf({ width, height, oldest, head, links, strips }),
@@ -116,9 +124,7 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST }: Props) {
             curve={curve}
             observed={observed}
             subject={subject}
-            beyond={
-              oldestHere === null ? null : { age: oldestHere, words: `no rotations older than ${reach} Ma` }
-            }
+            beyond={beyond}
           />
         )}
         {speed && (

@@ -2,7 +2,7 @@
 import { useState } from 'react';
 import { Tabs } from '../../../../components/ui/Tabs';
 import { toggleTables } from '../../store/actions';
-import { type StripId } from '../../log/layout';
+import { COMPACT_HEAD, type StripId } from '../../log/layout';
 import { useBench, useWorkbench } from '../bench';
 import { Jump } from '../help/Jump';
 import { PHONE, useMedia } from '../use-media';
@@ -34,8 +34,8 @@ export function LogPanel() {
           onChange={setStrip}
           className="grow"
         >
-          <div className="h-[420px]">
-            <Log strips={shown} first={{ width: 360, height: 420 }} />
+          <div className="h-[300px]">
+            <Log strips={shown} head={COMPACT_HEAD} first={{ width: 360, height: 300 }} />
           </div>
         </Tabs>
       ) : (

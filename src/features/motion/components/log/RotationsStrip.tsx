@@ -1,5 +1,6 @@
 /** Rotations: a column for each link, as rock fills a log; the two rows in use are ochre. */
 import { memo } from 'react';
+import { StripTitle } from './Axes';
 import { type Column } from '../../log/columns';
 import { LINK_PITCH, yOf, type LogLayout, type Strip } from '../../log/layout';
 
@@ -26,12 +27,7 @@ export const RotationsStrip = memo(function RotationsStrip({
   const pitch = Math.min(LINK_PITCH, (strip.width - 14) / Math.max(1, columns.length));
   return (
     <g transform={`translate(${strip.x} 0)`} role="group" aria-label={`Rotations, ${subject}`}>
-      <text x={6} y={20} className="t-head fill-ink">
-        Rotations
-      </text>
-      <text x={6} y={35} className="t-label fill-ink-2">
-        {subject}
-      </text>
+      <StripTitle layout={layout} title="Rotations" unit={subject} />
       {columns.map((column, i) => (
         <ColumnOf key={column.block} layout={layout} column={column} x={FIRST + i * pitch} nameOf={nameOf} />
       ))}

@@ -8,7 +8,7 @@ import {
   latitude,
   longitude,
   number,
-  percent,
+  percents,
 } from '../../format';
 import { observedOn } from '../../log/observed';
 import { answerAt, type Answer, type LinkRow } from '../../notebook/answer';
@@ -74,6 +74,7 @@ function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
   const whole = rows.reduce((sum, { share }) => sum + share, 0);
   const widths = rows.map(({ share }) => (whole > 0 ? share / whole : 1 / rows.length));
   const starts = widths.map((_, i) => widths.slice(0, i).reduce((sum, w) => sum + w, 0));
+  const parts = percents(widths);
   const pc = (x: number) => `${(100 * x).toFixed(2)}%`;
   return (
     <svg
@@ -81,7 +82,7 @@ function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
       height="52"
       className="mt-2 block overflow-visible"
       role="img"
-      aria-label={`Shares of the uncertainty: ${rows.map((row, i) => `${nameOf(row.block)} ${percent(widths[i] ?? 0)}`).join(', ')}`}
+      aria-label={`Shares of the uncertainty: ${rows.map((row, i) => `${nameOf(row.block)} ${`${parts[i] ?? 0} %`}`).join(', ')}`}
     >
       {rows.map((row, i) => {
         const [start, width] = [starts[i] ?? 0, widths[i] ?? 0];
@@ -97,11 +98,11 @@ function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
               strokeWidth=".8"
             />
             <line x1={pc(start)} x2={pc(start)} y1="14" y2="34" className="stroke-ink" strokeWidth="1.2" />
-            {(width > 0.1 || i === 0) && (
+            {width > 0.1 && (
               <text
                 x={pc(start)}
                 y="10"
-                textAnchor={i === 0 ? 'start' : 'middle'}
+                textAnchor={start < 0.02 ? 'start' : 'middle'}
                 className="t-label fill-ink font-medium"
               >
                 {nameOf(row.block)}
@@ -114,7 +115,7 @@ function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
                 textAnchor="middle"
                 className="t-label tabular fill-ink-2"
               >
-                {whole > 0 ? percent(width) : 'not known'}
+                {whole > 0 ? `${parts[i] ?? 0} %` : 'not known'}
               </text>
             )}
           </g>

@@ -50,7 +50,9 @@ export function HeldStillCell({ compact = false }: { compact?: boolean }) {
       {compact ? (
         <>
           <span className="t-body text-ink-2">Held still</span>
-          <span className="t-value">{block?.short ?? heldStill}</span>
+          <span className="t-value">
+            {block ? (block.kind === 'frame' ? block.name : block.short) : heldStill}
+          </span>
         </>
       ) : (
         <Value label="Held still" list>
@@ -71,7 +73,7 @@ export function epochOf(age: number): string {
 function AgeCell() {
   const age = useWorkbench((state) => state.age);
   return (
-    <div className={`${CELL} w-[200px] max-xl:w-auto`}>
+    <div className={`${CELL} min-w-[200px] max-xl:min-w-0`}>
       <span className="t-label text-ink-2 block">Age</span>
       <span className="t-value flex items-center gap-2 whitespace-nowrap">
         <AgeField /> <Detail>{epochOf(age)}</Detail>
@@ -112,7 +114,7 @@ function SelectedCell() {
 
 export function TitleBlock({ head }: { readonly head: Head }) {
   return (
-    <header className="border-frame flex h-[52px] items-stretch border-b-[1.5px] max-md:hidden">
+    <header className="border-frame flex h-[52px] shrink-0 items-stretch border-b-[1.5px] max-md:hidden">
       <div className="border-rule flex items-center border-r px-5 max-lg:hidden">
         <a href={head.home} className="font-serif text-[18px] leading-6 font-semibold tracking-[-0.01em]">
           Driftwright
