@@ -1,5 +1,5 @@
 /** One time slice on paper: the page as it will print in the middle, what is on it to the right, files below. */
-import { useDeferredValue, useEffect, useState } from 'react';
+import { useDeferredValue, useEffect, useRef, useState } from 'react';
 import { sliceHref, sliceSearch, type SliceSettings } from '../address';
 import { CaptionControls, LayerControls, MapControls, PageControls, PathControls, type Choice } from './PrintControls';
 
@@ -66,7 +66,11 @@ interface PreviewProps {
 function Preview({ href, pending, settings }: PreviewProps) {
   const [state, setState] = useState<'drawing' | 'shown' | 'failed'>('drawing');
   const [problem, setProblem] = useState('');
-  useEffect(() => setState('drawing'), [href]);
+  const image = useRef<HTMLImageElement>(null);
+  useEffect(() => {
+    // A page that was in the HTML may have been drawn before this ran.
+    setState(image.current?.complete && image.current.naturalWidth > 0 ? 'shown' : 'drawing');
+  }, [href]);
   const explain = async (): Promise<void> => {
     setState('failed');
     const answer = await fetch(href);
@@ -85,6 +89,7 @@ function Preview({ href, pending, settings }: PreviewProps) {
         </p>
       ) : null}
       <img
+        ref={image}
         src={href}
         alt={`Time slice at ${settings.age_ma} Ma`}
         className={`max-h-[78dvh] max-w-full border border-rule-2 bg-white ${state === 'failed' ? 'hidden' : ''}`}

@@ -31,7 +31,7 @@ export function textElement(x: number, y: number, text: string, style: TextStyle
   const attributes = {
     x,
     y,
-    'font-family': style.family,
+    'font-family': `'${style.family}'`,
     'font-size': style.size,
     'font-weight': style.weight ?? 400,
     'font-style': style.italic ? 'italic' : undefined,

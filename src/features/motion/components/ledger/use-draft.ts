@@ -1,0 +1,237 @@
+/**
+ * The draft as it is edited here: rows of a table with what has been typed over them, saved in one step at a time, shown
+ * at once on the globe, and never lost where the server refuses.
+ */
+import { useQueryClient } from '@tanstack/react-query';
+import { useCallback, useMemo, useState } from 'react';
+import { compileModel } from '../../../../kernel/rotations';
+import type { Model } from '../../../../kernel/rotations/types';
+import { EditRefused, overlap, sendEdits, sendUndo } from '../../../ledger/client';
+import type { BatchAnswer, Block, Edit, Rotation, Table } from '../../../ledger/contract';
+import type { Column } from '../../../ledger/grid/column';
+import {
+  readyEdits,
+  withChanges,
+  withNewRow,
+  without,
+  type CellChange,
+  type Pending,
+} from '../../../ledger/grid/pending';
+import type { MotionsAnswer } from '../../contract';
+import { keys, useMotions, useTable } from '../../client';
+
+export interface Conflict {
+  /** Rows that someone else changed meanwhile, with who it was. */
+  readonly rows: ReadonlySet<string>;
+  readonly words: string;
+  readonly revision: number;
+}
+
+export interface Draft {
+  readonly blocks: readonly Block[];
+  readonly rotations: readonly Rotation[];
+  /** Compiled from the saved rows. */
+  readonly model: Model | null;
+  readonly pending: Pending;
+  readonly saving: boolean;
+  /** What the server said of the last save; null after a good one. */
+  readonly refused: string | null;
+  readonly conflict: Conflict | null;
+  readonly change: (
+    table: Table,
+    columns: readonly Column[],
+    changes: readonly CellChange[],
+    made: readonly NewRow[],
+  ) => void;
+  readonly remove: (table: Table, rows: readonly string[]) => void;
+  readonly run: (edits: readonly Edit[], label?: string) => Promise<boolean>;
+  readonly undo: (which: 'undo' | 'redo') => void;
+  readonly putBack: () => void;
+  readonly takeMine: () => void;
+}
+
+export interface NewRow {
+  readonly id: string;
+  readonly base: Readonly<Record<string, unknown>>;
+}
+
+export function useDraft(slug: string, version: 'draft' | number = 'draft'): Draft {
+  const client = useQueryClient();
+  const motions = useMotions(slug, version);
+  const blocks = useTable<Block>(slug, version, 'blocks');
+  const rotations = useTable<Rotation>(slug, version, 'rotations');
+  const [pending, setPending] = useState<Pending>(new Map());
+  const [saving, setSaving] = useState(false);
+  const [refused, setRefused] = useState<string | null>(null);
+  const [conflict, setConflict] = useState<(Conflict & { readonly edits: readonly Edit[] }) | null>(null);
+
+  const revision = motions.data?.revision ?? 0;
+
+  /** Puts an answer into what every part of the page reads, and compiles the model anew. */
+  const adopt = useCallback(
+    (answer: BatchAnswer) => {
+      for (const table of new Set([...answer.items, ...answer.deleted].map((item) => item.table))) {
+        client.setQueryData<readonly { id: string }[]>(keys.table(slug, 'draft', table), (rows) =>
+          merged(rows ?? [], answer, table),
+        );
+      }
+      const [b, r] = (['blocks', 'rotations'] as const).map((t) =>
+        client.getQueryData(keys.table(slug, 'draft', t)),
+      );
+      client.setQueryData<MotionsAnswer>(keys.table(slug, 'draft', 'motions'), {
+        ...compileModel(b as Block[], r as Rotation[]),
+        version: 'draft',
+        revision: answer.revision,
+      });
+      void client.invalidateQueries({ queryKey: keys.project(slug), exact: true });
+    },
+    [client, slug],
+  );
+
+  const send = useCallback(
+    async (
+      work: () => Promise<BatchAnswer>,
+      edits: readonly Edit[],
+      onRefused?: (error: EditRefused) => void,
+    ): Promise<boolean> => {
+      setSaving(true);
+      try {
+        adopt(await work());
+        setRefused(null);
+        setConflict(null);
+        return true;
+      } catch (error) {
+        if (!(error instanceof EditRefused))
+          setRefused('The server did not answer. What you typed is kept here; try again.');
+        else if (error.revision !== null) {
+          const rows = new Set(overlap(edits, error.changes));
+          const [last] = error.changes
+            .filter((entry) => entry.changes?.some(({ entity_id }) => rows.has(entity_id)))
+            .reverse();
+          const at = last
+            ? new Date(last.at).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })
+            : '';
+          const words = last
+            ? `Changed by ${last.actor?.name ?? 'someone'} at ${at}. Yours is kept beside it.`
+            : 'The draft has moved on. Yours is kept beside it.';
+          setConflict({ rows, words, revision: error.revision, edits });
+          await client.invalidateQueries({ queryKey: ['project', slug] });
+        } else {
+          setRefused(error.message);
+          onRefused?.(error);
+        }
+        return false;
+      } finally {
+        setSaving(false);
+      }
+    },
+    [adopt, client, slug],
+  );
+
+  const save = useCallback(
+    async (next: Pending, table: Table, columns: readonly Column[]) => {
+      setPending(next);
+      const { edits, rows } = readyEdits(next, table, columns);
+      if (edits.length === 0) return;
+      const done = await send(
+        () => sendEdits(slug, revision, edits),
+        edits,
+        (error) => setPending((now) => marked(now, rows, error)),
+      );
+      if (done) setPending((now) => without(now, rows));
+    },
+    [send, slug, revision],
+  );
+
+  const change = useCallback<Draft['change']>(
+    (table, columns, changes, made) => {
+      const started = made.reduce<Pending>((map, row) => withNewRow(map, row.id, row.base), pending);
+      void save(withChanges(started, changes, columns), table, columns);
+    },
+    [pending, save],
+  );
+
+  const run = useCallback(
+    (edits: readonly Edit[], label?: string) => send(() => sendEdits(slug, revision, edits, label), edits),
+    [send, slug, revision],
+  );
+
+  const remove = useCallback<Draft['remove']>(
+    (table, ids) => {
+      const known = ids.filter((id) => !pending.get(id)?.isNew);
+      setPending((now) => without(now, ids));
+      if (known.length > 0) void run(known.map((id) => ({ op: 'delete', table, id })));
+    },
+    [pending, run],
+  );
+
+  return useMemo(
+    () => ({
+      blocks: blocks.data ?? [],
+      rotations: rotations.data ?? [],
+      model: motions.data ?? null,
+      pending,
+      saving,
+      refused,
+      conflict,
+      change,
+      remove,
+      run,
+      undo: (which) => void send(() => sendUndo(slug, which, revision), []),
+      putBack: () => {
+        setPending(new Map());
+        setRefused(null);
+        setConflict(null);
+      },
+      takeMine: () => {
+        if (!conflict) return;
+        const { edits, revision: now } = conflict;
+        const rows = edits.flatMap((edit) => edit.id ?? []);
+        void send(() => sendEdits(slug, now, edits), edits).then((done) => {
+          if (done) setPending((map) => without(map, rows));
+        });
+      },
+    }),
+    [
+      blocks.data,
+      rotations.data,
+      pending,
+      saving,
+      refused,
+      conflict,
+      change,
+      remove,
+      run,
+      send,
+      slug,
+      revision,
+    ],
+  );
+}
+
+function merged(rows: readonly { id: string }[], answer: BatchAnswer, table: string): { id: string }[] {
+  const gone = new Set(answer.deleted.filter((d) => d.table === table).map((d) => d.id));
+  const fresh = new Map(
+    answer.items
+      .filter((i) => i.table === table)
+      .map((i) => [i.row['id'] as string, i.row as { id: string }]),
+  );
+  const kept = rows.filter((row) => !gone.has(row.id)).map((row) => fresh.get(row.id) ?? row);
+  const known = new Set(rows.map((row) => row.id));
+  return [...kept, ...[...fresh.values()].filter((row) => !known.has(row.id))];
+}
+
+/** The server's problems, put beside the cells that they are about. */
+function marked(pending: Pending, rows: readonly string[], error: EditRefused): Pending {
+  const next = new Map(pending);
+  for (const { edit, field, problem } of error.cells) {
+    const id = rows[edit];
+    const row = id === undefined ? undefined : next.get(id);
+    if (!id || !row) continue;
+    const key = field ?? Object.keys(row.cells)[0];
+    if (key === undefined) continue;
+    const text = row.cells[key]?.text ?? '';
+    next.set(id, { ...row, cells: { ...row.cells, [key]: { text, problem } } });
+  }
+  return next;
+}
