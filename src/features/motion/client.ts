@@ -1,9 +1,10 @@
 /** What the workbench asks of the server, as queries: outlines once by hash, the rest by project and version. */
-import { QueryClient, useQueries, useQuery } from '@tanstack/react-query';
-import { useMemo } from 'react';
+import { keepPreviousData, QueryClient, useQuery, useQueryClient } from '@tanstack/react-query';
+import { useEffect, useMemo } from 'react';
 import { type Block, type Direction, type Feature } from '../ledger/contract';
 import { type Project } from '../projects/contract';
 import { type MotionsAnswer } from './contract';
+import { NOT_YET } from './globe/shape';
 import { decodeShape, type Decoded } from './scene/decode';
 import { sceneOf, type Scene } from './scene/scene';
 
@@ -53,7 +54,8 @@ export const api = (slug: string, path: string, version: Version): string =>
   `/api/projects/${encodeURIComponent(slug)}/${path}?version=${version}`;
 
 /** A numbered version never changes; the draft is asked for again when the page is looked at again. */
-const fresh = (version: Version) => ({ staleTime: version === 'draft' ? 0 : Infinity });
+const fresh = (version: Version) => ({ staleTime: version === 'draft' ? DRAFT_FRESH_MS : Infinity });
+const DRAFT_FRESH_MS = 5_000;
 
 export const keys = {
   project: (slug: string) => ['project', slug] as const,
@@ -95,34 +97,61 @@ interface Wanted {
 
 const nameOf = ({ sha256, inside }: Wanted): string => `${sha256} ${inside}`;
 
-/** Shapes by hash and inside, as they arrive. */
-export function useShapes(wanted: readonly Wanted[]): {
-  shapes: ReadonlyMap<string, Decoded>;
-  missing: number;
-  error: Error | null;
-} {
+interface Shapes {
+  readonly shapes: ReadonlyMap<string, Decoded>;
+  /** Those that could not be fetched. */
+  readonly lost: number;
+}
+
+const NONE: Shapes = { shapes: new Map(), lost: 0 };
+
+/** Shapes by hash and inside. Each is fetched once, however the list changes; the picture is made anew once, not for each. */
+export function useShapes(wanted: readonly Wanted[]): Shapes & { waiting: boolean } {
+  const client = useQueryClient();
   const unique = useMemo(() => [...new Map(wanted.map((want) => [nameOf(want), want])).values()], [wanted]);
-  return useQueries({
-    queries: unique.map((want) => ({
-      queryKey: keys.geometry(want.sha256, want.inside),
-      queryFn: () => getShape(want.sha256, want.inside),
-      staleTime: Infinity,
-      gcTime: Infinity,
-    })),
-    combine: (results) => ({
-      shapes: new Map(
-        results.flatMap(({ data }, i) => (data && unique[i] ? [[nameOf(unique[i]), data] as const] : [])),
-      ),
-      missing: results.filter(({ data }) => !data).length,
-      error: results.find(({ error }) => error)?.error ?? null,
-    }),
+  const { data = NONE, isFetching } = useQuery({
+    queryKey: ['geometry', unique.map(nameOf)],
+    placeholderData: keepPreviousData,
+    staleTime: Infinity,
+    queryFn: async (): Promise<Shapes> => {
+      const answers = await Promise.allSettled(
+        unique.map(({ sha256, inside }) =>
+          client.fetchQuery({
+            queryKey: keys.geometry(sha256, inside),
+            queryFn: () => getShape(sha256, inside),
+            staleTime: Infinity,
+            gcTime: Infinity,
+          }),
+        ),
+      );
+      const shapes = new Map<string, Decoded>();
+      answers.forEach((answer, i) => {
+        const want = unique[i];
+        if (answer.status === 'fulfilled' && want) shapes.set(nameOf(want), answer.value);
+      });
+      return { shapes, lost: unique.length - shapes.size };
+    },
   });
+  return { ...data, waiting: isFetching };
+}
+
+/** Reads the draft again whenever someone changes it. */
+export function useDraftEvents(slug: string, version: Version): void {
+  const client = useQueryClient();
+  useEffect(() => {
+    if (version !== 'draft') return undefined;
+    const events = new EventSource(`/api/projects/${encodeURIComponent(slug)}/events`);
+    events.addEventListener('change', () => void client.invalidateQueries({ queryKey: keys.project(slug) }));
+    return () => events.close();
+  }, [client, slug, version]);
 }
 
 export interface SceneAnswer {
   readonly scene: Scene | null;
-  /** Outlines still on their way. */
-  readonly missing: number;
+  /** True while outlines are on their way. */
+  readonly waiting: boolean;
+  /** Outlines that could not be fetched. */
+  readonly lost: number;
   readonly error: Error | null;
   readonly retry: () => void;
 }
@@ -142,7 +171,7 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
     ],
     [blocks.data, features.data],
   );
-  const { shapes, missing, error } = useShapes(wanted);
+  const { shapes, waiting, lost } = useShapes(wanted);
   const scene = useMemo(() => {
     if (!motions.data || !blocks.data || !features.data || !directions.data) return null;
     return assemble(title, motions.data, blocks.data, features.data, directions.data, shapes);
@@ -150,8 +179,9 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
   const failed = [motions, blocks, features, directions].filter((query) => query.error);
   return {
     scene,
-    missing,
-    error: failed[0]?.error ?? error,
+    waiting,
+    lost,
+    error: failed[0]?.error ?? null,
     retry: () => failed.forEach((query) => void query.refetch()),
   };
 }
@@ -170,12 +200,10 @@ function assemble(
     directions,
     blocks: blocks.map(({ code, name, kind, evidence, outlines }) => ({
       ...{ code, name, kind, evidence },
-      outlines: outlines.flatMap(
-        ({ outline_older_ma: older_ma, outline_younger_ma: younger_ma, ...want }) => {
-          const shape = shapes.get(nameOf(want))?.shape;
-          return shape ? [{ shape, older_ma, younger_ma }] : [];
-        },
-      ),
+      outlines: outlines.map(({ outline_older_ma: older_ma, outline_younger_ma: younger_ma, ...want }) => ({
+        ...{ older_ma, younger_ma },
+        shape: shapes.get(nameOf(want))?.shape ?? NOT_YET,
+      })),
     })),
     lines: features.flatMap((feature) => {
       const shape = shapes.get(nameOf({ sha256: feature.sha256, inside: 'smaller' }))?.shape;

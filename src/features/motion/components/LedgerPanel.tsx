@@ -1,5 +1,6 @@
 /** The rows behind what is selected, with the computed row of this age between its neighbours. Reading only. */
-import { poseAt, toPole } from '../../../kernel/rotations';
+import { toPole } from '../../../kernel/rotations';
+import { poseAt } from '../scene/tolerant';
 import { type CompiledRow } from '../../../kernel/rotations/types';
 import { ageValue, number } from '../format';
 import { findSceneBlock } from '../scene/scene';

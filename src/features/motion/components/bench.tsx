@@ -43,7 +43,7 @@ export function BenchProvider({
   const point = useMemo(() => selectedPoint(scene, block, chosen), [scene, block, chosen]);
   const track = useMemo(
     () => (point && knows(scene.model, heldStill) ? trackOf(scene.model, point, heldStill, span) : null),
-    [scene, point, heldStill, span],
+    [scene.model, point, heldStill, span],
   );
   const home = useMemo(
     () => homeCentre(given, { ...store.getState(), heldStill }),

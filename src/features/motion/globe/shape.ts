@@ -20,6 +20,9 @@ export interface Shape {
   readonly vertices: number;
 }
 
+/** Stands for an outline that is on its way: nothing is drawn. */
+export const NOT_YET: Shape = { closed: true, levels: [[]], cap: [0, 0, 1], radius: 0, vertices: 0 };
+
 /** Greatest distance of a dropped vertex from the line that replaces it, radians. */
 export const TOLERANCES = [0, 0.0005, 0.001, 0.002, 0.004, 0.008] as const;
 

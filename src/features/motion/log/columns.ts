@@ -1,5 +1,5 @@
 /** The rotations strip: a column for each link of a block's circuit, filled by evidence between its rows. */
-import { poseAt } from '../../../kernel/rotations';
+import { poseAt } from '../scene/tolerant';
 import { type CompiledRow, type Evidence, type Link, type Model } from '../../../kernel/rotations/types';
 
 export interface Fill {

@@ -1,15 +1,8 @@
 /** Curves of the strips, computed once for a model, a point and a frame; moving the age line only reads them. */
-import {
-  angularVelocity,
-  circuitRowAges,
-  latitudeBand,
-  poseAt,
-  poseUncertainty,
-  rotate,
-  toLatLon,
-  toVector,
-  velocityAt,
-} from '../../../kernel';
+import { rotate, velocityAt } from '../../../kernel/rotations';
+import { toLatLon, toVector } from '../../../kernel/sphere';
+import { latitudeBand, poseUncertainty } from '../../../kernel/uncertainty';
+import { angularVelocity, circuitRowAges, poseAt } from '../scene/tolerant';
 import { type Model } from '../../../kernel/rotations/types';
 import { type NamedPoint } from '../scene/points';
 

@@ -1,5 +1,6 @@
 /** Where the selected point is at an age, how surely, and through which rotations. */
-import { poseAt, toPole } from '../../../kernel/rotations';
+import { toPole } from '../../../kernel/rotations';
+import { poseAt } from '../scene/tolerant';
 import { toLatLon, toVector } from '../../../kernel/sphere';
 import { rotate } from '../../../kernel/rotations/quaternion';
 import { pointEllipse, poseUncertainty, shares, type Ellipse } from '../../../kernel/uncertainty';

@@ -1,5 +1,6 @@
 /** What a reader should know before leaning on the position: hand-overs, rows without covariance, what hangs on it. */
-import { handOverJumps, jumpKm, poseAt } from '../../../kernel/rotations';
+import { jumpKm } from '../../../kernel/rotations';
+import { handOverJumps, poseAt } from '../scene/tolerant';
 import { toVector } from '../../../kernel/sphere';
 import { type Model, type ModelProblem } from '../../../kernel/rotations/types';
 import { ageValue, kilometres, list, NBSP, number, shortAge } from '../format';

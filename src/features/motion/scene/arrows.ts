@@ -1,5 +1,5 @@
 /** Velocities of blocks at places spread evenly over them. */
-import { angularVelocity } from '../../../kernel/rotations';
+import { angularVelocity } from './tolerant';
 import { contains } from '../globe/contains';
 import { cross, turn, unit, type Vec } from '../globe/matrix';
 import { vertex, type Shape } from '../globe/shape';

@@ -25,7 +25,8 @@ function indexOf(model: Model): ReadonlyMap<string, number> {
 export function frameAt(model: Model, age: number, heldStill: string): Frame {
   const matrices = new Float64Array(9 * model.blocks.length);
   const statuses = new Uint8Array(model.blocks.length);
-  matricesAt(model, age, heldStill, matrices, statuses);
+  if (indexOf(model).has(heldStill)) matricesAt(model, age, heldStill, matrices, statuses);
+  else matrices.fill(NaN);
   return { model, age, heldStill, matrices, statuses, indexOf: indexOf(model) };
 }
 

@@ -1,5 +1,6 @@
 /** A point's drift path as the globe draws it: unit vectors in the held-still frame, youngest first. */
-import { driftPath, type DriftPoint } from '../../../kernel/rotations';
+import { type DriftPoint } from '../../../kernel/rotations';
+import { driftPath } from './tolerant';
 import { type Model } from '../../../kernel/rotations/types';
 import { vectorOf, type Vec } from '../globe/matrix';
 import { type PathSpan } from '../store/state';

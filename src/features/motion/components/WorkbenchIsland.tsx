@@ -1,0 +1,111 @@
+/** The workbench of one project, from the server's answers. */
+import { QueryClientProvider } from '@tanstack/react-query';
+import { useEffect, useRef, useState, type ReactNode } from 'react';
+import { type MotionsAnswer } from '../contract';
+import { AnswerError, createClient, keys, useDraftEvents, useScene, type Version } from '../client';
+import { count } from '../format';
+import { complete, homeCentre } from '../scene/defaults';
+import { turnTo } from '../store/actions';
+import { type Scene } from '../scene/scene';
+import { followInAddress, fromQuery } from '../store/link';
+import { createWorkbench, type Linked } from '../store/state';
+import { LedgerPanel } from './LedgerPanel';
+import { type Head } from './title/head';
+import { Waiting } from './Waiting';
+import { Workbench } from './Workbench';
+
+export interface WorkbenchIslandProps {
+  readonly slug: string;
+  readonly version: Version;
+  readonly head: Head;
+  /** Query of the address, so that server and browser begin alike. */
+  readonly search: string;
+  /** The project's own frame, where it names one. */
+  readonly heldStill: string | null;
+  /** True where the ledger may be edited. */
+  readonly mayEdit: boolean;
+  /** Lists read with the page; they spare the first requests. */
+  readonly initial?: {
+    readonly motions: MotionsAnswer;
+    readonly tables: Readonly<Record<'blocks' | 'features' | 'directions', readonly unknown[]>>;
+  };
+}
+
+export default function WorkbenchIsland(props: WorkbenchIslandProps) {
+  const [client] = useState(() => {
+    const made = createClient();
+    const { slug, version, initial } = props;
+    if (initial) {
+      made.setQueryData(keys.table(slug, version, 'motions'), initial.motions);
+      for (const [table, rows] of Object.entries(initial.tables))
+        made.setQueryData(keys.table(slug, version, table), rows);
+    }
+    return made;
+  });
+  return (
+    <QueryClientProvider client={client}>
+      <Loaded {...props} />
+    </QueryClientProvider>
+  );
+}
+
+function Loaded({ slug, version, head, search, heldStill, ...rest }: WorkbenchIslandProps) {
+  const { scene, waiting, lost, error, retry } = useScene(slug, version, head.title);
+  useDraftEvents(slug, version);
+  if (error && !scene) {
+    const detail = error instanceof AnswerError ? error.detail : 'Look at the connection, then try again.';
+    return <Waiting head={head} words={`${error.message}. ${detail}`} retry={retry} />;
+  }
+  if (!scene) return <Waiting head={head} words="Reading blocks, rotations and directions" />;
+  const notice = waiting ? (
+    <Progress words="Reading outlines" />
+  ) : lost > 0 ? (
+    <Progress words={`${count(lost, 'outline')} could not be read. Reload to try again.`} />
+  ) : null;
+  const own = { ...(heldStill ? { heldStill } : {}), ...fromQuery(search) };
+  return (
+    <Ready
+      scene={scene}
+      head={head}
+      stated={own}
+      notice={notice}
+      waiting={waiting}
+      {...{ slug, version }}
+      mayEdit={rest.mayEdit}
+    />
+  );
+}
+
+function Ready({
+  scene,
+  head,
+  stated,
+  notice,
+  waiting,
+}: {
+  scene: Scene;
+  head: Head;
+  stated: Partial<Linked>;
+  notice: ReactNode;
+  waiting: boolean;
+  slug: string;
+  version: Version;
+  mayEdit: boolean;
+}) {
+  const [store] = useState(() => createWorkbench(complete(scene, stated)));
+  useEffect(() => followInAddress(store, window), [store]);
+  // Without a centre in the link the first one is a guess until the outlines are there.
+  const guessed = useRef(stated.centre ? null : store.getState().centre);
+  useEffect(() => {
+    if (waiting || guessed.current === null) return;
+    if (store.getState().centre === guessed.current) turnTo(store, homeCentre(scene, store.getState()));
+    guessed.current = null;
+  }, [waiting, scene, store]);
+  return <Workbench head={head} scene={scene} store={store} ledger={<LedgerPanel />} notice={notice} />;
+}
+
+const Progress = ({ words }: { words: string }) => (
+  <p role="status" className="t-label border-ochre bg-paper text-ink-2 border-b-2 px-5 py-1">
+    {words}
+  </p>
+);

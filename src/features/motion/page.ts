@@ -1,0 +1,42 @@
+/** What the workbench's page reads before it is drawn. */
+import { loadState } from '~/features/ledger/state';
+import { type Project } from '~/features/projects/contract';
+import { may } from '~/server/access';
+import { openPage } from '~/server/page';
+import { Problem } from '~/server/problem';
+import { type WorkbenchIslandProps } from './components/WorkbenchIsland';
+import { modelOf } from './model';
+
+/** Larger states than this are fetched by the island, so that the page itself stays light. */
+const MOST_ROWS = 3000;
+
+interface Opened extends Pick<WorkbenchIslandProps, 'version' | 'initial' | 'mayEdit'> {
+  readonly project: Project;
+}
+
+/** @returns null where the actor may not see the project, or no such version. */
+export async function openWorkbench(
+  locals: App.Locals,
+  slug: string | undefined,
+  asked: string | null,
+): Promise<Opened | null> {
+  const opened = await openPage(locals, slug, 'project.view');
+  if (!opened) return null;
+  const number = asked === null || asked === 'draft' ? undefined : Number(asked);
+  const name = asked === 'draft' ? 'draft' : number;
+  if (number !== undefined && !Number.isInteger(number)) return null;
+  try {
+    const state = await loadState(opened.access, name);
+    const { version, revision, blocks, features, directions, rotations } = state;
+    const initial = {
+      motions: { ...modelOf(state), version, revision },
+      tables: { blocks, features, directions },
+    };
+    const light = rotations.length + features.length + directions.length <= MOST_ROWS;
+    const mayEdit = version === 'draft' && may(opened.access, 'ledger.edit');
+    return { project: opened.project, version, mayEdit, ...(light ? { initial } : {}) };
+  } catch (error) {
+    if (error instanceof Problem) return null;
+    throw error;
+  }
+}
