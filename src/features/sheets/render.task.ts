@@ -17,6 +17,8 @@ export interface RenderJob {
 const fontFiles = (): string[] => Object.values(FONT_FILES).map((file) => file());
 /** The converters take the fonts from files; an embedded WOFF2 would only slow them. */
 const withoutStyle = (svg: string): string => svg.replace(/<style>[\s\S]*?<\/style>/, '');
+/** svg-to-pdfkit takes bare lengths as points and lengths in pt as 4/3 of them. */
+const inPoints = (svg: string): string => svg.replace(/(width|height)="([\d.]+)pt"/g, '$1="$2"');
 
 export default function render(job: RenderJob): Promise<Uint8Array> {
   return job.format === 'png' ? Promise.resolve(png(job)) : pdf(job);
@@ -40,7 +42,7 @@ function pdf({ svg, width_pt, height_pt, title }: RenderJob): Promise<Uint8Array
     document.on('end', () => resolve(new Uint8Array(Buffer.concat(chunks))));
     document.on('error', reject);
   });
-  SVGtoPDF(document, withoutStyle(svg), 0, 0, {
+  SVGtoPDF(document, inPoints(withoutStyle(svg)), 0, 0, {
     assumePt: true,
     width: width_pt,
     height: height_pt,

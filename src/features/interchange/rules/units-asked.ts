@@ -81,7 +81,7 @@ export function settleSwap<T extends { line: number; lat: number; lon: number }>
 ): boolean {
   const beyond = rows.filter((row) => Math.abs(row.lat) > 90);
   const swapped = beyond.length > 0 && rows.every((row) => Math.abs(row.lon) <= 90 && Math.abs(row.lat) <= 360);
-  if (!swapped || (beyond.length === 1 && rows.length > 2)) return false;
+  if (!swapped || (beyond.length === 1 && rows.length > 1)) return false;
   const ask = `${what} go beyond 90° as latitudes, and all would be valid the other way round. Are latitude and longitude exchanged?`;
   const examples = beyond.map((row) => `line ${row.line}: latitude ${row.lat}`);
   return askEach(asking, 'swapped_lat_lon', ask, ['exchange them', 'keep them'], examples);
