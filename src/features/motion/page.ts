@@ -10,7 +10,7 @@ import { modelOf } from './model';
 /** Larger states than this are fetched by the island, so that the page itself stays light. */
 const MOST_ROWS = 3000;
 
-interface Opened extends Pick<WorkbenchIslandProps, 'version' | 'initial' | 'mayEdit'> {
+interface Opened extends Pick<WorkbenchIslandProps, 'version' | 'initial' | 'readOnly'> {
   readonly project: Project;
 }
 
@@ -33,8 +33,13 @@ export async function openWorkbench(
       tables: { blocks, features, directions },
     };
     const light = rotations.length + features.length + directions.length <= MOST_ROWS;
-    const mayEdit = version === 'draft' && may(opened.access, 'ledger.edit');
-    return { project: opened.project, version, mayEdit, ...(light ? { initial } : {}) };
+    const readOnly =
+      version !== 'draft'
+        ? 'A released version is frozen.'
+        : may(opened.access, 'ledger.edit')
+          ? null
+          : 'Leads and researchers of the project edit.';
+    return { project: opened.project, version, readOnly, ...(light ? { initial } : {}) };
   } catch (error) {
     if (error instanceof Problem) return null;
     throw error;

@@ -9,13 +9,15 @@ import { Legend } from './globe/Legend';
 import { LogPanel } from './log/LogPanel';
 import { Notebook, useAnswer, Within } from './notebook/Notebook';
 import { MenuCell } from '../../../components/ui/MenuCell';
-import { epochOf, HeldStillCell } from './title/TitleBlock';
+import { epochOf, FROZEN, HeldStillCell } from './title/TitleBlock';
 import { type Head } from './title/head';
 
 function PhoneHead({ head }: { head: Head }) {
   const account = head.account?.links ?? [{ id: 'sign-in', label: 'Sign in', href: head.signIn }];
   return (
-    <header className="border-frame flex items-center justify-between gap-3 border-b-[1.5px] px-3.5 py-2">
+    <header
+      className={`border-frame flex items-center justify-between gap-3 px-3.5 py-2 ${head.frozen ? FROZEN : 'border-b-[1.5px]'}`}
+    >
       <div className="min-w-0">
         <h1 className="truncate font-serif text-[17px] leading-6 font-semibold">{head.title}</h1>
         <p className="t-body text-ink-2">

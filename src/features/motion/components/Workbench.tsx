@@ -38,12 +38,11 @@ function Panels({ head, ledger, notice }: Pick<Props, 'head' | 'ledger' | 'notic
   const phone = useMedia(PHONE);
   if (phone) return <PhoneWorkbench head={head} notice={notice} />;
   return (
-    <div className="flex min-h-dvh flex-col xl:h-dvh">
+    <div className="relative flex min-h-dvh flex-col xl:h-dvh">
       <TitleBlock head={head} />
-      {notice}
       <main
         id="main"
-        className="grid min-h-0 grow grid-cols-1 xl:grid-cols-[42fr_58fr] xl:grid-rows-[minmax(0,555fr)_minmax(0,293fr)]"
+        className="grid min-h-0 grow grid-cols-1 xl:grid-cols-[minmax(0,42fr)_minmax(0,58fr)] xl:grid-rows-[minmax(0,555fr)_minmax(0,293fr)]"
       >
         <h1 className="sr-only">{head.title}: workbench</h1>
         <div className="border-frame relative min-h-0 border-b max-xl:h-[560px] xl:border-r">
@@ -51,9 +50,12 @@ function Panels({ head, ledger, notice }: Pick<Props, 'head' | 'ledger' | 'notic
         </div>
         <div className="border-frame relative min-h-0 border-b max-xl:h-[600px]">
           <GlobePanel />
+          <div className="absolute right-5 bottom-2">{notice}</div>
           <Keys />
         </div>
-        <div className="border-frame min-h-0 max-xl:max-h-[420px] max-xl:border-b xl:border-r">{ledger}</div>
+        <div className="border-frame min-h-0 min-w-0 overflow-hidden max-xl:max-h-[420px] max-xl:border-b xl:border-r">
+          {ledger}
+        </div>
         <div className="min-h-0">
           <Notebook />
         </div>

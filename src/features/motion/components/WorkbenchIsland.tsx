@@ -9,7 +9,7 @@ import { turnTo } from '../store/actions';
 import { type Scene } from '../scene/scene';
 import { followInAddress, fromQuery } from '../store/link';
 import { createWorkbench, type Linked } from '../store/state';
-import { LedgerPanel } from './LedgerPanel';
+import { LedgerDesk } from './ledger/LedgerDesk';
 import { type Head } from './title/head';
 import { Waiting } from './Waiting';
 import { Workbench } from './Workbench';
@@ -22,8 +22,8 @@ export interface WorkbenchIslandProps {
   readonly search: string;
   /** The project's own frame, where it names one. */
   readonly heldStill: string | null;
-  /** True where the ledger may be edited. */
-  readonly mayEdit: boolean;
+  /** Why the ledger cannot be edited; null where it may. */
+  readonly readOnly: string | null;
   /** Lists read with the page; they spare the first requests. */
   readonly initial?: {
     readonly motions: MotionsAnswer;
@@ -49,7 +49,7 @@ export default function WorkbenchIsland(props: WorkbenchIslandProps) {
   );
 }
 
-function Loaded({ slug, version, head, search, heldStill, ...rest }: WorkbenchIslandProps) {
+function Loaded({ slug, version, head, search, heldStill, readOnly }: WorkbenchIslandProps) {
   const { scene, waiting, lost, error, retry } = useScene(slug, version, head.title);
   useDraftEvents(slug, version);
   if (error && !scene) {
@@ -70,8 +70,7 @@ function Loaded({ slug, version, head, search, heldStill, ...rest }: WorkbenchIs
       stated={own}
       notice={notice}
       waiting={waiting}
-      {...{ slug, version }}
-      mayEdit={rest.mayEdit}
+      ledger={<LedgerDesk slug={slug} version={version} readOnly={readOnly} />}
     />
   );
 }
@@ -82,15 +81,14 @@ function Ready({
   stated,
   notice,
   waiting,
+  ledger,
 }: {
   scene: Scene;
   head: Head;
   stated: Partial<Linked>;
   notice: ReactNode;
   waiting: boolean;
-  slug: string;
-  version: Version;
-  mayEdit: boolean;
+  ledger: ReactNode;
 }) {
   const [store] = useState(() => createWorkbench(complete(scene, stated)));
   useEffect(() => followInAddress(store, window), [store]);
@@ -101,7 +99,7 @@ function Ready({
     if (store.getState().centre === guessed.current) turnTo(store, homeCentre(scene, store.getState()));
     guessed.current = null;
   }, [waiting, scene, store]);
-  return <Workbench head={head} scene={scene} store={store} ledger={<LedgerPanel />} notice={notice} />;
+  return <Workbench head={head} scene={scene} store={store} ledger={ledger} notice={notice} />;
 }
 
 const Progress = ({ words }: { words: string }) => (

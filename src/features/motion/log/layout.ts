@@ -58,9 +58,12 @@ export function layoutOf({ width, height, oldest, head = HEAD, links, strips }: 
   return { width, height, head, top: head + BELOW_HEAD, bottom: height - FOOT, oldest, strips: placed };
 }
 
+/** To a hundredth of a pixel: server and browser may differ in a sine's last digit, and both draw the same page. */
+export const hundredth = (px: number): number => Math.round(px * 100) / 100;
+
 /** y of an age. Inverse: `ageAt`. */
 export const yOf = ({ top, bottom, oldest }: LogLayout, age: number): number =>
-  top + (age / oldest) * (bottom - top);
+  hundredth(top + (age / oldest) * (bottom - top));
 
 export const ageAt = ({ top, bottom, oldest }: LogLayout, y: number): number =>
   Math.min(oldest, Math.max(0, ((y - top) / (bottom - top)) * oldest));

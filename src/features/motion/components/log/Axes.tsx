@@ -1,7 +1,7 @@
 /** The ruled ground of a strip: its heading, the grid of ages, and a value axis along the top. */
 import { type ReactNode } from 'react';
 import { number } from '../../format';
-import { HEAD, yOf, type LogLayout, type Strip } from '../../log/layout';
+import { HEAD, hundredth, yOf, type LogLayout, type Strip } from '../../log/layout';
 import { axisStep } from '../../scene/scene';
 
 export interface ValueAxis {
@@ -22,7 +22,7 @@ const PAD = 6;
 export function plotOf(strip: Strip, { from, to }: ValueAxis): Plot {
   const left = PAD;
   const right = strip.width - PAD;
-  return { left, right, x: (value) => left + ((value - from) / (to - from)) * (right - left) };
+  return { left, right, x: (value) => hundredth(left + ((value - from) / (to - from)) * (right - left)) };
 }
 
 /** On one line where the headings are low. */

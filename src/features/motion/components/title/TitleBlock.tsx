@@ -112,9 +112,13 @@ function SelectedCell() {
   );
 }
 
+export const FROZEN = 'bg-sunk border-b-4 border-double';
+
 export function TitleBlock({ head }: { readonly head: Head }) {
   return (
-    <header className="border-frame flex h-[52px] shrink-0 items-stretch border-b-[1.5px] max-md:hidden">
+    <header
+      className={`border-frame flex h-[52px] shrink-0 items-stretch max-md:hidden ${head.frozen ? FROZEN : 'border-b-[1.5px]'}`}
+    >
       <div className="border-rule flex items-center border-r px-5 max-lg:hidden">
         <a href={head.home} className="font-serif text-[18px] leading-6 font-semibold tracking-[-0.01em]">
           Driftwright
