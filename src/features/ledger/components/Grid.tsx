@@ -3,7 +3,17 @@
  * Shift with arrows takes a block of cells, copy and paste work as in a spreadsheet. Only the rows in sight are drawn.
  */
 import { useVirtualizer } from '@tanstack/react-virtual';
-import { useCallback, useEffect, useId, useMemo, useRef, useState, type ClipboardEvent, type KeyboardEvent, type ReactNode } from 'react';
+import {
+  useCallback,
+  useEffect,
+  useId,
+  useMemo,
+  useRef,
+  useState,
+  type ClipboardEvent,
+  type KeyboardEvent,
+  type ReactNode,
+} from 'react';
 import { readCells, writeCells } from '../grid/clipboard';
 import type { Column } from '../grid/column';
 import { pasteAt, type CellChange, type Pending } from '../grid/pending';
@@ -22,12 +32,14 @@ export interface GridRow {
   readonly ruled?: boolean;
 }
 
-/** Columns that are shown and not edited, before the last ones. */
+/** A column that is shown and not edited. */
 export interface ShownColumn {
   readonly key: string;
   readonly heading: string;
   readonly unit?: string;
   readonly width: string;
+  /** Key of the column that it stands behind; at the end where there is none. */
+  readonly after?: string;
   readonly show: (row: GridRow) => ReactNode;
 }
 
@@ -51,12 +63,27 @@ interface Props {
   readonly onRow: (row: string) => void;
   /** Puts the focus into this row's first empty cell, and edits it, when it changes. */
   readonly start?: string | null;
+  /** A row to bring into sight when it changes, while the grid is not being worked in. */
+  readonly inSight?: string | null;
 }
 
 const ROW = 21;
 
 export function Grid(props: Props) {
-  const { label, columns, shown = [], rows, pending, readOnly, onChanges, onEditing, onDelete, onAdd, onRow, start = null } = props;
+  const {
+    label,
+    columns,
+    shown = [],
+    rows,
+    pending,
+    readOnly,
+    onChanges,
+    onEditing,
+    onDelete,
+    onAdd,
+    onRow,
+    start = null,
+  } = props;
   const [selection, setSelection] = useState<Selection>(START);
   const [edit, setEdit] = useState<{ place: Place; text: string } | null>(null);
   // Moving the focus away blurs the field, which keeps the cell: this says that it has been dealt with.
@@ -64,8 +91,14 @@ export function Grid(props: Props) {
   const scroller = useRef<HTMLDivElement>(null);
   const grid = useRef<HTMLDivElement>(null);
   const id = useId();
-  const template = useMemo(() => [...columns, ...shown].map((c) => c.width).join(' '), [columns, shown]);
-  const virtual = useVirtualizer({ count: rows.length, getScrollElement: () => scroller.current, estimateSize: () => ROW, overscan: 12 });
+  const slots = useMemo(() => slotsOf(columns, shown), [columns, shown]);
+  const template = useMemo(() => slots.map((slot) => slot.of.width).join(' '), [slots]);
+  const virtual = useVirtualizer({
+    count: rows.length,
+    getScrollElement: () => scroller.current,
+    estimateSize: () => ROW,
+    overscan: 12,
+  });
   const size = { rows: rows.length, columns: columns.length };
   const ids = useMemo(() => rows.filter((row) => !row.computed).map((row) => row.id), [rows]);
 
@@ -117,6 +150,15 @@ export function Grid(props: Props) {
     grid.current?.focus();
   };
 
+  const { inSight = null } = props;
+  useEffect(() => {
+    if (inSight === null || grid.current?.contains(document.activeElement)) return;
+    const index = rows.findIndex((row) => row.id === inSight);
+    if (index >= 0) virtual.scrollToIndex(index, { align: 'center' });
+    // Only where the row changes its place: scrolling by hand stays as it is.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
+  }, [inSight, rows.findIndex((row) => row.id === inSight)]);
+
   // A new row is edited at once, in its first cell without a value.
   const started = useRef<string | null>(null);
   useEffect(() => {
@@ -131,7 +173,9 @@ export function Grid(props: Props) {
   });
 
   const chosenRows = (): string[] =>
-    rows.filter((row, i) => !row.computed && within(selection, { row: i, column: selection.at.column })).map((row) => row.id);
+    rows
+      .filter((row, i) => !row.computed && within(selection, { row: i, column: selection.at.column }))
+      .map((row) => row.id);
 
   function onKey(event: KeyboardEvent): void {
     if (edit) return;
@@ -160,7 +204,11 @@ export function Grid(props: Props) {
 
   function clear(): void {
     const changes = rows.flatMap((row, i) =>
-      row.computed ? [] : columns.flatMap((c, j) => (within(selection, { row: i, column: j }) ? [{ row: row.id, key: c.key, text: '' }] : [])),
+      row.computed
+        ? []
+        : columns.flatMap((c, j) =>
+            within(selection, { row: i, column: j }) ? [{ row: row.id, key: c.key, text: '' }] : [],
+          ),
     );
     onChanges(changes, []);
   }
@@ -168,7 +216,9 @@ export function Grid(props: Props) {
   function onCopy(event: ClipboardEvent): void {
     if (edit) return;
     const cells = rows.flatMap((_, i) => {
-      const line = columns.flatMap((_column, j) => (within(selection, { row: i, column: j }) ? [textAt({ row: i, column: j })] : []));
+      const line = columns.flatMap((_column, j) =>
+        within(selection, { row: i, column: j }) ? [textAt({ row: i, column: j })] : [],
+      );
       return line.length > 0 ? [line] : [];
     });
     event.clipboardData.setData('text/plain', writeCells(cells));
@@ -205,7 +255,7 @@ export function Grid(props: Props) {
         onCopy={onCopy}
         onPaste={onPaste}
       >
-        <Heading columns={columns} shown={shown} template={template} />
+        <Heading slots={slots} template={template} />
         {rows.length === 0 ? (
           <div className="t-body text-ink-2 px-3.5 py-3">{props.empty}</div>
         ) : (
@@ -218,10 +268,22 @@ export function Grid(props: Props) {
                   role="row"
                   aria-rowindex={item.index + 2}
                   className={rowClass(row)}
-                  style={{ gridTemplateColumns: template, height: item.size, transform: `translateY(${item.start}px)` }}
+                  style={{
+                    gridTemplateColumns: template,
+                    height: item.size,
+                    transform: `translateY(${item.start}px)`,
+                  }}
                 >
                   {row.mark && <span className="absolute left-0.5">{row.mark}</span>}
-                  {columns.map((column, j) => {
+                  {slots.map((slot) => {
+                    if (slot.shown) {
+                      return (
+                        <div key={slot.of.key} role="gridcell" className="truncate px-2 leading-[20px]">
+                          {slot.shown.show(row)}
+                        </div>
+                      );
+                    }
+                    const { column, index: j } = slot;
                     const place = { row: item.index, column: j };
                     const waiting = pending.get(row.id)?.cells[column.key];
                     return (
@@ -238,7 +300,11 @@ export function Grid(props: Props) {
                         readOnly={readOnly}
                         selected={within(selection, place)}
                         active={cellAt(selection, place)}
-                        editing={edit !== null && cellAt({ at: edit.place, from: edit.place }, place) ? edit.text : null}
+                        editing={
+                          edit !== null && cellAt({ at: edit.place, from: edit.place }, place)
+                            ? edit.text
+                            : null
+                        }
                         onPress={(extend) => goTo({ at: place, from: extend ? selection.from : place })}
                         onBegin={() => begin(place)}
                         onType={type}
@@ -247,11 +313,6 @@ export function Grid(props: Props) {
                       />
                     );
                   })}
-                  {shown.map((column) => (
-                    <div key={column.key} role="gridcell" className="truncate px-2 leading-[20px]">
-                      {column.show(row)}
-                    </div>
-                  ))}
                 </div>
               );
             })}
@@ -264,22 +325,48 @@ export function Grid(props: Props) {
 
 function rowClass(row: GridRow): string {
   const base = 'absolute inset-x-0 top-0 grid border-b border-rule';
-  const tone = row.computed ? ' bg-ochre-wash text-ochre-ink font-medium' : row.tone === 'conflict' ? ' bg-madder-wash' : '';
-  return `${base}${tone}${row.ruled ? ' border-t border-t-frame' : ''}${row.tone === 'in use' ? ' font-semibold' : ''}`;
+  const tone = row.computed
+    ? ' bg-ochre-wash text-ochre-ink font-medium'
+    : row.tone === 'conflict'
+      ? ' bg-madder-wash'
+      : '';
+  return `${base}${tone}${row.ruled ? ' border-t border-t-frame' : ''}`;
 }
 
-function Heading({ columns, shown, template }: { columns: readonly Column[]; shown: readonly ShownColumn[]; template: string }) {
-  const cell = (key: string, heading: string, unit: string | undefined, numeric: boolean, index: number): ReactNode => (
-    <div key={key} role="columnheader" aria-colindex={index} className={`px-2 py-1 font-medium ${numeric ? 'text-right' : ''}`}>
-      {heading}
-      <span className="text-ink-2 block font-normal">{unit ?? '\u00a0'}</span>
-    </div>
-  );
+type Slot =
+  | { readonly of: Column; readonly column: Column; readonly index: number; readonly shown: null }
+  | { readonly of: ShownColumn; readonly column: null; readonly index: -1; readonly shown: ShownColumn };
+
+/** Edited and shown columns in the order in which they stand. */
+function slotsOf(columns: readonly Column[], shown: readonly ShownColumn[]): readonly Slot[] {
+  const behind = (key: string | undefined): Slot[] =>
+    shown.filter((c) => c.after === key).map((c) => ({ of: c, column: null, index: -1, shown: c }));
+  return [
+    ...columns.flatMap((c, index): Slot[] => [{ of: c, column: c, index, shown: null }, ...behind(c.key)]),
+    ...behind(undefined),
+  ];
+}
+
+function Heading({ slots, template }: { readonly slots: readonly Slot[]; readonly template: string }) {
   return (
     <div role="rowgroup" className="bg-paper sticky top-0 z-10">
-      <div role="row" aria-rowindex={1} className="border-frame grid border-b" style={{ gridTemplateColumns: template }}>
-        {columns.map((c, i) => cell(c.key, c.heading, c.unit, c.numeric ?? false, i + 1))}
-        {shown.map((c, i) => cell(c.key, c.heading, c.unit, true, columns.length + i + 1))}
+      <div
+        role="row"
+        aria-rowindex={1}
+        className="border-frame grid border-b"
+        style={{ gridTemplateColumns: template }}
+      >
+        {slots.map(({ of, column }, i) => (
+          <div
+            key={of.key}
+            role="columnheader"
+            aria-colindex={i + 1}
+            className={`px-2 py-1 font-medium ${!column || column.numeric ? 'text-right' : ''}`}
+          >
+            {of.heading}
+            <span className="text-ink-2 block font-normal">{of.unit ?? '\u00a0'}</span>
+          </div>
+        ))}
       </div>
     </div>
   );

@@ -24,15 +24,22 @@ interface Props {
 }
 
 const below = (from: Place): Place => ({ ...from, row: from.row + 1 });
-const beside = (by: number) => (from: Place): Place => ({ ...from, column: Math.max(0, from.column + by) });
+const beside =
+  (by: number) =>
+  (from: Place): Place => ({ ...from, column: Math.max(0, from.column + by) });
 
 export function GridCell(props: Props) {
   const { id, column, index, shown, problem, pending, computed, selected, active, editing } = props;
   const look = [
-    'relative truncate px-2 leading-[20px]',
+    'relative px-2 leading-[20px]',
+    computed ? 'whitespace-nowrap' : 'truncate',
     column.numeric ? 'text-right tabular' : '',
     problem ? 'bg-madder-wash text-madder border-b-2 border-madder' : pending ? 'border-l-2 border-kelp' : '',
-    active && editing === null ? 'outline-ink group-focus:outline group-focus:outline-[1.5px] outline-offset-[-1.5px] bg-sheet' : selected && !active ? 'bg-sunk' : '',
+    active && editing === null
+      ? 'outline-ink group-focus:outline group-focus:outline-[1.5px] outline-offset-[-1.5px] bg-sheet'
+      : selected && !active
+        ? 'bg-sunk'
+        : '',
     computed ? 'cursor-default' : 'cursor-cell',
   ].join(' ');
   return (
@@ -70,7 +77,8 @@ function CellInput({ id, column, editing, onType, onKeep, onPutBack }: Props & {
   const problem = column.read(editing);
   function onKey(event: KeyboardEvent): void {
     event.stopPropagation();
-    if (event.key === 'Enter') onKeep(event.shiftKey ? (from) => ({ ...from, row: Math.max(0, from.row - 1) }) : below);
+    if (event.key === 'Enter')
+      onKeep(event.shiftKey ? (from) => ({ ...from, row: Math.max(0, from.row - 1) }) : below);
     else if (event.key === 'Tab') onKeep(beside(event.shiftKey ? -1 : 1));
     else if (event.key === 'Escape') onPutBack();
     else return;

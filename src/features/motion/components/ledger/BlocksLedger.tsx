@@ -26,7 +26,11 @@ export function BlocksLedger({ draft, readOnly }: Props) {
     ...draft.blocks.map((block): GridRow => ({
       id: block.id,
       fields: block,
-      ...(draft.conflict?.rows.has(block.id) ? { tone: 'conflict' } : block.code === code ? { tone: 'in use' } : {}),
+      ...(draft.conflict?.rows.has(block.id)
+        ? { tone: 'conflict' }
+        : block.code === code
+          ? { tone: 'in use' }
+          : {}),
     })),
     ...made.map(([id, row]): GridRow => ({ id, fields: row.base })),
   ];
@@ -49,7 +53,13 @@ export function BlocksLedger({ draft, readOnly }: Props) {
   };
   const display = (column: Column, value: unknown): ReactNode => {
     if (value === null || value === undefined) {
-      return column.key === 'appears_ma' ? <span className="text-ink-3">no known start</span> : column.key === 'disappears_ma' ? <span className="text-ink-3">still present</span> : '';
+      return column.key === 'appears_ma' ? (
+        <span className="text-ink-3">no known start</span>
+      ) : column.key === 'disappears_ma' ? (
+        <span className="text-ink-3">still present</span>
+      ) : (
+        ''
+      );
     }
     if (column.key !== 'evidence') return column.numeric ? number(value as number, 1) : (value as string);
     return (
@@ -72,10 +82,21 @@ export function BlocksLedger({ draft, readOnly }: Props) {
         start={start}
         empty={
           <>
-            No blocks yet. <a className="link" href="import">Import outlines</a>, or draw one on the globe.
+            No blocks yet.{' '}
+            <a className="link" href="import">
+              Import outlines
+            </a>
+            , or draw one on the globe.
           </>
         }
-        onChanges={(changes, ids) => draft.change('blocks', BLOCK_COLUMNS, changes, ids.map((id) => ({ id, base: BLANK_BLOCK })))}
+        onChanges={(changes, ids) =>
+          draft.change(
+            'blocks',
+            BLOCK_COLUMNS,
+            changes,
+            ids.map((id) => ({ id, base: BLANK_BLOCK })),
+          )
+        }
         onEditing={(cell) => setEditing(cell !== null)}
         onDelete={(ids) => draft.remove('blocks', ids)}
         onAdd={add}

@@ -16,14 +16,24 @@ export function DirectionsLedger() {
       .sort((a, b) => a.age - b.age)
       .map((datum) => {
         const site = scene.directions.find(({ id }) => id === datum.id)!;
-        const point = { block: code, lat: site.lat, lon: site.lon, name: site.site, subject: site.site, plural: false };
+        const point = {
+          block: code,
+          lat: site.lat,
+          lon: site.lon,
+          name: site.site,
+          subject: site.site,
+          plural: false,
+        };
         return { datum, site, predicted: latitudeAt(model, point, heldStill, datum.age)?.lat ?? null };
       });
   }, [scene.directions, model, code, heldStill]);
   if (rows.length === 0) {
     return (
       <p className="t-body text-ink-2 grow px-3.5 py-3">
-        {code ? 'No directions on this block yet.' : 'Select a block to see its directions.'} <a className="link" href="import">Import</a>
+        {code ? 'No directions on this block yet.' : 'Select a block to see its directions.'}{' '}
+        <a className="link" href="import">
+          Import
+        </a>
       </p>
     );
   }
@@ -44,7 +54,10 @@ export function DirectionsLedger() {
           {rows.map(({ datum, site, predicted }) => {
             const outside = predicted !== null && (predicted < datum.lower || predicted > datum.upper);
             return (
-              <tr key={datum.id} className="border-rule h-[21px] border-b [&>td]:px-2 [&>td:not(:first-child)]:text-right [&>td:not(:first-child)]:tabular">
+              <tr
+                key={datum.id}
+                className="border-rule [&>td:not(:first-child)]:tabular h-[21px] border-b [&>td]:px-2 [&>td:not(:first-child)]:text-right"
+              >
                 <td>
                   <button className="hover:underline" onClick={() => setAge(store, datum.age, scene.oldest)}>
                     {datum.site}
@@ -58,7 +71,9 @@ export function DirectionsLedger() {
                 <td>{number(datum.lower, 1)}</td>
                 <td>{number(datum.upper, 1)}</td>
                 <td>{predicted === null ? 'none' : number(predicted, 1)}</td>
-                <td className={outside ? 'text-ochre-ink font-semibold' : ''}>{predicted === null ? '' : signed(datum.lat - predicted, 1)}</td>
+                <td className={outside ? 'text-ochre-ink font-semibold' : ''}>
+                  {predicted === null ? '' : signed(datum.lat - predicted, 1)}
+                </td>
               </tr>
             );
           })}

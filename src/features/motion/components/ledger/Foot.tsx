@@ -37,8 +37,13 @@ function Standing({ draft, readOnly }: { readonly draft: Draft; readonly readOnl
   if (conflict) return <span className="text-madder">{conflict.words}</span>;
   if (refused) return <span className="text-madder">{refused}</span>;
   if (saving) return <>Saving …</>;
-  const waiting = [...pending.values()].flatMap((row) => Object.values(row.cells)).filter((cell) => cell.problem !== null);
-  if (waiting.length > 0) return <span className="text-madder">{`${count(waiting.length, 'cell')} not saved: ${waiting[0]!.problem}.`}</span>;
+  const waiting = [...pending.values()]
+    .flatMap((row) => Object.values(row.cells))
+    .filter((cell) => cell.problem !== null);
+  if (waiting.length > 0)
+    return (
+      <span className="text-madder">{`${count(waiting.length, 'cell')} not saved: ${waiting[0]!.problem}.`}</span>
+    );
   if (pending.size > 0) return <>A new row is saved once its block, reference, age and pole are filled in.</>;
   return <span className="text-ink-2">{readOnly ?? 'Type in a cell, or paste from a spreadsheet.'}</span>;
 }
@@ -59,10 +64,18 @@ function Ways({ draft, add, addLabel }: Pick<Props, 'draft' | 'add' | 'addLabel'
       <button className="button min-h-6 px-2" onClick={add}>
         {addLabel}
       </button>
-      <button className="button min-h-6 px-2" onClick={() => draft.undo('undo')} aria-keyshortcuts="Control+Z">
+      <button
+        className="button min-h-6 px-2"
+        onClick={() => draft.undo('undo')}
+        aria-keyshortcuts="Control+Z"
+      >
         Undo
       </button>
-      <button className="button min-h-6 px-2" onClick={() => draft.undo('redo')} aria-keyshortcuts="Control+Shift+Z">
+      <button
+        className="button min-h-6 px-2"
+        onClick={() => draft.undo('redo')}
+        aria-keyshortcuts="Control+Shift+Z"
+      >
         Redo
       </button>
     </p>

@@ -47,7 +47,12 @@ export function LedgerDesk({ slug, version, readOnly }: Props) {
 
   return (
     <section aria-label="Ledger" className="flex h-full min-h-0 flex-col">
-      <div role="tablist" aria-label="Tables" className="border-rule flex shrink-0 gap-4 overflow-x-auto border-b px-3.5" onKeyDown={onTabKey}>
+      <div
+        role="tablist"
+        aria-label="Tables"
+        className="border-rule flex shrink-0 gap-4 overflow-x-auto border-b px-3.5"
+        onKeyDown={onTabKey}
+      >
         {TABS.map((name) => (
           <button
             key={name}
@@ -62,9 +67,16 @@ export function LedgerDesk({ slug, version, readOnly }: Props) {
             {names[name][0]} <span className="text-ink-2 font-normal">{names[name][1]}</span>
           </button>
         ))}
-        {readOnly && <span className="t-body text-ink-2 ml-auto self-center whitespace-nowrap">read only</span>}
+        {readOnly && (
+          <span className="t-body text-ink-2 ml-auto self-center whitespace-nowrap">read only</span>
+        )}
       </div>
-      <div id="ledger-panel" role="tabpanel" aria-labelledby={`ledger-tab-${tab}`} className="flex min-h-0 grow flex-col">
+      <div
+        id="ledger-panel"
+        role="tabpanel"
+        aria-labelledby={`ledger-tab-${tab}`}
+        className="flex min-h-0 grow flex-col"
+      >
         {tab === 'rotations' && <RotationsLedger draft={draft} readOnly={readOnly} />}
         {tab === 'blocks' && <BlocksLedger draft={draft} readOnly={readOnly} />}
         {tab === 'directions' && <DirectionsLedger />}

@@ -64,8 +64,16 @@ export function RotationsLedger({ draft, readOnly }: Props) {
   );
 
   const display = (column: Column, value: unknown, row: GridRow): ReactNode => {
+    if (row.computed && column.key === 'evidence') return 'between the rows around it';
     if (value === null || value === undefined || value === '') return '';
-    if (column.key === 'age_ma') return ageValue(value as number);
+    if (column.key === 'age_ma') {
+      const used = row.tone === 'in use' || row.computed;
+      return used ? (
+        <span className="font-semibold">{ageValue(value as number)}</span>
+      ) : (
+        ageValue(value as number)
+      );
+    }
     if (column.numeric)
       return number(
         value as number,
@@ -92,6 +100,9 @@ export function RotationsLedger({ draft, readOnly }: Props) {
         readOnly={readOnly !== null}
         display={display}
         start={start}
+        inSight={
+          rows.find((row) => row.computed)?.id ?? rows.find((row) => row.tone === 'in use')?.id ?? null
+        }
         empty={<Empty name={block?.name ?? null} canAdd={readOnly === null} onAdd={() => add(null)} />}
         onChanges={(changes, made) =>
           draft.change(
@@ -179,7 +190,7 @@ function useRows(draft: Draft, code: string | null): readonly GridRow[] {
         relative_to: link.relative_to,
         age_ma: age,
         ...pole,
-        source: 'between the rows around it',
+        source: null,
       };
       const at = ordered.findIndex((row) => row.id === link.older.id);
       ordered.splice(at < 0 ? ordered.length : at, 0, { id: 'computed', fields, computed: true });
@@ -244,7 +255,7 @@ function useUncertaintyColumn(code: string | null): readonly ShownColumn[] {
         </span>
       );
     };
-    return [{ key: 'reach', heading: '95 %', unit: 'km', width: '62px', show }];
+    return [{ key: 'reach', heading: '95 %', unit: 'km', width: '50px', after: 'angle_deg', show }];
   }, [scene, model, code]);
 }
 
@@ -292,15 +303,20 @@ function EditingWords({ editing, draft }: WordsProps) {
   if (!row) return <>A new row.</>;
   const block = findSceneBlock(scene, row.block);
   const point = block && ownPoint(scene, block);
-  const km = preview && draft.model && point ? movedKm(draft.model, preview, point, row.age_ma, heldStill) : null;
+  const km =
+    preview && draft.model && point ? movedKm(draft.model, preview, point, row.age_ma, heldStill) : null;
   const was = (row as unknown as Record<string, unknown>)[editing.key];
-  const before = was === null || was === '' ? 'was blank' : `was ${typeof was === 'number' ? number(was, decimals(was)) : String(was)}`;
+  const before =
+    was === null || was === ''
+      ? 'was blank'
+      : `was ${typeof was === 'number' ? number(was, decimals(was)) : String(was)}`;
   return (
     <>
       {column.heading} at {ageValue(row.age_ma)} Ma: {before}.{' '}
       {km !== null && (
         <>
-          Moves {nameOf(row.block)} <strong className="font-semibold">{number(km)} km</strong> at {ageValue(row.age_ma)} Ma.
+          Moves {nameOf(row.block)} <strong className="font-semibold">{number(km)} km</strong> at{' '}
+          {ageValue(row.age_ma)} Ma.
         </>
       )}
     </>
