@@ -1,0 +1,65 @@
+import { DEMO, expect, signInAs, test, type DemoRole } from './support';
+
+for (const [role, name] of [
+  ['lead', 'Mara Kell'],
+  ['researcher', 'Tobin Ashgrove'],
+  ['reviewer', 'Ines Harrowgate'],
+  ['instructor', 'Bram Teasdale'],
+  ['admin', 'Wilma Oake'],
+] as const satisfies readonly (readonly [DemoRole, string])[]) {
+  test(`signs in and out as ${role}`, async ({ page }) => {
+    await signInAs(page, role);
+    await page.locator('details.cell summary', { hasText: name }).click();
+    await expect(page.getByText(`${name.toLowerCase().replace(' ', '.')}@lantern.example`)).toBeVisible();
+    await page.getByRole('button', { name: 'Sign out' }).click();
+    await page.goto('/account');
+    await expect(page).toHaveURL(/\/sign-in/);
+  });
+}
+
+test('a wrong password is said at the form, and what was typed stays', async ({ page }) => {
+  await page.goto('/sign-in');
+  await page.getByLabel('E-mail').fill('mara.kell@lantern.example');
+  await page.getByLabel('Password', { exact: true }).fill('not this one');
+  await page.getByRole('button', { name: 'Sign in', exact: true }).click();
+  await expect(page.getByRole('alert')).toContainText('E-mail and password do not match');
+  await expect(page.getByLabel('E-mail')).toHaveValue('mara.kell@lantern.example');
+});
+
+test('a forgotten password is set anew by the link in the outbox', async ({ page }) => {
+  await page.goto('/sign-up');
+  await page.getByLabel('Name, as others see it').fill('Runa Holt');
+  await page.getByLabel('E-mail').fill('runa.holt@example.org');
+  await page.getByLabel('Password', { exact: true }).fill('first password 1');
+  await page.getByRole('button', { name: 'Make the account' }).click();
+  await page.waitForURL('**/projects');
+  await page.context().clearCookies();
+
+  await page.goto('/reset');
+  await page.getByLabel('E-mail').fill('runa.holt@example.org');
+  await page.getByRole('button', { name: 'Send the link' }).click();
+  await expect(page.getByRole('status')).toContainText('on its way');
+
+  await signInAs(page, 'admin', '/admin');
+  await page.locator('summary', { hasText: 'runa.holt@example.org' }).first().click();
+  const link = await page.getByRole('link', { name: /\/reset\// }).first().getAttribute('href');
+  await page.context().clearCookies();
+  await page.goto(link!);
+  await page.getByLabel('New password').fill('second password 2');
+  await page.getByRole('button', { name: 'Set the password' }).click();
+  await expect(page.getByText('The new password is set')).toBeVisible();
+  await page.getByLabel('E-mail').fill('runa.holt@example.org');
+  await page.getByLabel('Password', { exact: true }).fill('second password 2');
+  await page.getByRole('button', { name: 'Sign in', exact: true }).click();
+  await page.waitForURL('**/projects');
+});
+
+test('another team’s project is not to be found', async ({ page }) => {
+  await page.goto('/projects/none-of-yours/workbench');
+  await expect(page.getByRole('heading', { name: 'Nothing here' })).toBeVisible();
+});
+
+test('an instructor sees no way to edit, and is told why', async ({ page }) => {
+  await signInAs(page, 'instructor', `${DEMO}/workbench`);
+  await expect(page.getByRole('region', { name: 'Ledger' }).or(page.getByLabel('Ledger'))).toContainText('read only');
+});
