@@ -12,7 +12,20 @@ export default defineConfig({
   // The build-time host list cannot know a deployment's name; src/middleware.ts checks the
   // origin of every unsafe request instead, JSON included.
   security: { checkOrigin: false },
-  experimental: { csp: true },
+  experimental: {
+    csp: {
+      directives: [
+        "default-src 'self'",
+        "img-src 'self' data: blob:",
+        "font-src 'self'",
+        "connect-src 'self'",
+        "object-src 'none'",
+        "base-uri 'none'",
+        "form-action 'self'",
+        "frame-ancestors 'none'",
+      ],
+    },
+  },
   vite: {
     plugins: [tailwindcss(), nodeWorker()],
     ssr: { external: ['@electric-sql/pglite', '@node-rs/argon2', '@resvg/resvg-js', 'pdfkit', 'piscina'] },
