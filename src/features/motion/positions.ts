@@ -1,0 +1,38 @@
+import type { Feature, FeatureCollection, MultiPolygon, Position } from 'geojson';
+import { poseAt } from '~/kernel/rotations/circuit';
+import { rotate } from '~/kernel/rotations/quaternion';
+import type { Quaternion, Vector3 } from '~/kernel/rotations/types';
+import { ringArea } from '~/kernel/sphere/area';
+import { writeRing } from '~/kernel/sphere/ring';
+import { outlinesOf, type LoadedOutline } from './outlines';
+import { flatten } from './plate-carree';
+import type { Motion } from './queries';
+
+/** The outlines that hold at an age, where they lay then, as GeoJSON (RFC 7946). @throws KernelError as `poseAt` */
+export async function positionsOf(
+  { state, model, relative_to }: Motion,
+  age_ma: number,
+): Promise<FeatureCollection> {
+  const outlines = (await outlinesOf(state)).filter(({ holdsAt }) => holdsAt(age_ma));
+  const features: Feature[] = [];
+  for (const { code, name, kind, evidence } of state.blocks) {
+    const pose = poseAt(model, code, age_ma, relative_to);
+    if (pose.status !== 'placed') continue;
+    for (const outline of outlines.filter(({ block }) => block === code)) {
+      const geometry = flatten(carried(outline, pose.quaternion));
+      const properties = { block: code, name, kind, evidence, age_ma, relative_to, version: state.version };
+      if (geometry) features.push({ type: 'Feature', properties, geometry });
+    }
+  }
+  return { type: 'FeatureCollection', features };
+}
+
+function carried({ parts, inside }: LoadedOutline, q: Quaternion): MultiPolygon {
+  const coordinates = parts.map(({ rings }) =>
+    rings.map((ring, i): Position[] => {
+      const clockwise = ringArea(ring) > 0 === (i === 0 && inside === 'smaller') ? ring.toReversed() : ring;
+      return writeRing(clockwise.map((v: Vector3) => rotate(q, v)));
+    }),
+  );
+  return { type: 'MultiPolygon', coordinates };
+}
