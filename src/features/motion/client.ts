@@ -1,6 +1,7 @@
 /** What the workbench asks of the server, as queries: outlines once by hash, the rest by project and version. */
 import { keepPreviousData, QueryClient, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo } from 'react';
+import { type Model } from '../../kernel/rotations/types';
 import { type Block, type Direction, type Feature } from '../ledger/contract';
 import { type Project } from '../projects/contract';
 import { type MotionsAnswer } from './contract';
@@ -97,6 +98,12 @@ interface Wanted {
 
 const nameOf = ({ sha256, inside }: Wanted): string => `${sha256} ${inside}`;
 
+/** The geometries that a state's outlines and features name. */
+export const wantedBy = (blocks: readonly Block[], features: readonly Feature[]): Wanted[] => [
+  ...blocks.flatMap(({ outlines }) => outlines.map(({ sha256, inside }) => ({ sha256, inside }))),
+  ...features.map(({ sha256 }) => ({ sha256, inside: 'smaller' as const })),
+];
+
 interface Shapes {
   readonly shapes: ReadonlyMap<string, Decoded>;
   /** Those that could not be fetched. */
@@ -163,12 +170,7 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
   const features = useTable<Feature>(slug, version, 'features');
   const directions = useTable<Direction>(slug, version, 'directions');
   const wanted = useMemo(
-    (): Wanted[] => [
-      ...(blocks.data ?? []).flatMap(({ outlines }) =>
-        outlines.map(({ sha256, inside }) => ({ sha256, inside })),
-      ),
-      ...(features.data ?? []).map(({ sha256 }) => ({ sha256, inside: 'smaller' as const })),
-    ],
+    () => wantedBy(blocks.data ?? [], features.data ?? []),
     [blocks.data, features.data],
   );
   const { shapes, waiting, lost } = useShapes(wanted);
@@ -186,9 +188,10 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
   };
 }
 
-function assemble(
+/** A scene from lists and the shapes that have arrived. */
+export function assemble(
   title: string,
-  model: MotionsAnswer,
+  model: Model,
   blocks: readonly Block[],
   features: readonly Feature[],
   directions: readonly Direction[],

@@ -20,6 +20,10 @@ export function shortName(block: Named): string {
 /** On the map "terrane", "block" and "microcontinent" go without saying; a craton, arc or plateau is named as one. */
 export const mapName = (block: Named): string => block.name.replace(/ (terrane|block|microcontinent)$/, '');
 
+/** The shortest name that still says which block; an arc or plateau keeps its word. */
+export const blockName = (block: Named): string =>
+  block.name.replace(/ (craton|terrane|block|microcontinent)$/, '');
+
 /** "MK" for "Mara Kell". */
 export function initials(name: string): string {
   const words = name.trim().split(/\s+/);

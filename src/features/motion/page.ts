@@ -1,10 +1,11 @@
 /** What the workbench's page reads before it is drawn. */
-import { loadState } from '~/features/ledger/state';
+import { loadState, type State } from '~/features/ledger/state';
 import { type Project } from '~/features/projects/contract';
 import { may } from '~/server/access';
 import { openPage } from '~/server/page';
 import { Problem } from '~/server/problem';
 import { type WorkbenchIslandProps } from './components/WorkbenchIsland';
+import { type Payload } from './components/pictures/payload';
 import { modelOf } from './model';
 
 /** Larger states than this are fetched by the island, so that the page itself stays light. */
@@ -45,3 +46,12 @@ export async function openWorkbench(
     throw error;
   }
 }
+
+/** What the picture islands draw from: one state of a project as plain data. */
+export const payloadOf = (title: string, state: State): Payload => ({
+  title,
+  model: modelOf(state),
+  blocks: state.blocks,
+  features: state.features,
+  directions: state.directions,
+});

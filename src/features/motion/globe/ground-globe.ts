@@ -24,11 +24,15 @@ const EDGE = 0.02;
 const COARSE = 0.9;
 const FINE = 0.3;
 
+/** Radius of the whole globe on a canvas, CSS pixels, with room for its labels. */
+export function baseRadius(width: number, height: number): number {
+  const side = Math.min(width, height);
+  return Math.max(40, side / 2 - (side < SMALL.side ? SMALL.margin : MARGIN));
+}
+
 export function discOf({ zoom, width, height, scale, fit }: GroundOptions): Disc {
-  const half = Math.min(width, height) / 2;
-  const radius =
-    (fit ? fit * half : Math.max(40, half - (2 * half < SMALL.side ? SMALL.margin : MARGIN))) * zoom * scale;
-  return { cx: (width / 2) * scale, cy: (height / 2) * scale, radius };
+  const base = fit ? (fit * Math.min(width, height)) / 2 : baseRadius(width, height);
+  return { cx: (width / 2) * scale, cy: (height / 2) * scale, radius: base * zoom * scale };
 }
 
 export function globeGround(options: GroundOptions, clipper: Clipper): Ground {

@@ -15,30 +15,28 @@ const SHORT: Record<string, string> = { Oligocene: 'Oligo.', Paleocene: 'Paleo.'
 const epochName = (name: string): string =>
   /^(Late|Middle|Early) /.exec(name)?.[1]?.replace('Middle', 'Mid') ?? name;
 
-export function AgeColumn({
-  layout,
-  strip,
-  compact = false,
-}: {
-  layout: LogLayout;
-  strip: Strip;
-  compact?: boolean;
-}) {
+interface Props {
+  readonly layout: LogLayout;
+  readonly strip: Strip;
+  readonly title?: string;
+  readonly unit?: string;
+}
+
+export function AgeColumn({ layout, strip, title = 'Age', unit = 'Ma' }: Props) {
   const { oldest, head } = layout;
   const step = axisStep(oldest);
-  const shift = strip.x - (compact ? 4 : 0);
   const ages = Array.from({ length: Math.floor((oldest / step) * MINOR) + 1 }, (_, i) => (i * step) / MINOR);
   return (
     <g
-      transform={`translate(${shift} 0)`}
+      transform={`translate(${strip.x} 0)`}
       role="group"
       aria-label={`Age in Ma, ${CHRONOSTRATIGRAPHIC_CHART.edition}`}
     >
       <text x={12} y={20} className="t-head fill-ink">
-        Age
+        {title}
       </text>
       <text x={12} y={35} className="t-label fill-ink-2">
-        Ma
+        {unit}
       </text>
       {
         <text x={12} y={Math.min(54, head - 8)} className="t-tick fill-ink-2">

@@ -13,6 +13,7 @@ import { useSize } from '../use-size';
 import { AgeColumn } from './AgeColumn';
 import { AgeLine } from './AgeLine';
 import { latitudeAxis, LatitudeStrip } from './LatitudeStrip';
+import { Reach } from './Reach';
 import { RotationsStrip } from './RotationsStrip';
 import { speedAxis, SpeedStrip } from './SpeedStrip';
 import { useNames } from '../use-names';
@@ -20,6 +21,9 @@ import { useNames } from '../use-names';
 interface Props {
   readonly strips?: readonly StripId[];
   readonly head?: number;
+  /** id of an element with a globe that the age line runs on to. */
+  readonly reachTo?: string | undefined;
+  readonly hint?: string;
   /** Size before the page has been measured, and where scripts don't run. */
   readonly first?: { readonly width: number; readonly height: number };
 }
@@ -27,7 +31,7 @@ interface Props {
 const ALL: readonly StripId[] = ['age', 'rotations', 'latitude', 'speed'];
 const FIRST = { width: 605, height: 554 };
 
-export function Log({ strips = ALL, head = HEAD, first = FIRST }: Props) {
+export function Log({ strips = ALL, head = HEAD, first = FIRST, reachTo, hint = '' }: Props) {
   const { store, scene, model, point } = useBench();
   const [box, { width, height }] = useSize<HTMLDivElement>(first);
   const handle = useRef<SVGGElement>(null);
@@ -83,7 +87,7 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST }: Props) {
   const subject = point?.name ?? (point ? coordinates(point.lat, point.lon, 0) : 'nothing selected');
   const [age, rotations, latitude, speed] = ALL.map(strip);
   return (
-    <div ref={box} className="relative size-full min-h-0 overflow-hidden">
+    <div ref={box} className={`relative size-full min-h-0 ${reachTo ? '' : 'overflow-hidden'}`}>
       <svg
         width={width}
         height={height}
@@ -139,6 +143,7 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST }: Props) {
           handle={handle}
         />
       </svg>
+      {reachTo && <Reach layout={layout} to={reachTo} hint={hint} />}
     </div>
   );
 }
