@@ -14,5 +14,5 @@ for (const entry of fs.readdirSync(folder, { recursive: true, withFileTypes: tru
   if (bytes.length < LEAST_BYTES) continue;
   const quality = { params: { [constants.BROTLI_PARAM_QUALITY]: 9 } };
   fs.writeFileSync(`${file}.br`, brotliCompressSync(bytes, quality));
-  fs.writeFileSync(`${file}.gz`, await gzip(bytes, { level: 9 }));
+  fs.writeFileSync(`${file}.gz`, gzipSync(bytes, { level: 9 }));
 }

@@ -7,6 +7,7 @@ import {
   useCallback,
   useEffect,
   useId,
+  useLayoutEffect,
   useMemo,
   useRef,
   useState,
@@ -99,6 +100,12 @@ export function Grid(props: Props) {
     estimateSize: () => ROW,
     overscan: 12,
   });
+  const height = virtual.getTotalSize();
+  // Set by script: the policy for styles refuses style attributes in what the server sends.
+  useLayoutEffect(() => {
+    grid.current?.style.setProperty('--columns', template);
+    grid.current?.style.setProperty('--rows', `${height}px`);
+  }, [template, height]);
   const size = { rows: rows.length, columns: columns.length };
   const ids = useMemo(() => rows.filter((row) => !row.computed).map((row) => row.id), [rows]);
 
@@ -255,11 +262,11 @@ export function Grid(props: Props) {
         onCopy={onCopy}
         onPaste={onPaste}
       >
-        <Heading slots={slots} template={template} />
+        <Heading slots={slots} />
         {rows.length === 0 ? (
           <div className="t-body text-ink-2 px-3.5 py-3">{props.empty}</div>
         ) : (
-          <div role="rowgroup" className="relative" style={{ height: virtual.getTotalSize() }}>
+          <div role="rowgroup" className="relative h-(--rows)">
             {items.map((item) => {
               const row = rows[item.index]!;
               return (
@@ -269,7 +276,6 @@ export function Grid(props: Props) {
                   aria-rowindex={item.index + 2}
                   className={rowClass(row)}
                   style={{
-                    gridTemplateColumns: template,
                     height: item.size,
                     transform: `translateY(${item.start}px)`,
                   }}
@@ -324,7 +330,7 @@ export function Grid(props: Props) {
 }
 
 function rowClass(row: GridRow): string {
-  const base = 'absolute inset-x-0 top-0 grid border-b border-rule';
+  const base = 'absolute inset-x-0 top-0 grid grid-cols-(--columns) border-b border-rule';
   const tone = row.computed
     ? ' bg-ochre-wash text-ochre-ink font-medium'
     : row.tone === 'conflict'
@@ -347,15 +353,10 @@ function slotsOf(columns: readonly Column[], shown: readonly ShownColumn[]): rea
   ];
 }
 
-function Heading({ slots, template }: { readonly slots: readonly Slot[]; readonly template: string }) {
+function Heading({ slots }: { readonly slots: readonly Slot[] }) {
   return (
     <div role="rowgroup" className="bg-paper sticky top-0 z-10">
-      <div
-        role="row"
-        aria-rowindex={1}
-        className="border-frame grid border-b"
-        style={{ gridTemplateColumns: template }}
-      >
+      <div role="row" aria-rowindex={1} className="border-frame grid grid-cols-(--columns) border-b">
         {slots.map(({ of, column }, i) => (
           <div
             key={of.key}
