@@ -127,7 +127,7 @@ export function run(which: 'ours' | 'd3', vertices: number, frames: number, size
       ({
         ...body.geometry,
         coordinates: body.geometry.coordinates.map((r) => [...r].reverse()),
-      }) as GeoPermissibleObjects,
+      }),
   );
   const poses = new Float64Array(9 * BLOCKS);
   const turned = new Float64Array(9);

@@ -6,6 +6,7 @@ import type { Carried, CarriedBlock } from './carried';
 import { pathSvg, type DrawnPath } from './drift';
 import { graticuleLabels, graticuleSvg } from './graticule';
 import { COAST, INK, OUTLINE, PAPER } from './palette';
+import { pathWriter } from './path-writer';
 import { element, textElement } from './svg';
 import { arrowSvg, type Arrow } from './velocity';
 import { visible } from './visible';
@@ -20,12 +21,13 @@ export interface MapRequest {
 
 export function mapSvg({ carried, projection, layers, path, arrows }: MapRequest): string {
   const draw = geoPath(projection).digits(2);
+  const outline = pathWriter(projection);
   const has = (layer: Layer): boolean => layers.includes(layer);
   const sphere = draw({ type: 'Sphere' }) ?? '';
   const parts = [
     element('path', { class: 'sphere', d: sphere, fill: PAPER }),
     has('graticule') ? graticuleSvg(projection) : '',
-    ...carried.blocks.map((block) => blockSvg(block, draw(block.area) ?? '')),
+    ...carried.blocks.map((block) => blockSvg(block, outline(block.area))),
     has('coasts') ? coastsSvg(carried, (line) => draw(line) ?? '') : '',
     has('velocity') ? arrows.map((arrow) => arrowSvg(arrow, projection)).join('') : '',
     path && has('path') ? pathSvg(path, projection, has('ellipse')) : '',

@@ -22,7 +22,9 @@ export const GET = projectRoute(
     const state = await loadState(access, query.version);
     const { type, body } = await exportFile(state, name);
     const shared = access.project.visibility === 'public';
-    const lasting: Record<string, string> = state.sha256 ? { 'Cache-Control': immutable(shared), ETag: `"${state.sha256}"` } : {};
+    const lasting: Record<string, string> = state.sha256
+      ? { 'Cache-Control': immutable(shared), ETag: `"${state.sha256}"` }
+      : {};
     return attachment(body, type, name, lasting);
   },
 );
