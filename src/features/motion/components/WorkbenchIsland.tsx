@@ -11,6 +11,7 @@ import { followInAddress, fromQuery } from '../store/link';
 import { createWorkbench, type Linked } from '../store/state';
 import { LedgerDesk } from './ledger/LedgerDesk';
 import { type Head } from './title/head';
+import { PhoneHint } from './use-media';
 import { Waiting } from './Waiting';
 import { Workbench } from './Workbench';
 
@@ -25,6 +26,8 @@ export interface WorkbenchIslandProps {
   /** Why the ledger cannot be edited; null where it may. */
   readonly readOnly: string | null;
   /** Lists read with the page; they spare the first requests. */
+  /** True where the request came from a phone. */
+  readonly phone?: boolean;
   readonly initial?: {
     readonly motions: MotionsAnswer;
     readonly tables: Readonly<Record<'blocks' | 'features' | 'directions', readonly unknown[]>>;
@@ -44,7 +47,9 @@ export default function WorkbenchIsland(props: WorkbenchIslandProps) {
   });
   return (
     <QueryClientProvider client={client}>
-      <Loaded {...props} />
+      <PhoneHint value={props.phone ?? false}>
+        <Loaded {...props} />
+      </PhoneHint>
     </QueryClientProvider>
   );
 }

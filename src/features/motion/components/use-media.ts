@@ -1,7 +1,11 @@
-/** Whether a media query holds; on the server it does not. */
-import { useCallback, useSyncExternalStore } from 'react';
+/** Whether a media query holds; on the server, what the browser hinted. */
+import { createContext, useCallback, useContext, useSyncExternalStore } from 'react';
+
+/** True where the request came from a phone (Sec-CH-UA-Mobile). */
+export const PhoneHint = createContext(false);
 
 export function useMedia(query: string): boolean {
+  const hint = useContext(PhoneHint);
   const subscribe = useCallback(
     (listener: () => void) => {
       const media = window.matchMedia(query);
@@ -13,7 +17,7 @@ export function useMedia(query: string): boolean {
   return useSyncExternalStore(
     subscribe,
     () => window.matchMedia(query).matches,
-    () => false,
+    () => query === PHONE && hint,
   );
 }
 

@@ -57,7 +57,8 @@ function settings(pen: Pen, { name, extent, selected }: NameWish): Setting[] {
       at(one, x, extent.top - gap),
       at(one, x, extent.bottom + gap),
     ]);
-    return [...beside.slice(1, 4), ...flush, beside[0] as Setting, ...beside.slice(4), ...within];
+    const above = [1, -1].map((side) => at(one, middle + side * (w1 / 2 + 4 * scale), extent.top - gap));
+    return [...beside.slice(1, 4), ...flush, ...above, beside[0] as Setting, ...beside.slice(4), ...within];
   }
   if (w1 < room * 0.8 && tall > 3 * LINE * scale) return [...within, ...beside];
   if (width(two) < room * 0.9 && tall > 4 * LINE * scale) return [...narrow, ...beside];

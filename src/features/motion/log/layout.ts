@@ -7,7 +7,14 @@ export interface Strip {
   readonly width: number;
 }
 
+/**
+ * How the headings stand: in full; low, title and unit on one line, for a phone; plain, without legends or rule, for
+ * reading only, the chart's edition below its column.
+ */
+export type Heading = 'full' | 'low' | 'plain';
+
 export interface LogLayout {
+  readonly heading: Heading;
   readonly width: number;
   readonly height: number;
   /** Height of the headings; the rule below them. */
@@ -19,11 +26,10 @@ export interface LogLayout {
   readonly strips: readonly Strip[];
 }
 
-export const HEAD = 85;
-/** Of a lone strip on a phone: title and unit on one line. */
-export const COMPACT_HEAD = 62;
+/** Height of each kind of heading. */
+export const HEADS: Readonly<Record<Heading, number>> = { full: 85, low: 62, plain: 57 };
 const BELOW_HEAD = 7;
-const FOOT = 12;
+const FOOT: Readonly<Record<Heading, number>> = { full: 12, low: 12, plain: 26 };
 const AGE = 88;
 export const LINK_PITCH = 43;
 const LINK_MARGIN = 12;
@@ -33,13 +39,23 @@ interface Asked {
   readonly width: number;
   readonly height: number;
   readonly oldest: number;
+  readonly heading?: Heading;
+  /** Instead of the heading's own height. */
   readonly head?: number;
   readonly links: number;
   readonly strips: readonly StripId[];
 }
 
 /** Latitude takes what the others leave; a lone strip takes all. */
-export function layoutOf({ width, height, oldest, head = HEAD, links, strips }: Asked): LogLayout {
+export function layoutOf({
+  width,
+  height,
+  oldest,
+  heading = 'full',
+  head = HEADS[heading],
+  links,
+  strips,
+}: Asked): LogLayout {
   const room = width - AGE;
   const others = strips.filter((id) => id !== 'age');
   const fixed: Partial<Record<StripId, number>> = {
@@ -55,7 +71,16 @@ export function layoutOf({ width, height, oldest, head = HEAD, links, strips }: 
     x += strip.width;
     return strip;
   });
-  return { width, height, head, top: head + BELOW_HEAD, bottom: height - FOOT, oldest, strips: placed };
+  return {
+    heading,
+    width,
+    height,
+    head,
+    top: head + BELOW_HEAD,
+    bottom: height - FOOT[heading],
+    oldest,
+    strips: placed,
+  };
 }
 
 /** To a hundredth of a pixel: server and browser may differ in a sine's last digit, and both draw the same page. */

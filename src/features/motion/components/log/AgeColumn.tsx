@@ -23,7 +23,7 @@ interface Props {
 }
 
 export function AgeColumn({ layout, strip, title = 'Age', unit = 'Ma' }: Props) {
-  const { oldest, head } = layout;
+  const { oldest, head, heading } = layout;
   const step = axisStep(oldest);
   const ages = Array.from({ length: Math.floor((oldest / step) * MINOR) + 1 }, (_, i) => (i * step) / MINOR);
   return (
@@ -39,7 +39,11 @@ export function AgeColumn({ layout, strip, title = 'Age', unit = 'Ma' }: Props) 
         {unit}
       </text>
       {
-        <text x={12} y={Math.min(54, head - 8)} className="t-tick fill-ink-2">
+        <text
+          x={12}
+          y={heading === 'plain' ? layout.height - 6 : Math.min(54, head - 8)}
+          className="t-tick fill-ink-2"
+        >
           {CHRONOSTRATIGRAPHIC_CHART.edition}
         </text>
       }

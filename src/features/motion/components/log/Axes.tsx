@@ -1,7 +1,7 @@
 /** The ruled ground of a strip: its heading, the grid of ages, and a value axis along the top. */
 import { type ReactNode } from 'react';
 import { number } from '../../format';
-import { HEAD, hundredth, yOf, type LogLayout, type Strip } from '../../log/layout';
+import { hundredth, yOf, type LogLayout, type Strip } from '../../log/layout';
 import { axisStep } from '../../scene/scene';
 
 export interface ValueAxis {
@@ -27,7 +27,7 @@ export function plotOf(strip: Strip, { from, to }: ValueAxis): Plot {
 
 /** On one line where the headings are low. */
 export function StripTitle({ layout, title, unit }: { layout: LogLayout; title: string; unit: ReactNode }) {
-  const low = layout.head < HEAD;
+  const low = layout.heading === 'low';
   return (
     <text x={6} y={20} className="t-head fill-ink">
       {title}

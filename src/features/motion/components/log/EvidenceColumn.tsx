@@ -16,6 +16,8 @@ export function EvidenceColumn({ layout, column, x, width, words = false }: Prop
   const top = y(0);
   const end = y(column.oldest);
   // Where columns stand close together their bars must not touch.
+  // Where no row carries a covariance a ring at each would say nothing more.
+  const rings = words || column.bars.some(({ withoutCovariance }) => !withoutCovariance);
   const overhang = words ? 5 : 3;
   return (
     <g>
@@ -71,7 +73,9 @@ export function EvidenceColumn({ layout, column, x, width, words = false }: Prop
             ) : (
               <path d={`M${x} ${at}h${width + overhang}`} />
             )}
-            {bar.withoutCovariance && <circle cx={x + width + 7.5} cy={at} r={2.3} className="fill-paper" />}
+            {bar.withoutCovariance && rings && (
+              <circle cx={x + width + 7.5} cy={at} r={2.3} className="fill-paper" />
+            )}
           </g>
         );
       })}

@@ -3,7 +3,7 @@ import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
 import { type Observed } from '../../log/observed';
 import { type LatitudeSample } from '../../log/series';
-import { HEAD, yOf, type LogLayout, type Strip } from '../../log/layout';
+import { yOf, type LogLayout, type Strip } from '../../log/layout';
 import { plotOf, StripAxes, StripNote, type ValueAxis } from './Axes';
 
 interface Props {
@@ -42,9 +42,11 @@ export const LatitudeStrip = memo(function LatitudeStrip({
   const y = (age: number) => yOf(layout, age);
   return (
     <StripAxes layout={layout} strip={strip} title="Latitude" unit={`${subject}, °N`} axis={axis}>
-      <g transform={`translate(0 ${layout.head < HEAD ? -15 : 0})`}>
-        <Legend observed={observed.length > 0} />
-      </g>
+      {layout.heading !== 'plain' && (
+        <g transform={`translate(0 ${layout.heading === 'low' ? -15 : 0})`}>
+          <Legend observed={observed.length > 0} />
+        </g>
+      )}
       {curve.map((run, i) => (
         <g key={i}>
           <path d={band(run, x, y)} className="fill-ochre-band" />

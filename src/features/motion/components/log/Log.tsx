@@ -2,7 +2,7 @@
 import { useCallback, useMemo, useRef, type PointerEvent } from 'react';
 import { coordinates, shortAge } from '../../format';
 import { columnsOf, oldestPlaced, usedLinks, type UsedLink } from '../../log/columns';
-import { ageAt, HEAD, layoutOf, type StripId } from '../../log/layout';
+import { ageAt, layoutOf, type Heading, type StripId } from '../../log/layout';
 import { observedOn } from '../../log/observed';
 import { latitudeCurve, speedSteps } from '../../log/series';
 import { rootFrame } from '../../scene/defaults';
@@ -20,7 +20,7 @@ import { useNames } from '../use-names';
 
 interface Props {
   readonly strips?: readonly StripId[];
-  readonly head?: number;
+  readonly heading?: Heading;
   /** id of an element with a globe that the age line runs on to. */
   readonly reachTo?: string | undefined;
   readonly hint?: string;
@@ -31,7 +31,7 @@ interface Props {
 const ALL: readonly StripId[] = ['age', 'rotations', 'latitude', 'speed'];
 const FIRST = { width: 605, height: 554 };
 
-export function Log({ strips = ALL, head = HEAD, first = FIRST, reachTo, hint = '' }: Props) {
+export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hint = '' }: Props) {
   const { store, scene, model, point } = useBench();
   const [box, { width, height }] = useSize<HTMLDivElement>(first);
   const handle = useRef<SVGGElement>(null);
@@ -72,8 +72,8 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST, reachTo, hint = 
 
   const links = columns.length;
   const layout = useMemo(
-    () => layoutOf({ width, height, oldest, head, links, strips }),
-    [width, height, oldest, head, links, strips],
+    () => layoutOf({ width, height, oldest, heading, links, strips }),
+    [width, height, oldest, heading, links, strips],
   );
   const strip = (id: StripId) => layout.strips.find((candidate) => candidate.id === id);
 
@@ -107,7 +107,9 @@ export function Log({ strips = ALL, head = HEAD, first = FIRST, reachTo, hint = 
         onPointerUp={() => setMoving(store, false)}
         onPointerCancel={() => setMoving(store, false)}
       >
-        <line x1={0} x2={width} y1={head - 0.5} y2={head - 0.5} className="stroke-frame" />
+        {heading !== 'plain' && (
+          <line x1={0} x2={width} y1={layout.head - 0.5} y2={layout.head - 0.5} className="stroke-frame" />
+        )}
         {layout.strips.slice(1).map(({ id, x }) => (
           <line key={id} x1={x + 0.5} x2={x + 0.5} y1={8} y2={height} className="stroke-rule" />
         ))}

@@ -2,7 +2,7 @@
 import { useState } from 'react';
 import { Tabs } from '../../../../components/ui/Tabs';
 import { toggleTables } from '../../store/actions';
-import { COMPACT_HEAD, type StripId } from '../../log/layout';
+import { type StripId } from '../../log/layout';
 import { useBench, useWorkbench } from '../bench';
 import { Jump } from '../help/Jump';
 import { PHONE, useMedia } from '../use-media';
@@ -35,7 +35,7 @@ export function LogPanel() {
           className="grow"
         >
           <div className="h-[300px]">
-            <Log strips={shown} head={COMPACT_HEAD} first={{ width: 360, height: 300 }} />
+            <Log strips={shown} heading="low" first={{ width: 360, height: 300 }} />
           </div>
         </Tabs>
       ) : (

@@ -1,7 +1,7 @@
 /** Speed in a frame: steps between rows, never smoothed. */
 import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
-import { HEAD, yOf, type LogLayout, type Strip } from '../../log/layout';
+import { yOf, type LogLayout, type Strip } from '../../log/layout';
 import { type SpeedStep } from '../../log/series';
 import { plotOf, StripAxes, type ValueAxis } from './Axes';
 
@@ -24,9 +24,11 @@ export const SpeedStrip = memo(function SpeedStrip({ layout, strip, steps, frame
   const y = (age: number) => yOf(layout, age);
   return (
     <StripAxes layout={layout} strip={strip} title="Speed" unit="mm/yr" axis={axis}>
-      <text x={6} y={layout.head < HEAD ? 37 : 54} className="t-tick fill-ink-2">
-        {frame}
-      </text>
+      {layout.heading !== 'plain' && (
+        <text x={6} y={layout.heading === 'low' ? 37 : 54} className="t-tick fill-ink-2">
+          {frame}
+        </text>
+      )}
       {runsOf(steps).map((run) => {
         const edge = run.map(
           ({ younger, older, mm_yr }) =>

@@ -31,7 +31,7 @@ export function SvgPatterns() {
           width="6"
           height="6"
           patternUnits="userSpaceOnUse"
-          patternTransform="rotate(-45)"
+          patternTransform="rotate(45)"
         >
           <path className="stroke-rule-2 fill-none" strokeWidth=".7" d="M0 3H6" />
         </pattern>

@@ -14,7 +14,13 @@ const STRIPS = ['age', 'latitude', 'speed'] as const;
 export default function LandingLog({ reachTo, hint = 'drag the line and the blocks move', ...props }: Props) {
   return (
     <PictureFrame {...props}>
-      <Log strips={STRIPS} head={58} first={{ width: 362, height: 900 }} reachTo={reachTo} hint={hint} />
+      <Log
+        strips={STRIPS}
+        heading="plain"
+        first={{ width: 362, height: 900 }}
+        reachTo={reachTo}
+        hint={hint}
+      />
     </PictureFrame>
   );
 }

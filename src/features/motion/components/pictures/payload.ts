@@ -3,7 +3,7 @@ import { useMemo } from 'react';
 import { type Model } from '../../../../kernel/rotations/types';
 import { type Block, type Direction, type Feature } from '../../../ledger/contract';
 import { assemble, useShapes, wantedBy } from '../../client';
-import { complete, homeCentre } from '../../scene/defaults';
+import { complete } from '../../scene/defaults';
 import { type Scene } from '../../scene/scene';
 import { sharedWorkbench, type Layer, type Linked, type WorkbenchStore } from '../../store/state';
 
@@ -46,9 +46,6 @@ export function usePicture({ payload, shown = {}, share }: PictureProps): {
     const { off, ...stated } = shown;
     return sharedWorkbench(share, complete(scene, { ...stated, ...(off ? { off: new Set(off) } : {}) }));
     // Made once: a store outlives the outlines that arrive later.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
   }, [share]);
   return { scene, store, ready: !waiting && shapes.size > 0 };
 }
-
-export { homeCentre };
