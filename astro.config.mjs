@@ -14,6 +14,8 @@ export default defineConfig({
   security: { checkOrigin: false },
   experimental: {
     csp: {
+      // The one style element that react-aria-components puts into the page by script.
+      styleDirective: { hashes: ['sha256-38RhXrc7EdReTKsOm23ZPOCUgniTUUcjky8QOOrQx6o='] },
       directives: [
         "default-src 'self'",
         "img-src 'self' data: blob:",

@@ -47,15 +47,26 @@ const files = sirv(path.join(root, 'dist/client'), {
   dotfiles: false,
   setHeaders(response, pathname) {
     const lasts = pathname.startsWith('/_astro/');
-    response.setHeader('Cache-Control', lasts ? `public, max-age=${YEAR_S}, immutable` : 'public, max-age=3600');
+    response.setHeader(
+      'Cache-Control',
+      lasts ? `public, max-age=${YEAR_S}, immutable` : 'public, max-age=3600',
+    );
     for (const [name, value] of Object.entries(FILE_HEADERS)) response.setHeader(name, value);
   },
 });
 /** Brotli at its quickest level for what is made anew each time; events and pictures are left alone. */
 const compress = compression({ threshold: 1024, brotli: { params: { 1: 1 } } });
 
+/** The address that our own proxy saw stands last; whatever stands before it, a client may have written. */
+function trustOneProxy({ headers }) {
+  if (!trustsProxy)
+    for (const name of ['x-forwarded-for', 'x-forwarded-host', 'x-forwarded-proto']) delete headers[name];
+  const seen = headers['x-forwarded-for']?.split(',').at(-1)?.trim();
+  if (seen) headers['x-forwarded-for'] = seen;
+}
+
 function serve(request, response) {
-  if (!trustsProxy) for (const name of ['x-forwarded-for', 'x-forwarded-host', 'x-forwarded-proto']) delete request.headers[name];
+  trustOneProxy(request);
   files(request, response, () => {
     compress(request, response, () => {
       void Promise.resolve(handler(request, response)).catch((error) => {
@@ -86,7 +97,9 @@ server.listen(port, host, async () => {
   await fetch(`http://${own}:${at.port}/api/health`).catch(() => undefined);
   const state = runtime();
   if (state?.error) stop(state.error.message);
-  console.log(`Driftwright is ready at http://${own}:${at.port} (${((Date.now() - started) / 1000).toFixed(1)} s)`);
+  console.log(
+    `Driftwright is ready at http://${own}:${at.port} (${((Date.now() - started) / 1000).toFixed(1)} s)`,
+  );
 });
 
 let ending = false;

@@ -23,6 +23,10 @@ interface State {
   readonly directions: readonly Direction[];
 }
 
+/** Oldest age to which a block, frames aside, has rotations; 0 for none. */
+export const historyOldest = (model: Model): number =>
+  Math.max(0, ...model.blocks.filter(({ kind }) => kind !== 'frame').flatMap(({ legs }) => legs.map(({ older_ma }) => older_ma)));
+
 /** @param frame the frame whose north pole is the spin axis; latitudes mean something in it alone. */
 export function checksOf(model: Model, state: State, frame: string | null): Check[] {
   if (state.blocks.length === 0) return [];
@@ -64,7 +68,7 @@ function circuits(model: Model, state: State, frame: string | null, nameOf: (cod
   return {
     verdict: loose.length > 0 ? 'check' : 'holds',
     statement,
-    figure: `0 to ${shortAge(model.oldest_ma)} Ma`,
+    figure: `0 to ${shortAge(historyOldest(model))} Ma`,
   };
 }
 
