@@ -1,5 +1,5 @@
 /** What the parts of one workbench share: its store, its scene, and what follows from both. */
-import { createContext, useContext, useMemo, type ReactNode } from 'react';
+import { createContext, useContext, useEffect, useMemo, useState, type ReactNode } from 'react';
 import { useStore } from 'zustand';
 import { type Model } from '../../../kernel/rotations/types';
 import { type Centre } from '../globe/matrix';
@@ -67,6 +67,33 @@ export function useBench(): Bench {
 /** A part of the state; the component draws again only when that part changes. */
 export function useWorkbench<T>(select: (state: WorkbenchState) => T): T {
   return useStore(useBench().store, select);
+}
+
+/** Between two readings of the calm age while the line is dragged, ms. */
+const CALM_MS = 100;
+
+/** The age for tables and lists: ten times a second at most while the line is dragged, exact when it rests. */
+export function useCalmAge(): number {
+  const { store } = useBench();
+  const [age, setAge] = useState(() => store.getState().age);
+  useEffect(() => {
+    let timer: number | undefined;
+    const take = () => {
+      window.clearTimeout(timer);
+      timer = undefined;
+      setAge(store.getState().age);
+    };
+    take();
+    const stop = store.subscribe(({ moving }) => {
+      if (!moving) take();
+      else timer ??= window.setTimeout(take, CALM_MS);
+    });
+    return () => {
+      window.clearTimeout(timer);
+      stop();
+    };
+  }, [store]);
+  return age;
 }
 
 /** Where everything is at the age shown. */

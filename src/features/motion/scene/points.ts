@@ -1,6 +1,6 @@
 /** The point whose path, latitude and speed are shown: the chosen one, or the block's own. */
 import { placeOf, unit, type Vec } from '../globe/matrix';
-import { vertex } from '../globe/shape';
+import { vertex, type Shape } from '../globe/shape';
 import { inText } from '../names';
 import { type Point } from '../store/state';
 import { findSceneBlock, type Scene, type SceneBlock } from './scene';
@@ -55,9 +55,19 @@ function named(lat: number, lon: number, block: SceneBlock, name: string | null)
   return { lat, lon, block: block.code, name, subject, plural };
 }
 
-/** Mean direction of an outline's vertices: a handle, not its centroid by area. */
+const middles = new WeakMap<Shape, Point | null>();
+
 function middleOf(block: SceneBlock): Point | null {
-  const parts = block.outlines[0]?.shape.levels[0] ?? [];
+  const shape = block.outlines[0]?.shape;
+  if (!shape) return null;
+  let known = middles.get(shape);
+  if (known === undefined) middles.set(shape, (known = meanPlace(shape)));
+  return known;
+}
+
+/** Mean direction of an outline's vertices: a handle, not its centroid by area. */
+function meanPlace(shape: Shape): Point | null {
+  const parts = shape.levels[0] ?? [];
   const sum: Vec = [0, 0, 0];
   for (const part of parts) {
     for (let i = 0; i < part.length / 3; i++) {

@@ -15,6 +15,7 @@ export interface Separation {
 const EARTH_KM = 6371.0088;
 /** Pairs of vertices looked at in one search; larger outlines are searched in a coarser copy. */
 const MOST_PAIRS = 2e6;
+const COARSE_PAIRS = 6e4;
 
 /** The block a block is joined to today: the first of its references up the circuit that has an outline. */
 export function partnerOf(scene: Scene, code: string): string | null {
@@ -30,7 +31,14 @@ export function partnerOf(scene: Scene, code: string): string | null {
   return null;
 }
 
-export function separationAt(scene: Scene, frame: Frame, code: string, other: string): Separation | null {
+/** `coarse` searches thinner outlines, for a picture that moves. */
+export function separationAt(
+  scene: Scene,
+  frame: Frame,
+  code: string,
+  other: string,
+  coarse = false,
+): Separation | null {
   const shapes = [code, other].map((name) => {
     const block = findSceneBlock(scene, name);
     return block ? outlineAt(block, frame.age) : null;
@@ -39,6 +47,7 @@ export function separationAt(scene: Scene, frame: Frame, code: string, other: st
   const [ma, mb] = [matrixOf(frame, code), matrixOf(frame, other)];
   if (!a || !b || !ma || !mb) return null;
   const between = closest(
+    coarse ? COARSE_PAIRS : MOST_PAIRS,
     a,
     b,
     (v) => turnBack(mb, turn(ma, v)),
@@ -56,9 +65,9 @@ interface Pair {
 }
 
 /** Nearest vertices of both, then the edges beside them; `toB` and `toA` change coordinates. */
-function closest(a: Shape, b: Shape, toB: (v: Vec) => Vec, toA: (v: Vec) => Vec): Pair | null {
+function closest(most: number, a: Shape, b: Shape, toB: (v: Vec) => Vec, toA: (v: Vec) => Vec): Pair | null {
   let level = 0;
-  while (level + 1 < a.levels.length && size(a.levels[level]) * size(b.levels[level]) > MOST_PAIRS) level++;
+  while (level + 1 < a.levels.length && size(a.levels[level]) * size(b.levels[level]) > most) level++;
   let best = -Infinity;
   let found: [Points, number, Points, number] | null = null;
   for (const ringA of a.levels[level] ?? []) {

@@ -1,14 +1,17 @@
 /** The picture in words: every block with its place and status at the age shown, each a button that selects it. */
+import { useMemo } from 'react';
 import { coordinates } from '../../format';
 import { placeOf, turn, vectorOf } from '../../globe/matrix';
-import { matrixOf, statusOf } from '../../scene/frame';
+import { frameAt, matrixOf, statusOf } from '../../scene/frame';
 import { ownPoint } from '../../scene/points';
 import { select } from '../../store/actions';
-import { useBench, useFrame, useWorkbench } from '../bench';
+import { useBench, useCalmAge, useWorkbench } from '../bench';
 
 export function BlockList({ id }: { readonly id: string }) {
-  const { store, scene } = useBench();
-  const frame = useFrame();
+  const { store, scene, model } = useBench();
+  const heldStill = useWorkbench((state) => state.heldStill);
+  const age = useCalmAge();
+  const frame = useMemo(() => frameAt(model, age, heldStill), [model, age, heldStill]);
   const selected = useWorkbench((state) => state.block);
   return (
     <div id={id} className="sr-only">

@@ -61,7 +61,7 @@ export function GlobeCanvas({
         selected: block,
         point: then ? point : null,
         track: then ? track : null,
-        separation: partner && block ? separationAt(scene, frame, block, partner) : null,
+        separation: partner && block ? separationAt(scene, frame, block, partner, moving) : null,
         cursor: view === 'then-and-now' ? cursorIn(cursor, frame, when) : null,
       };
     },

@@ -11,7 +11,7 @@ import { ageValue, number } from '../../format';
 import { ownPoint, type NamedPoint } from '../../scene/points';
 import { findSceneBlock } from '../../scene/scene';
 import { previewModel } from '../../store/actions';
-import { useBench, useWorkbench } from '../bench';
+import { useBench, useCalmAge, useWorkbench } from '../bench';
 import { EvidenceSwatch } from '../globe/Legend';
 import { useNames } from '../use-names';
 import { Foot } from './Foot';
@@ -160,7 +160,7 @@ function Empty({ name, canAdd, onAdd }: { name: string | null; canAdd: boolean; 
 /** Saved and new rows, in age order, the computed row among them, those in use bold. */
 function useRows(draft: Draft, code: string | null): readonly GridRow[] {
   const { model } = useBench();
-  const age = useWorkbench((state) => state.age);
+  const age = useCalmAge();
   return useMemo(() => {
     const link = code === null ? null : linkAt(model, code, age);
     const used = new Set(link ? [link.younger.id, link.older.id] : []);

@@ -77,10 +77,16 @@ export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hi
   );
   const strip = (id: StripId) => layout.strips.find((candidate) => candidate.id === id);
 
+  // Several moves may come within one frame; the page is drawn once for the last of them.
+  const waiting = useRef({ request: 0, y: 0 });
   const follow = useCallback(
     (event: PointerEvent<SVGSVGElement>) => {
-      const { top } = event.currentTarget.getBoundingClientRect();
-      setAge(store, Math.round(ageAt(layout, event.clientY - top) * 10) / 10, oldest);
+      const next = waiting.current;
+      next.y = event.clientY - event.currentTarget.getBoundingClientRect().top;
+      next.request ||= requestAnimationFrame(() => {
+        next.request = 0;
+        setAge(store, Math.round(ageAt(layout, next.y) * 10) / 10, oldest);
+      });
     },
     [store, layout, oldest],
   );

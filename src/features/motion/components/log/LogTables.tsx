@@ -81,7 +81,7 @@ export function LogTables() {
       </Table>
       <Table
         caption={`Predicted latitude in ${nameOf(frame)}, °N`}
-        heads={['Age, Ma', 'Latitude', 'from (95 %)', 'to (95 %)', '']}
+        heads={['Age, Ma', 'Latitude', 'from (95 %)', 'to (95 %)', 'Limits']}
       >
         {curve
           .filter(({ age }) => Math.abs(age % 10) < 1e-9)

@@ -1,5 +1,5 @@
 /** The notebook: one sentence, the shares of its uncertainty, the rows, and what rests on them. */
-import { useMemo } from 'react';
+import { memo, useDeferredValue, useMemo } from 'react';
 import {
   age as ageText,
   ageValue,
@@ -18,9 +18,10 @@ import { type NamedPoint } from '../../scene/points';
 import { useBench, useWorkbench } from '../bench';
 import { useNames } from '../use-names';
 
+/** Follows the age line a moment behind it, so that the line, strips and globe never wait for words. */
 export function useAnswer(): { point: NamedPoint | null; answer: Answer | null; age: number } {
   const { model, point } = useBench();
-  const age = useWorkbench((state) => state.age);
+  const age = useDeferredValue(useWorkbench((state) => state.age));
   const heldStill = useWorkbench((state) => state.heldStill);
   const nameOf = useNames();
   const answer = useMemo(
@@ -69,7 +70,7 @@ function Sentence() {
 }
 
 /** Lengths are shares of the variance; a link without a share keeps a sliver so that it can be seen. */
-function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
+const SharesBar = memo(function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
   const nameOf = useNames();
   const whole = rows.reduce((sum, { share }) => sum + share, 0);
   const widths = rows.map(({ share }) => (whole > 0 ? share / whole : 1 / rows.length));
@@ -127,9 +128,9 @@ function SharesBar({ rows, root }: { rows: readonly LinkRow[]; root: string }) {
       </text>
     </svg>
   );
-}
+});
 
-function Rows({ rows }: { rows: readonly LinkRow[] }) {
+const Rows = memo(function Rows({ rows }: { rows: readonly LinkRow[] }) {
   const nameOf = useNames();
   return (
     <table className="t-table mt-1 w-full border-collapse">
@@ -167,7 +168,7 @@ function Rows({ rows }: { rows: readonly LinkRow[] }) {
       </tbody>
     </table>
   );
-}
+});
 
 const SEVERITY: Readonly<Record<Remark['severity'], { label: string; colour: string }>> = {
   note: { label: 'Note', colour: 'text-ink' },
