@@ -1,6 +1,6 @@
 /**
- * The kernel's errors are data: a permanent name, a title, the quantity and value read, and what to do.
- * A surface maps `name` to its own status and shows `title`, `message` and `hint`.
+ * The kernel's errors are data: a permanent name, a title, the quantity and value read, and what to do. A
+ * surface maps `name` to its own status and shows `title`, `message` and `hint`.
  */
 export const KERNEL_ERRORS = {
   UnknownBlock: {

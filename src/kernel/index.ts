@@ -1,4 +1,7 @@
-/** The reconstruction kernel: pure functions of numbers, in browser and server alike. Conventions: degrees and Ma at the edge, unit vectors and quaternions inside. */
+/**
+ * The reconstruction kernel: pure functions of numbers, in browser and server alike. Conventions: degrees and
+ * Ma at the edge, unit vectors and quaternions inside.
+ */
 
 /** Typed errors, each with a permanent name. */
 export * from './errors';

@@ -112,8 +112,8 @@ export const covariance: fc.Arbitrary<Covariance> = fc
   ]);
 
 /**
- * A reconstruction of seven blocks over two frames: every block hangs on one of lower rank, some change over to another at a row they
- * have in both, and their rows are spaced unevenly. Circuits reach four links.
+ * A reconstruction of seven blocks over two frames: every block hangs on one of lower rank, some change over
+ * to another at a row they have in both, and their rows are spaced unevenly. Circuits reach four links.
  */
 export const model: fc.Arbitrary<Model> = fc
   .tuple(

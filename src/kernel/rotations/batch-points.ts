@@ -6,8 +6,8 @@ import { type Model } from './types';
 export type Coordinates = Float64Array | Float32Array;
 
 /**
- * Turns points by the row-major 3 × 3 matrix that starts at `offset` of `matrix`; in and out may be the same array.
- * Inverse: {@link unrotatePoints}.
+ * Turns points by the row-major 3 × 3 matrix that starts at `offset` of `matrix`; in and out may be the same
+ * array. Inverse: {@link unrotatePoints}.
  */
 export function rotatePoints(
   matrix: Coordinates,
@@ -44,14 +44,17 @@ export function unrotatePoints(
   );
 }
 
-/** `past`: present positions to where they were; `present`: positions at the age back to the present ones. Each undoes the other. */
+/**
+ * `past`: present positions to where they were; `present`: positions at the age back to the present ones.
+ * Each undoes the other.
+ */
 export type Direction = 'past' | 'present';
 
 const NO_BLOCK = statusCode('no block here');
 
 /**
- * Carries points of many blocks through one age. `blockOf` holds each point's index in `model.blocks`, −1 for a point on no block.
- * Points without a pose become NaN; `statuses` has one code for each point.
+ * Carries points of many blocks through one age. `blockOf` holds each point's index in `model.blocks`, −1 for
+ * a point on no block. Points without a pose become NaN; `statuses` has one code for each point.
  * @throws {KernelError} as `posesAt`.
  */
 export function reconstructPoints(

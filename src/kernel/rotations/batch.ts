@@ -4,15 +4,19 @@ import { existenceAt, type PoseOptions } from './circuit';
 import { createIndex, requireBlock } from './model-index';
 import { type Model, type Status, STATUSES } from './types';
 
-/** Worst difference, radians, between a pose of a batch and the exact circuit's, for circuits of up to eight links. */
+/**
+ * Worst difference, radians, between a pose of a batch and the exact circuit's, for circuits of up to eight
+ * links.
+ */
 export const BATCH_ERROR_RAD = 2e-14;
 
 /** Status of a batch as its place in STATUSES; the inverse is `STATUSES[code]`. */
 export const statusCode = (status: Status): number => STATUSES.indexOf(status);
 
 /**
- * R(block | relative_to) of every block at one age, in the order of `model.blocks`: [w, x, y, z] each, NaN where there is no pose, and a
- * {@link statusCode} each. The same answers as `poseAt`, but a block in a loop is `not connected` instead of an error.
+ * R(block | relative_to) of every block at one age, in the order of `model.blocks`: [w, x, y, z] each, NaN
+ * where there is no pose, and a {@link statusCode} each. The same answers as `poseAt`, but a block in a loop
+ * is `not connected` instead of an error.
  * @throws {KernelError} `UnknownBlock` for relative_to, `NegativeAge`, `NonFinite`.
  */
 export function posesAt(
@@ -66,7 +70,10 @@ function connection({ tops, ends }: Absolute, i: number, still: number, age_ma: 
   return stopped ? 'outside rotations' : 'not connected';
 }
 
-/** As {@link posesAt}, as row-major 3 × 3 matrices, nine numbers each. The inverse of such a matrix is its transpose. */
+/**
+ * As {@link posesAt}, as row-major 3 × 3 matrices, nine numbers each. The inverse of such a matrix is its
+ * transpose.
+ */
 export function matricesAt(
   model: Model,
   age_ma: number,

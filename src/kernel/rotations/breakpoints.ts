@@ -2,8 +2,9 @@ import { findBlock } from './model-index';
 import { type Model } from './types';
 
 /**
- * Ages, ascending, at which the circuit between two blocks may change its links: the ends of the legs of every block that either reaches
- * at any age. From just above one such age up to and including the next the links stay the same.
+ * Ages, ascending, at which the circuit between two blocks may change its links: the ends of the legs of
+ * every block that either reaches at any age. From just above one such age up to and including the next the
+ * links stay the same.
  */
 export function circuitBreakpoints(model: Model, block: string, relative_to: string): number[] {
   const ages = new Set<number>([0]);

@@ -15,9 +15,10 @@ export interface PoseOptions {
 }
 
 /**
- * R(block | relative_to) at an age: carries a point of the block from its present position to where it was, in the coordinates of
- * relative_to, which stands still. The circuit goes through the lowest common ancestor, each link evaluated before links are
- * composed. Whether relative_to existed does not matter; whether the block did is answered first.
+ * R(block | relative_to) at an age: carries a point of the block from its present position to where it was,
+ * in the coordinates of relative_to, which stands still. The circuit goes through the lowest common ancestor,
+ * each link evaluated before links are composed. Whether relative_to existed does not matter; whether the
+ * block did is answered first.
  * @throws {KernelError} `UnknownBlock`, `NegativeAge`, `NonFinite`, `CircuitCycle`.
  */
 export function poseAt(
@@ -33,7 +34,9 @@ export function poseAt(
   return circuitAt(model, block, age_ma, relative_to, options);
 }
 
-/** Whether a block exists at an age: disappears_ma < age ≤ appears_ma, and at 0 where it has not disappeared. */
+/**
+ * Whether a block exists at an age: disappears_ma < age ≤ appears_ma, and at 0 where it has not disappeared.
+ */
 export function existenceAt(
   { appears_ma, disappears_ma }: Pick<BlockInput, 'appears_ma' | 'disappears_ma'>,
   age_ma: number,

@@ -27,8 +27,9 @@ export const isIdentityAtPresent = (row: CompiledRow): boolean =>
   row.age_ma === 0 && toDegrees(angleOf(row.quaternion)) <= PRESENT_TOLERANCE_DEG;
 
 /**
- * Orders rows into legs, prepares their stages and lists what is wrong. Never throws, whatever a draft holds: a row that cannot be used
- * is left out and named in `problems`, and the rest works. Of duplicates the first given is used.
+ * Orders rows into legs, prepares their stages and lists what is wrong. Never throws, whatever a draft holds:
+ * a row that cannot be used is left out and named in `problems`, and the rest works. Of duplicates the first
+ * given is used.
  */
 export function compileModel(blocks: readonly BlockInput[], rotations: readonly RotationInput[]): Model {
   const problems: ModelProblem[] = [];

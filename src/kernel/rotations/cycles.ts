@@ -23,7 +23,10 @@ export function findCycles(blocks: readonly CompiledBlock[]): Cycle[] {
   return cycles;
 }
 
-/** References hold from just above one end of a leg up to and including the next, so one age stands for such a range. */
+/**
+ * References hold from just above one end of a leg up to and including the next, so one age stands for such a
+ * range.
+ */
 function loopsAt(byCode: ReadonlyMap<string, CompiledBlock>, age_ma: number): string[][] {
   const done = new Set<string>();
   const loops: string[][] = [];

@@ -41,9 +41,10 @@ export const MOST_AGES = 100_000;
 const SAME_AGE_MYR = 1e-9;
 
 /**
- * Positions of a point of a block as seen from relative_to, youngest first: at both ends of the span, every step from the younger one, and
- * every row's age of the circuit within.
- * @throws {KernelError} `UnknownBlock`, `NegativeAge`, `NonFinite`, `OutOfRange` (ages in the wrong order, step, latitude), `CircuitCycle`.
+ * Positions of a point of a block as seen from relative_to, youngest first: at both ends of the span, every
+ * step from the younger one, and every row's age of the circuit within.
+ * @throws {KernelError} `UnknownBlock`, `NegativeAge`, `NonFinite`, `OutOfRange` (ages in the wrong order,
+ * step, latitude), `CircuitCycle`.
  */
 export function driftPath(model: Model, request: DriftRequest): DriftPoint[] {
   const { block, older_ma, younger_ma, step_ma, relative_to } = request;

@@ -6,14 +6,19 @@ import { evaluateLeg } from './leg-at';
 import { angleOf, between, inverse, multiply, rotate } from './quaternion';
 import { type CompiledBlock, type Leg, type Model, type Quaternion, type Vector3 } from './types';
 
-/** Where a block's rotations change their reference: both placings, in the coordinates of the younger reference at that age. */
+/**
+ * Where a block's rotations change their reference: both placings, in the coordinates of the younger
+ * reference at that age.
+ */
 export interface HandOver {
   readonly block: string;
   readonly age_ma: number;
   readonly younger_reference: string;
   readonly older_reference: string;
   readonly younger: Quaternion;
-  /** Null, as are the figures made of it, where the two references have no circuit between them at that age. */
+  /**
+   * Null, as are the figures made of it, where the two references have no circuit between them at that age.
+   */
   readonly older: Quaternion | null;
   readonly jump_deg: number | null;
   /** The jump of a point 90° from its pole, the greatest there is; for one point see {@link jumpKm}. */
@@ -52,7 +57,10 @@ function throughOther(model: Model, leg: Leg, reference: string, age_ma: number)
   return link && multiply(link, evaluateLeg(leg, age_ma).quaternion);
 }
 
-/** Unknown references and loops are problems of the model, listed there; here they only leave the jump unknown. */
+/**
+ * Unknown references and loops are problems of the model, listed there; here they only leave the jump
+ * unknown.
+ */
 function circuitOrNull(model: Model, block: string, age_ma: number, relative_to: string): Quaternion | null {
   try {
     return circuitAt(model, block, age_ma, relative_to).quaternion;
@@ -62,10 +70,16 @@ function circuitOrNull(model: Model, block: string, age_ma: number, relative_to:
   }
 }
 
-/** How far a point of the block, given at its present position, jumps at a hand-over; null where that cannot be known. */
+/**
+ * How far a point of the block, given at its present position, jumps at a hand-over; null where that cannot
+ * be known.
+ */
 export const jumpKm = ({ younger, older }: HandOver, present: Vector3): number | null =>
   older && distanceKm(rotate(younger, present), rotate(older, present));
 
-/** Takes a position placed by the older leg to where the younger one places it, in the younger reference's coordinates. */
+/**
+ * Takes a position placed by the older leg to where the younger one places it, in the younger reference's
+ * coordinates.
+ */
 export const acrossHandOver = ({ younger, older }: HandOver, position: Vector3): Vector3 | null =>
   older && rotate(multiply(younger, inverse(older)), position);

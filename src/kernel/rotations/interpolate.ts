@@ -2,12 +2,16 @@ import { normalizeVector, scale } from '../sphere/vector';
 import { between, exp, log, multiply } from './quaternion';
 import { type Quaternion, type Stage } from './types';
 
-/** Worst error of an interpolated rotation, radians, for stage angles up to 179°; beyond, it grows as 1/(π − angle). */
+/**
+ * Worst error of an interpolated rotation, radians, for stage angles up to 179°; beyond, it grows as 1/(π −
+ * angle).
+ */
 export const INTERPOLATE_ERROR_RAD = 3e-15;
 
 /**
- * R(s) = Exp(s Log(R₂ R₁⁻¹)) R₁: constant rate about the stage pole, the shorter way round. s = 0 gives r1, s = 1 gives r2; other values
- * go on at the same rate. Only for rotations of one reference: a product of such rotations does not turn at a constant rate.
+ * R(s) = Exp(s Log(R₂ R₁⁻¹)) R₁: constant rate about the stage pole, the shorter way round. s = 0 gives r1, s
+ * = 1 gives r2; other values go on at the same rate. Only for rotations of one reference: a product of such
+ * rotations does not turn at a constant rate.
  */
 export function interpolate(r1: Quaternion, r2: Quaternion, s: number): Quaternion {
   return multiply(exp(scale(log(between(r1, r2)), s)), r1);

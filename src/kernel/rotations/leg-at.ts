@@ -5,8 +5,9 @@ import { type CompiledBlock, type CompiledRow, type Leg, type Quaternion, type S
 export type Beyond = 'none' | 'hold last stage';
 
 /**
- * The leg that gives a block's rotation at an age: the youngest that reaches it, so the younger one at a hand-over; null in a gap, beyond
- * the rows and without any. With `hold last stage` the oldest leg goes on where it has a stage.
+ * The leg that gives a block's rotation at an age: the youngest that reaches it, so the younger one at a
+ * hand-over; null in a gap, beyond the rows and without any. With `hold last stage` the oldest leg goes on
+ * where it has a stage.
  */
 export function legAt({ legs }: CompiledBlock, age_ma: number, beyond: Beyond = 'none'): Leg | null {
   for (const leg of legs) if (age_ma <= leg.older_ma) return age_ma >= leg.younger_ma ? leg : null;
@@ -24,8 +25,8 @@ export interface Evaluated {
 }
 
 /**
- * The rotation of a leg at an age that it covers (or beyond its oldest row, held). At a row's age it is the row's own, and the stage is the
- * younger of its two, the only one at an end, null where the leg is one row.
+ * The rotation of a leg at an age that it covers (or beyond its oldest row, held). At a row's age it is the
+ * row's own, and the stage is the younger of its two, the only one at an end, null where the leg is one row.
  */
 export function evaluateLeg({ rows, stages }: Leg, age_ma: number): Evaluated {
   const i = stageIndex(stages, age_ma);

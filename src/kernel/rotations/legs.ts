@@ -9,8 +9,9 @@ interface Run<R> {
 }
 
 /**
- * Rows of one block as maximal runs of one reference, youngest first: A → B → A makes three. Of rows of one age the one that continues the
- * run comes first, and the one whose reference goes on at the next older age last. Rows of one reference and age must not repeat.
+ * Rows of one block as maximal runs of one reference, youngest first: A → B → A makes three. Of rows of one
+ * age the one that continues the run comes first, and the one whose reference goes on at the next older age
+ * last. Rows of one reference and age must not repeat.
  */
 export function rowsToLegs<R extends Row>(rows: readonly R[]): Run<R>[] {
   const runs: Run<R>[] = [];

@@ -11,9 +11,14 @@ export interface Pole {
   readonly angle_deg: number;
 }
 
-/** Worst error of a round trip pole → quaternion → pole, measured as the rotation between the two, degrees; near a geographic pole most. */
+/**
+ * Worst error of a round trip pole → quaternion → pole, measured as the rotation between the two, degrees;
+ * near a geographic pole most.
+ */
 export const POLE_ERROR_DEG = 1.2e-11;
-/** A rotation by less than this, degrees, has no pole worth naming: it is given as the identity, pole 90° N. */
+/**
+ * A rotation by less than this, degrees, has no pole worth naming: it is given as the identity, pole 90° N.
+ */
 export const IDENTITY_TOLERANCE_DEG = 1e-13;
 
 /** Unit quaternion of a finite rotation in degrees; any angle is read. Inverse: {@link toPole}. */
@@ -25,8 +30,9 @@ export function fromPole(pole_lat: number, pole_lon: number, angle_deg: number):
 }
 
 /**
- * Euler pole of a rotation, angle in [0, 180], longitude in (−180, 180]. The identity is (90, 0, 0). With `near`, the form of the same
- * rotation whose pole is nearest to that pole, and whose angle, whole turns added, is nearest to its angle. Inverse: {@link fromPole}.
+ * Euler pole of a rotation, angle in [0, 180], longitude in (−180, 180]. The identity is (90, 0, 0). With
+ * `near`, the form of the same rotation whose pole is nearest to that pole, and whose angle, whole turns
+ * added, is nearest to its angle. Inverse: {@link fromPole}.
  */
 export function toPole(q: Quaternion, near?: Pole): Pole {
   const angle_deg = toDegrees(angleOf(q));

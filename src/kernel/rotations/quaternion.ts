@@ -3,7 +3,10 @@ import { type Matrix3, type Quaternion, type Vector3 } from './types';
 /** No rotation. */
 export const IDENTITY: Quaternion = [1, 0, 0, 0];
 
-/** Worst error, radians, of one product, of a rotated unit vector, and of a round trip through `exp`/`log` or a matrix. */
+/**
+ * Worst error, radians, of one product, of a rotated unit vector, and of a round trip through `exp`/`log` or
+ * a matrix.
+ */
 export const PRODUCT_ERROR_RAD = 1e-15;
 export const ROTATE_ERROR_RAD = 1.5e-15;
 export const LOG_EXP_ERROR_RAD = 2e-15;
@@ -43,7 +46,9 @@ export function rotate(q: Quaternion, v: Vector3): Vector3 {
 /** v turned back by q. Inverse: {@link rotate}. */
 export const unrotate = (q: Quaternion, v: Vector3): Vector3 => rotate(inverse(q), v);
 
-/** Rotation by |u| radians about u, right-hand rule; the identity for the zero vector. Inverse: {@link log}. */
+/**
+ * Rotation by |u| radians about u, right-hand rule; the identity for the zero vector. Inverse: {@link log}.
+ */
 export function exp(u: Vector3): Quaternion {
   const angle = Math.hypot(u[0], u[1], u[2]);
   const factor = angle > 1e-8 ? Math.sin(angle / 2) / angle : 0.5;
@@ -51,8 +56,8 @@ export function exp(u: Vector3): Quaternion {
 }
 
 /**
- * Principal rotation vector, radians, of length ≤ π (to rounding); the same for q and −q. An exact half-turn has two: the one whose last component
- * other than 0 is positive (a northern pole). Inverse: {@link exp}.
+ * Principal rotation vector, radians, of length ≤ π (to rounding); the same for q and −q. An exact half-turn
+ * has two: the one whose last component other than 0 is positive (a northern pole). Inverse: {@link exp}.
  */
 export function log(q: Quaternion): Vector3 {
   const length = Math.hypot(q[1], q[2], q[3]);
@@ -80,7 +85,10 @@ export function toMatrix([w, x, y, z]: Quaternion): Matrix3 {
   ];
 }
 
-/** Unit quaternion, w ≥ 0, of a rotation matrix: from its largest component (Shepperd 1978). Inverse: {@link toMatrix}. */
+/**
+ * Unit quaternion, w ≥ 0, of a rotation matrix: from its largest component (Shepperd 1978). Inverse: {@link
+ * toMatrix}.
+ */
 export function fromMatrix(m: Matrix3): Quaternion {
   const squares = [
     1 + m[0] + m[4] + m[8],

@@ -15,7 +15,8 @@ export type Route =
   | { readonly status: Exclude<Status, 'placed'>; readonly at: string };
 
 /**
- * Up from the block to the lowest common ancestor, then down to relative_to: links that both share cancel and are not asked for.
+ * Up from the block to the lowest common ancestor, then down to relative_to: links that both share cancel and
+ * are not asked for.
  * @throws {KernelError} `UnknownBlock`, `CircuitCycle`.
  */
 export function routeAt(

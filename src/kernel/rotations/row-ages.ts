@@ -3,8 +3,9 @@ import { routeAt } from './route';
 import { type Model } from './types';
 
 /**
- * Ages, ascending, of the rows (implied ones too) of every link between a block and relative_to within a span, ends included: where the
- * motion may change its pole and rate. Ages at which the two are not connected have none.
+ * Ages, ascending, of the rows (implied ones too) of every link between a block and relative_to within a
+ * span, ends included: where the motion may change its pole and rate. Ages at which the two are not connected
+ * have none.
  */
 export function circuitRowAges(
   model: Model,

@@ -17,8 +17,9 @@ export type StageRotation =
   | Exclude<Pose, PlacedPose>;
 
 /**
- * The motion of a block from an older to a younger age, forward in time: R(t₁) R(t₂)⁻¹ in the reference's coordinates, R(t₂)⁻¹ R(t₁) in the
- * block's. Given the ages the other way round it is the inverse. Without a place at either age it answers that age's status.
+ * The motion of a block from an older to a younger age, forward in time: R(t₁) R(t₂)⁻¹ in the reference's
+ * coordinates, R(t₂)⁻¹ R(t₁) in the block's. Given the ages the other way round it is the inverse. Without a
+ * place at either age it answers that age's status.
  * @throws {KernelError} as {@link poseAt}.
  */
 export function stageRotation(
@@ -56,10 +57,16 @@ export const youngerFromStage = (
   frame: StageFrame = 'reference',
 ): Quaternion => (frame === 'reference' ? multiply(stage, older) : multiply(older, stage));
 
-/** The same pole, a share of the angle (principal, ≤ 180°): what one flank of a symmetric ridge has. Inverse: {@link wholeStage}. */
+/**
+ * The same pole, a share of the angle (principal, ≤ 180°): what one flank of a symmetric ridge has. Inverse:
+ * {@link wholeStage}.
+ */
 export const halfStage = (stage: Quaternion, fraction = 0.5): Quaternion => exp(scale(log(stage), fraction));
 
-/** The whole stage of which a flank is a share. Inverse: {@link halfStage}. @throws {KernelError} `OutOfRange` for the share 0. */
+/**
+ * The whole stage of which a flank is a share. Inverse: {@link halfStage}. @throws {KernelError} `OutOfRange`
+ * for the share 0.
+ */
 export function wholeStage(flank: Quaternion, fraction = 0.5): Quaternion {
   if (fraction === 0)
     throw new KernelError('OutOfRange', {

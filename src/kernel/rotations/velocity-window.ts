@@ -9,7 +9,10 @@ import { type AngularVelocity } from './velocity';
 /** Step past the end of a leg, Myr, by which the older side of it is meant. */
 const JUST_OLDER_MYR = 1e-9;
 
-/** Ω = Log(R(t₁) R(t₂)⁻¹)/(t₂ − t₁) over a window cut to the ages at which block and circuit go on without a break. */
+/**
+ * Ω = Log(R(t₁) R(t₂)⁻¹)/(t₂ − t₁) over a window cut to the ages at which block and circuit go on without a
+ * break.
+ */
 export function windowedVelocity(
   model: Model,
   block: string,

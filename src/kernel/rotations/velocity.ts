@@ -27,9 +27,9 @@ export type AngularVelocity =
   | { readonly status: Exclude<Status, 'placed'>; readonly at: string };
 
 /**
- * Angular velocity of a block as seen from relative_to: Ω(B|F) = Ω(A|F) + R(A|F) Ω(B|A), each link's own stage (at a row's age the
- * younger one, at 0 the first). With `window_myr` above 0: from the stage rotation over the window centred on the age, cut to the
- * sequence and divided by the length left.
+ * Angular velocity of a block as seen from relative_to: Ω(B|F) = Ω(A|F) + R(A|F) Ω(B|A), each link's own
+ * stage (at a row's age the younger one, at 0 the first). With `window_myr` above 0: from the stage rotation
+ * over the window centred on the age, cut to the sequence and divided by the length left.
  * @throws {KernelError} as {@link poseAt}.
  */
 export function angularVelocity(
@@ -55,8 +55,8 @@ interface Asked {
 }
 
 /**
- * As {@link angularVelocity} without a window, for a pose already at hand. A block as seen from itself stands still from oldest_ma to 0; one
- * that only lies where it lies at 0 Ma, without rotations, has no velocity.
+ * As {@link angularVelocity} without a window, for a pose already at hand. A block as seen from itself stands
+ * still from oldest_ma to 0; one that only lies where it lies at 0 Ma, without rotations, has no velocity.
  */
 export function poseVelocity(
   { links }: PlacedPose,
@@ -96,7 +96,10 @@ export interface Velocity {
   readonly azimuth_deg: number | null;
 }
 
-/** v = Ω × x at a position in the reference's coordinates at that age; mm/yr is km/Myr. At a pole see `eastNorth`. */
+/**
+ * v = Ω × x at a position in the reference's coordinates at that age; mm/yr is km/Myr. At a pole see
+ * `eastNorth`.
+ */
 export function velocityAt(position: Vector3, omega: Vector3): Velocity {
   const { east, north } = eastNorth(position);
   const v = scale(cross(omega, position), EARTH_RADIUS_KM);

@@ -15,7 +15,8 @@ export interface Walk {
 }
 
 /**
- * From a block to its reference, its reference's reference and so on at an age. A frame without rotations is a root.
+ * From a block to its reference, its reference's reference and so on at an age. A frame without rotations is
+ * a root.
  * @throws {KernelError} `CircuitCycle` with the loop.
  */
 export function walkUp(model: Model, start: CompiledBlock, age_ma: number, beyond: Beyond = 'none'): Walk {

@@ -9,7 +9,10 @@ export const toDegrees = (radians: number): number => radians / DEGREE;
 /** Arc sine, radians, of a value that rounding may have carried past ±1. */
 export const asin = (x: number): number => (x >= 1 ? Math.PI / 2 : x <= -1 ? -Math.PI / 2 : Math.asin(x));
 
-/** Arc cosine, radians, of a value that rounding may have carried past ±1. Loses half the digits near ±1: prefer atan2 forms. */
+/**
+ * Arc cosine, radians, of a value that rounding may have carried past ±1. Loses half the digits near ±1:
+ * prefer atan2 forms.
+ */
 export const acos = (x: number): number => (x >= 1 ? 0 : x <= -1 ? Math.PI : Math.acos(x));
 
 /** Longitude in (−180, 180], exact: only whole turns are taken away. */
@@ -33,7 +36,9 @@ export function sinDegrees(degrees: number): number {
   return quarter === 2 ? -Math.sin(rest) : -Math.cos(rest);
 }
 
-/** Cosine of an angle in degrees; exactly 0 or ±1 at multiples of 90°, whole turns taken away without error. */
+/**
+ * Cosine of an angle in degrees; exactly 0 or ±1 at multiples of 90°, whole turns taken away without error.
+ */
 export function cosDegrees(degrees: number): number {
   const [quarter, rest] = reduce(degrees);
   if (quarter === 0) return Math.cos(rest);

@@ -6,13 +6,17 @@ import { add, cross, dot, negate, normalizeVector, scale, subtract } from './vec
 export const ARC_ERROR_RAD = 1e-13;
 
 /**
- * Unit normal of the great circle from a to b, right-hand rule: (b + a) × (b − a), which keeps its digits for short and nearly
- * antipodal arcs (as (b + a) and (b − a) are exact there). Zero for equal or antipodal ends, which have no one great circle.
+ * Unit normal of the great circle from a to b, right-hand rule: (b + a) × (b − a), which keeps its digits for
+ * short and nearly antipodal arcs (as (b + a) and (b − a) are exact there). Zero for equal or antipodal ends,
+ * which have no one great circle.
  */
 export const arcNormal = (a: Vector3, b: Vector3): Vector3 =>
   normalizeVector(cross(add(b, a), subtract(b, a)));
 
-/** The place a share s of the way from a (s = 0) to b (s = 1) along their great circle. Antipodal ends: any of the great circles. */
+/**
+ * The place a share s of the way from a (s = 0) to b (s = 1) along their great circle. Antipodal ends: any of
+ * the great circles.
+ */
 export function interpolateArc(a: Vector3, b: Vector3, s: number): Vector3 {
   const angle = angularDistance(a, b);
   if (angle === 0) return a;

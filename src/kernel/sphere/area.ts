@@ -9,8 +9,8 @@ export const AREA_ERROR_SR_PER_EDGE = 2e-15;
 const SPHERE_SR = 4 * Math.PI;
 
 /**
- * Signed spherical excess of the triangle o, a, b, steradians in [−2π, 2π], positive anticlockwise:
- * 2 atan2(o·(a × b), 1 + o·a + a·b + b·o) (Van Oosterom & Strackee 1983).
+ * Signed spherical excess of the triangle o, a, b, steradians in [−2π, 2π], positive anticlockwise: 2
+ * atan2(o·(a × b), 1 + o·a + a·b + b·o) (Van Oosterom & Strackee 1983).
  */
 export function triangleArea(o: Vector3, a: Vector3, b: Vector3): number {
   const volume = dot(o, cross(subtract(a, o), subtract(b, o)));
@@ -18,9 +18,10 @@ export function triangleArea(o: Vector3, a: Vector3, b: Vector3): number {
 }
 
 /**
- * Area of the smaller side of a ring, steradians in (0, 2π]: positive where the ring runs anticlockwise round it, negative where
- * clockwise. A ring that halves the sphere within {@link TIE_TOLERANCE_SR} is read as anticlockwise round its left side. Poles, the
- * antimeridian and edges that are passed both ways need no care; fewer than three corners give 0.
+ * Area of the smaller side of a ring, steradians in (0, 2π]: positive where the ring runs anticlockwise round
+ * it, negative where clockwise. A ring that halves the sphere within {@link TIE_TOLERANCE_SR} is read as
+ * anticlockwise round its left side. Poles, the antimeridian and edges that are passed both ways need no
+ * care; fewer than three corners give 0.
  */
 export function ringArea(ring: Ring): number {
   if (ring.length < 3) return 0;
@@ -33,7 +34,10 @@ export function ringArea(ring: Ring): number {
   return left > SPHERE_SR / 2 + TIE_TOLERANCE_SR ? left - SPHERE_SR : left;
 }
 
-/** A corner antipodal to the origin of the fan leaves its two triangles undefined, and one near it costs digits. */
+/**
+ * A corner antipodal to the origin of the fan leaves its two triangles undefined, and one near it costs
+ * digits.
+ */
 const LEAST_CLEARANCE = 0.1;
 const AXES: readonly Vector3[] = [
   [1, 0, 0],
@@ -44,7 +48,10 @@ const AXES: readonly Vector3[] = [
   [0, 0, -1],
 ];
 
-/** The first corner, near which small rings keep their digits, or whichever axis has its antipode farthest from all corners. */
+/**
+ * The first corner, near which small rings keep their digits, or whichever axis has its antipode farthest
+ * from all corners.
+ */
 function fanOrigin(ring: Ring): Vector3 {
   const clearance = (o: Vector3): number => ring.reduce((least, v) => Math.min(least, norm(add(o, v))), 2);
   const [first = AXES[0] as Vector3] = ring;

@@ -10,12 +10,16 @@ export interface Cap {
 }
 
 const ROUNDS = 64;
-/** The radius of a bounding cap is at most this much above the least one, as a share of it (found by trial on random outlines). */
+/**
+ * The radius of a bounding cap is at most this much above the least one, as a share of it (found by trial on
+ * random outlines).
+ */
 export const CAP_EXCESS = 0.05;
 
 /**
- * A cap that holds all the vectors and, as it is smaller than a hemisphere, every great-circle edge between them and the smaller side
- * of their ring. Where no cap of under 89° is found, or there are no vectors, it is the whole sphere. Centre by Bădoiu & Clarkson (2003): step towards the farthest.
+ * A cap that holds all the vectors and, as it is smaller than a hemisphere, every great-circle edge between
+ * them and the smaller side of their ring. Where no cap of under 89° is found, or there are no vectors, it is
+ * the whole sphere. Centre by Bădoiu & Clarkson (2003): step towards the farthest.
  */
 export function boundingCap(vectors: readonly Vector3[]): Cap {
   let centre = vectors.reduce<Vector3>((sum, v) => add(sum, v), [0, 0, 0]);

@@ -7,8 +7,8 @@ import { eachEdge, type Inside, type Polygon, type Ring } from './ring';
 import { add, negate, norm, normalizeVector, scale, subtract } from './vector';
 
 /**
- * ∫ x dA over the left side of a ring = ½ Σ (length of edge) (unit normal of edge), by Stokes' theorem; the right side has the same
- * with the other sign, as the whole sphere has none.
+ * ∫ x dA over the left side of a ring = ½ Σ (length of edge) (unit normal of edge), by Stokes' theorem; the
+ * right side has the same with the other sign, as the whole sphere has none.
  */
 function leftMoment(ring: Ring): Vector3 {
   let sum: Vector3 = [0, 0, 0];
@@ -22,7 +22,10 @@ function smallerMoment(ring: Ring): Vector3 {
   return ringArea(ring) < 0 ? negate(leftMoment(ring)) : leftMoment(ring);
 }
 
-/** Centre of area of a polygon, a unit vector; where none is defined (a band round the sphere), the centre of its bounding cap. */
+/**
+ * Centre of area of a polygon, a unit vector; where none is defined (a band round the sphere), the centre of
+ * its bounding cap.
+ */
 export function centroid(polygon: Polygon, inside: Inside = 'smaller'): Vector3 {
   const [outer, ...holes] = polygon;
   if (!outer) return [0, 0, 1];

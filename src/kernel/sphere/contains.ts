@@ -2,7 +2,10 @@ import { type Vector3 } from '../rotations/types';
 import { halvesSphere, ringArea } from './area';
 import { type Inside, type Polygon, type Ring } from './ring';
 
-/** A place nearer to an edge than this, radians (6 µm on the ground), lies on the outline and counts as inside. */
+/**
+ * A place nearer to an edge than this, radians (6 µm on the ground), lies on the outline and counts as
+ * inside.
+ */
 export const BOUNDARY_TOLERANCE_RAD = 1e-12;
 
 const signedAreas = new WeakMap<Ring, number>();
@@ -18,8 +21,9 @@ function signedArea(ring: Ring): number {
 /**
  * Where v lies to a ring: within its smaller side (the left one of a tie), on it, or without.
  *
- * The triangles from −v to every edge add up to A − 4πw, where A is the signed area and w is how often the ring winds round v
- * and not round −v, so w follows from the sum without any special ray; edges passed both ways cancel.
+ * The triangles from −v to every edge add up to A − 4πw, where A is the signed area and w is how often the
+ * ring winds round v and not round −v, so w follows from the sum without any special ray; edges passed both
+ * ways cancel.
  */
 function place(ring: Ring, v: Vector3): 'within' | 'on' | 'without' {
   let turning = 0;
@@ -43,8 +47,8 @@ function place(ring: Ring, v: Vector3): 'within' | 'on' | 'without' {
 }
 
 /**
- * Whether a polygon holds a unit vector, its outline included (that of its holes too). Holes are the smaller sides of their rings.
- * The areas of rings are remembered: do not change a ring that was asked about.
+ * Whether a polygon holds a unit vector, its outline included (that of its holes too). Holes are the smaller
+ * sides of their rings. The areas of rings are remembered: do not change a ring that was asked about.
  */
 export function contains(polygon: Polygon, v: Vector3, inside: Inside = 'smaller'): boolean {
   const [outer, ...holes] = polygon;

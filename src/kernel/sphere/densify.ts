@@ -13,7 +13,10 @@ function requireStep(max_deg: number): void {
   });
 }
 
-/** Adds places along great-circle edges until none is longer than max_deg; a ring's closing edge too unless `closed` is false. */
+/**
+ * Adds places along great-circle edges until none is longer than max_deg; a ring's closing edge too unless
+ * `closed` is false.
+ */
 export function densify(ring: readonly Vector3[], max_deg: number, { closed = true } = {}): Vector3[] {
   requireStep(max_deg);
   const dense: Vector3[] = [];
@@ -27,12 +30,16 @@ export function densify(ring: readonly Vector3[], max_deg: number, { closed = tr
   return dense;
 }
 
-/** Edges made no longer than 1° by {@link densifyStraight} stray at most this far from great circles; n times as long, n² as far. */
+/**
+ * Edges made no longer than 1° by {@link densifyStraight} stray at most this far from great circles; n times
+ * as long, n² as far.
+ */
 export const STRAIGHT_EDGE_STRAY_DEG = 0.0044;
 
 /**
- * Adds positions [longitude, latitude] along edges that are straight in longitude and latitude (RFC 7946), so that the great circles
- * between them follow those edges. Each edge goes the shorter way round the globe; longitudes may then run on past ±180°.
+ * Adds positions [longitude, latitude] along edges that are straight in longitude and latitude (RFC 7946), so
+ * that the great circles between them follow those edges. Each edge goes the shorter way round the globe;
+ * longitudes may then run on past ±180°.
  */
 export function densifyStraight(
   positions: readonly (readonly number[])[],

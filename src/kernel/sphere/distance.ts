@@ -1,12 +1,15 @@
 import { type Vector3 } from '../rotations/types';
 import { EARTH_RADIUS_KM } from './angles';
 
-/** Worst error of {@link angularDistance}, radians, for unit vectors; relative error is as small down to the least distances. */
+/**
+ * Worst error of {@link angularDistance}, radians, for unit vectors; relative error is as small down to the
+ * least distances.
+ */
 export const ANGULAR_DISTANCE_ERROR_RAD = 1e-15;
 
 /**
- * Angle between two unit vectors, radians in [0, π]: 2 atan2(|a − b|, |a + b|) (Kahan 2006, How futile are mindless
- * assessments of roundoff, § 12). Accurate for coincident and for antipodal places alike.
+ * Angle between two unit vectors, radians in [0, π]: 2 atan2(|a − b|, |a + b|) (Kahan 2006, How futile are
+ * mindless assessments of roundoff, § 12). Accurate for coincident and for antipodal places alike.
  */
 export function angularDistance(a: Vector3, b: Vector3): number {
   return (

@@ -5,7 +5,10 @@ import { toLatLon, toVector } from './vector';
 export type Ring = readonly Vector3[];
 /** An outer ring and the rings of its holes. */
 export type Polygon = readonly Ring[];
-/** Which side of an outer ring is meant. A ring that halves the sphere has neither: its left side is meant then. */
+/**
+ * Which side of an outer ring is meant. A ring that halves the sphere has neither: its left side is meant
+ * then.
+ */
 export type Inside = 'smaller' | 'larger';
 
 /** Rings that part the sphere in two sides as equal as this, steradians, are taken as halving it. */
@@ -14,8 +17,9 @@ export const TIE_TOLERANCE_SR = 1e-9;
 const same = (a: Vector3, b: Vector3): boolean => a[0] === b[0] && a[1] === b[1] && a[2] === b[2];
 
 /**
- * Ring from [longitude, latitude] positions in degrees, closed or not. Longitudes may jump at the antimeridian, run on past
- * ±180°, or be given 0–360; repeated positions (every one along a pole included) are read once. Inverse: {@link writeRing}.
+ * Ring from [longitude, latitude] positions in degrees, closed or not. Longitudes may jump at the
+ * antimeridian, run on past ±180°, or be given 0–360; repeated positions (every one along a pole included)
+ * are read once. Inverse: {@link writeRing}.
  */
 export function readRing(positions: readonly (readonly number[])[]): Vector3[] {
   const ring: Vector3[] = [];

@@ -1,11 +1,16 @@
 import { type Vector3 } from '../rotations/types';
 import { cosDegrees, sinDegrees, toDegrees } from './angles';
 
-/** Nearer to a pole than this, radians (0.6 µm on the ground), a longitude means nothing: it is given as 0. */
+/**
+ * Nearer to a pole than this, radians (0.6 µm on the ground), a longitude means nothing: it is given as 0.
+ */
 export const POLE_TOLERANCE_RAD = 1e-13;
 /** Worst error of {@link toVector} in each component. */
 export const VECTOR_ERROR = 3e-16;
-/** Worst error of a round trip through {@link toLatLon}, degrees of great circle: rounding, and the pole tolerance beside a pole. */
+/**
+ * Worst error of a round trip through {@link toLatLon}, degrees of great circle: rounding, and the pole
+ * tolerance beside a pole.
+ */
 export const LAT_LON_ERROR_DEG = 6e-12;
 
 export const dot = (a: Vector3, b: Vector3): number => a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
@@ -28,8 +33,8 @@ export function normalizeVector(a: Vector3): Vector3 {
 }
 
 /**
- * Unit vector p(φ, λ) = (cos φ cos λ, cos φ sin λ, sin φ) of a place in degrees. Any longitude is read; at a pole it has no effect.
- * Inverse: {@link toLatLon}.
+ * Unit vector p(φ, λ) = (cos φ cos λ, cos φ sin λ, sin φ) of a place in degrees. Any longitude is read; at a
+ * pole it has no effect. Inverse: {@link toLatLon}.
  */
 export function toVector(lat_deg: number, lon_deg: number): Vector3 {
   const cosLat = cosDegrees(lat_deg);

@@ -1,14 +1,18 @@
 import { type Rank } from './units';
 
-/** [rank, name, base in Ma, colour]: youngest first within a rank; the top of a unit is the base of the one before it. */
+/**
+ * [rank, name, base in Ma, colour]: youngest first within a rank; the top of a unit is the base of the one
+ * before it.
+ */
 type Row = readonly [rank: Rank, name: string, base_ma: number, colour: string];
 
 export const EDITION = 'ICS 2023/09';
 
 /**
- * International Chronostratigraphic Chart, v2023/09 (Cohen, Finney, Gibbard & Fan 2013, updated): bases and colours as in the Commission's
- * own vocabulary of that edition (CC BY 4.0). Holocene, Pleistocene and Oligocene carry the RGB codes of the Commission for the Geological
- * Map of the World, from which the vocabulary strays by a few units. Ages marked "~" on the chart are given without the mark.
+ * International Chronostratigraphic Chart, v2023/09 (Cohen, Finney, Gibbard & Fan 2013, updated): bases and
+ * colours as in the Commission's own vocabulary of that edition (CC BY 4.0). Holocene, Pleistocene and
+ * Oligocene carry the RGB codes of the Commission for the Geological Map of the World, from which the
+ * vocabulary strays by a few units. Ages marked "~" on the chart are given without the mark.
  */
 export const CHART_ROWS: readonly Row[] = [
   ['eon', 'Phanerozoic', 538.8, '#9AD9DD'],

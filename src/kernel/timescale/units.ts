@@ -21,7 +21,10 @@ export interface Chart {
   readonly units: readonly GeologicalUnit[];
 }
 
-/** The chart's ranks reach back as far as they are divided: eons to 4567 Ma, eras to 4031 Ma, periods to 2500 Ma, epochs and stages to 538.8 Ma. */
+/**
+ * The chart's ranks reach back as far as they are divided: eons to 4567 Ma, eras to 4031 Ma, periods to 2500
+ * Ma, epochs and stages to 538.8 Ma.
+ */
 export const CHRONOSTRATIGRAPHIC_CHART: Chart = {
   edition: EDITION,
   units: CHART_ROWS.map(([rank, name, older_ma, colour], i) => {
@@ -34,13 +37,19 @@ const byRank = new Map(
   RANKS.map((rank) => [rank, CHRONOSTRATIGRAPHIC_CHART.units.filter((unit) => unit.rank === rank)]),
 );
 
-/** The unit that holds an age; null beyond the oldest of that rank. @throws {KernelError} `NegativeAge`, `NonFinite`. */
+/**
+ * The unit that holds an age; null beyond the oldest of that rank. @throws {KernelError} `NegativeAge`,
+ * `NonFinite`.
+ */
 export function unitAt(age_ma: number, rank: Rank): GeologicalUnit | null {
   requireAge('age_ma', age_ma);
   return byRank.get(rank)?.find((unit) => age_ma <= unit.older_ma) ?? null;
 }
 
-/** The units of a rank that share some of a span of ages, youngest first; units that only touch an end of it are left out. */
+/**
+ * The units of a rank that share some of a span of ages, youngest first; units that only touch an end of it
+ * are left out.
+ */
 export function unitsBetween(older_ma: number, younger_ma: number, rank: Rank): GeologicalUnit[] {
   requireAge('older_ma', older_ma);
   requireAge('younger_ma', younger_ma);

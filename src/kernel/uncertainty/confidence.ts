@@ -17,8 +17,8 @@ export const CONFIDENCE = 0.95;
 const CHI_SQUARE_95 = { 1: 3.841458820694124, 2: 5.991464547107979, 3: 7.814727903251179 } as const;
 
 /**
- * The rule for a sum of independent parts of which some were scaled by an estimated κ̂: effective degrees of freedom
- * ν = (Σ trᵢ)²/Σ (trᵢ²/νᵢ) (Satterthwaite 1946), parts of known scale counting νᵢ = ∞.
+ * The rule for a sum of independent parts of which some were scaled by an estimated κ̂: effective degrees of
+ * freedom ν = (Σ trᵢ)²/Σ (trᵢ²/νᵢ) (Satterthwaite 1946), parts of known scale counting νᵢ = ∞.
  */
 export function confidenceRule(
   dimensions: 1 | 2 | 3,

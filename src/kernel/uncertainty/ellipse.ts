@@ -27,8 +27,8 @@ export interface Ellipse {
 }
 
 /**
- * The directions of u that move a point east and north: δx = R (u × p), so e·δx = u · (p × Rᵀe). `present` is the point's present
- * position in the block, a unit vector.
+ * The directions of u that move a point east and north: δx = R (u × p), so e·δx = u · (p × Rᵀe). `present` is
+ * the point's present position in the block, a unit vector.
  */
 function leverArms({ quaternion }: PlacedPose, present: Vector3): { east: Vector3; north: Vector3 } {
   const { east, north } = eastNorth(rotate(quaternion, present));
@@ -53,8 +53,8 @@ export function tangentCovariance(
 }
 
 /**
- * 95 % ellipse of where a point of the block was. Null where nothing is known of the uncertainty; zero axes where the pose is exact.
- * First order: meant for axes well below the radius of the Earth.
+ * 95 % ellipse of where a point of the block was. Null where nothing is known of the uncertainty; zero axes
+ * where the pose is exact. First order: meant for axes well below the radius of the Earth.
  */
 export function pointEllipse(
   pose: PlacedPose,
@@ -81,7 +81,10 @@ export function pointEllipse(
   };
 }
 
-/** 95 % interval of a point's latitude alone (one dimension), degrees, kept within ±90. Null as for {@link pointEllipse}. */
+/**
+ * 95 % interval of a point's latitude alone (one dimension), degrees, kept within ±90. Null as for {@link
+ * pointEllipse}.
+ */
 export function latitudeBand(
   pose: PlacedPose,
   uncertainty: RotationUncertainty,

@@ -1,14 +1,17 @@
 import { KernelError } from '../errors';
 
-/** Worst relative error of {@link fQuantile}, for 1–10 and 1–10⁶ degrees of freedom and probabilities of 0.5–0.999. */
+/**
+ * Worst relative error of {@link fQuantile}, for 1–10 and 1–10⁶ degrees of freedom and probabilities of
+ * 0.5–0.999.
+ */
 export const F_QUANTILE_ERROR = 1e-9;
 
 /** 95 % point of χ² on 2 degrees of freedom: −2 ln 0.05. */
 export const CHI_SQUARE_2_95 = -2 * Math.log(0.05);
 
 /**
- * Quantile of the F distribution. On 2 degrees of freedom above it is (ν/2)((1 − p)^(−2/ν) − 1); otherwise by bisection on the
- * incomplete beta function.
+ * Quantile of the F distribution. On 2 degrees of freedom above it is (ν/2)((1 − p)^(−2/ν) − 1); otherwise by
+ * bisection on the incomplete beta function.
  */
 export function fQuantile(p: number, above: number, below: number): number {
   if (!(p > 0 && p < 1))
@@ -35,7 +38,10 @@ export function fQuantile(p: number, above: number, below: number): number {
   return (below * x) / (above * (1 - x));
 }
 
-/** Regularised incomplete beta function I_x(a, b), by its continued fraction (Abramowitz & Stegun 1964, 26.5.8; Lentz's method). */
+/**
+ * Regularised incomplete beta function I_x(a, b), by its continued fraction (Abramowitz & Stegun 1964,
+ * 26.5.8; Lentz's method).
+ */
 export function incompleteBeta(a: number, b: number, x: number): number {
   if (x <= 0) return 0;
   if (x >= 1) return 1;

@@ -27,7 +27,10 @@ export function publishedFormToCovariance({ kappa, a, b, c, d, e, f, g }: Publis
   return scaleCovariance([a, b, c, d, e, f], 10 ** -g / kappa);
 }
 
-/** Entries times κ̂, with the power of ten that brings the greatest into [1, 10) unless g is given. Inverse: {@link publishedFormToCovariance}. */
+/**
+ * Entries times κ̂, with the power of ten that brings the greatest into [1, 10) unless g is given. Inverse:
+ * {@link publishedFormToCovariance}.
+ */
 export function covarianceToPublishedForm(
   covariance: Covariance,
   kappa = 1,
@@ -42,7 +45,10 @@ function powerOf(covariance: Covariance, kappa: number): number {
   return most > 0 ? -Math.floor(Math.log10(most)) : 0;
 }
 
-/** Isotropic covariance of a rotation whose effect 90° from the axis of u has a 95 % cap of r degrees: σ = r/√5.991. */
+/**
+ * Isotropic covariance of a rotation whose effect 90° from the axis of u has a 95 % cap of r degrees: σ =
+ * r/√5.991.
+ */
 export function cap95ToCovariance(cap95_deg: number): Covariance {
   if (!(cap95_deg >= 0))
     throw new KernelError('OutOfRange', {
@@ -54,7 +60,10 @@ export function cap95ToCovariance(cap95_deg: number): Covariance {
   return [variance, 0, 0, variance, 0, variance];
 }
 
-/** The 95 % cap, degrees, of the isotropic covariance of the same trace: exact for isotropic ones. Inverse: {@link cap95ToCovariance}. */
+/**
+ * The 95 % cap, degrees, of the isotropic covariance of the same trace: exact for isotropic ones. Inverse:
+ * {@link cap95ToCovariance}.
+ */
 export const covarianceToCap95 = (covariance: Covariance): number =>
   toDegrees(Math.sqrt((CHI_SQUARE_2_95 * trace(covariance)) / 3));
 

@@ -1,7 +1,10 @@
 import { type Matrix3, type Vector3 } from '../rotations/types';
 import { addMatrices, crossMatrix, IDENTITY3, multiplyMatrices, scaleMatrix } from './matrix3';
 
-/** Worst error of each entry of a Jacobian and of the product with its inverse, for rotation vectors of up to 179°. */
+/**
+ * Worst error of each entry of a Jacobian and of the product with its inverse, for rotation vectors of up to
+ * 179°.
+ */
 export const JACOBIAN_ERROR = 1e-12;
 
 const SMALL = 1e-2;
@@ -28,8 +31,8 @@ function inverseCoefficient(t: number): number {
 const length = (phi: Vector3): number => Math.hypot(phi[0], phi[1], phi[2]);
 
 /**
- * Right Jacobian of the rotation group: Exp(φ + δ) ≈ Exp(φ) Exp(Jr(φ) δ) (Chirikjian 2012, Stochastic Models, Information Theory, and
- * Lie Groups 2, § 10). Inverse: {@link rightJacobianInverse}.
+ * Right Jacobian of the rotation group: Exp(φ + δ) ≈ Exp(φ) Exp(Jr(φ) δ) (Chirikjian 2012, Stochastic Models,
+ * Information Theory, and Lie Groups 2, § 10). Inverse: {@link rightJacobianInverse}.
  */
 export function rightJacobian(phi: Vector3): Matrix3 {
   const [a, b] = coefficients(length(phi));

@@ -25,8 +25,8 @@ export interface RotationUncertainty {
 const NO_PART = 1e-12;
 
 /**
- * Uncertainty of a pose, to first order and with rows taken as independent of one another (so it shrinks between rows: the methods page
- * says so). Exact identities at 0 Ma add nothing.
+ * Uncertainty of a pose, to first order and with rows taken as independent of one another (so it shrinks
+ * between rows: the methods page says so). Exact identities at 0 Ma add nothing.
  */
 export function poseUncertainty(_model: Model, pose: PlacedPose): RotationUncertainty {
   return uncertaintyOf(poseSensitivities(pose), pose.links);
@@ -56,6 +56,8 @@ export function uncertaintyOf(
 
 const matters = ({ jacobian }: Sensitivity): boolean => jacobian.some((entry) => Math.abs(entry) > NO_PART);
 
-/** True where nothing of a result's uncertainty is known though it is not exact: no number should be shown. */
+/**
+ * True where nothing of a result's uncertainty is known though it is not exact: no number should be shown.
+ */
 export const isUnknown = ({ covariance, at_least }: RotationUncertainty): boolean =>
   at_least && trace(covariance) === 0;

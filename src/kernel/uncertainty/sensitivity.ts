@@ -6,7 +6,10 @@ import { add, scale } from '../sphere/vector';
 import { leftJacobianInverse, rightJacobian, rightJacobianInverse } from './jacobians';
 import { addMatrices, applyMatrix, IDENTITY3, multiplyMatrices, scaleMatrix, transpose } from './matrix3';
 
-/** How the error u of a rotation R̂ Exp(u) follows from one row's: u = jacobian · u(row) + age_jacobian · (error of the row's age, Myr). */
+/**
+ * How the error u of a rotation R̂ Exp(u) follows from one row's: u = jacobian · u(row) + age_jacobian ·
+ * (error of the row's age, Myr).
+ */
 export interface Sensitivity {
   readonly row: CompiledRow;
   readonly jacobian: Matrix3;
@@ -14,7 +17,10 @@ export interface Sensitivity {
   readonly age_jacobian: Vector3;
 }
 
-/** Sensitivities by row id: a row met twice has one entry, the sum, so that it is correlated with itself, or cancels. */
+/**
+ * Sensitivities by row id: a row met twice has one entry, the sum, so that it is correlated with itself, or
+ * cancels.
+ */
 export type Sensitivities = ReadonlyMap<string, Sensitivity>;
 
 /** The identity at 0 Ma is exact: it says that present coordinates are present coordinates. */
@@ -57,8 +63,8 @@ export const inverted = (r: Matrix3, sensitivities: Sensitivities): Sensitivitie
   transformed(scaleMatrix(r, -1), sensitivities);
 
 /**
- * Of a link at its age. Between rows, with φ = Log(R₁⁻¹ R₂): u = Exp(−sφ) u₁ + s Jr(sφ) (Jr⁻¹(φ) u₂ − Jl⁻¹(φ) u₁). An error δ of a row's age
- * acts as the error φ/(t₂ − t₁) δ of its rotation, by the stage in use.
+ * Of a link at its age. Between rows, with φ = Log(R₁⁻¹ R₂): u = Exp(−sφ) u₁ + s Jr(sφ) (Jr⁻¹(φ) u₂ − Jl⁻¹(φ)
+ * u₁). An error δ of a row's age acts as the error φ/(t₂ − t₁) δ of its rotation, by the stage in use.
  */
 export function linkSensitivities({
   younger,

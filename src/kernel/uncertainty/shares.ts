@@ -4,13 +4,19 @@ import { tangentCovariance } from './ellipse';
 import { type RotationUncertainty } from './pose-uncertainty';
 
 export interface Shares {
-  /** Share of each row in the variance of the position (trace of its tangent covariance). They add up to 1, or are all 0. */
+  /**
+   * Share of each row in the variance of the position (trace of its tangent covariance). They add up to 1, or
+   * are all 0.
+   */
   readonly rows: readonly { readonly row: CompiledRow; readonly link: number; readonly share: number }[];
   /** The same by link of the pose, in the order of its links. */
   readonly links: readonly number[];
 }
 
-/** Who makes a position as uncertain as it is: links without covariance have no share, so it is one of what is known. */
+/**
+ * Who makes a position as uncertain as it is: links without covariance have no share, so it is one of what is
+ * known.
+ */
 export function shares(pose: PlacedPose, uncertainty: RotationUncertainty, present: Vector3): Shares {
   const variances = uncertainty.rows.map(({ covariance }) => {
     const { ee, nn } = tangentCovariance(pose, covariance, present);

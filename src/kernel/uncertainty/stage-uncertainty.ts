@@ -6,8 +6,8 @@ import { composed, inverted, poseSensitivities } from './sensitivity';
 type PlacedStage = Extract<StageRotation, { status: 'placed' }>;
 
 /**
- * Uncertainty of a stage rotation, in the coordinates in which it acts first (R = R̂ Exp(u)). Rows that both ages use are fully correlated
- * with themselves: what they do to both ends alike cancels.
+ * Uncertainty of a stage rotation, in the coordinates in which it acts first (R = R̂ Exp(u)). Rows that both
+ * ages use are fully correlated with themselves: what they do to both ends alike cancels.
  */
 export function stageUncertainty(
   { older, younger }: PlacedStage,

@@ -81,7 +81,10 @@ describe('against the quaternions of three and gl-matrix', () => {
     }
   });
 
-  /** Both shortcut small angles and weigh linearly there, so that the check is loose; see the 60-digit cases for the exact one. */
+  /**
+   * Both shortcut small angles and weigh linearly there, so that the check is loose; see the 60-digit cases
+   * for the exact one.
+   */
   const SLERP_SHORTCUT_RAD = 1e-5;
 
   it('interpolates alike within their shortcuts', () => {

@@ -58,7 +58,9 @@ function stretch(rings: readonly Vector3[][], { from, by, to }: Stretch): Vector
     : [...turned.slice(along(end)), ring[start] ?? a].reverse();
 }
 
-/** Root mean square over both coasts of the distance from each of its evenly spaced places to the other, km. */
+/**
+ * Root mean square over both coasts of the distance from each of its evenly spaced places to the other, km.
+ */
 function symmetricRms(a: readonly Vector3[], b: readonly Vector3[]): number {
   const squares = [...distances(a, b), ...distances(b, a)].map((angle) => (angle * EARTH_RADIUS_KM) ** 2);
   return Math.sqrt(squares.reduce((sum, x) => sum + x, 0) / squares.length);

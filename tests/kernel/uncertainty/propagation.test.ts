@@ -57,7 +57,10 @@ const rows = [
   row(['corrie', 'spin', 45, 20, 150, 80]),
 ];
 
-/** u that takes the result R̂ of the rows to that of the moved rows, by central differences for each axis of each row. */
+/**
+ * u that takes the result R̂ of the rows to that of the moved rows, by central differences for each axis of
+ * each row.
+ */
 function numericJacobian(result: (rotations: RotationInput[]) => Quaternion, i: number): Matrix3 {
   const step = 1e-5;
   const base = result(rows);
