@@ -6,7 +6,8 @@ import { createTestApp, type Answer, type TestApp, type TestUser } from '../supp
 let app: TestApp;
 let lead: TestUser;
 const P = '/api/projects/two-blocks';
-const demo = (name: string): string => readFileSync(new URL(`../../src/db/seed/lantern-sea/${name}`, import.meta.url), 'utf8');
+const demo = (name: string): string =>
+  readFileSync(new URL(`../../src/db/seed/lantern-sea/${name}`, import.meta.url), 'utf8');
 
 beforeAll(async () => {
   app = await createTestApp();
@@ -49,14 +50,24 @@ describe('a file with mistakes', () => {
     const dry = await send({ kind: 'rotations', text, fields: { dry_run: 'true' } });
     expect(dry.status).toBe(200);
     expect(dry.json).toMatchObject({ accepted: 1, written: false });
-    expect(dry.json.rejected[0]).toMatchObject({ line: 3, column: 'pole_lat', read: '128.4', problem: 'latitude beyond 90°' });
+    expect(dry.json.rejected[0]).toMatchObject({
+      line: 3,
+      column: 'pole_lat',
+      read: '128.4',
+      problem: 'latitude beyond 90°',
+    });
     expect((await send({ kind: 'rotations', text })).json.written).toBe(false);
     expect((await app.call('GET', `${P}/rotations`, { as: lead })).json.items).toEqual([]);
   });
 
   it('writes the good rows when told to, and keeps the rejected ones to mend', async () => {
     await withBlocks();
-    const { json } = await send({ kind: 'rotations', text, name: 'poles.csv', fields: { skip_rejected: 'true' } });
+    const { json } = await send({
+      kind: 'rotations',
+      text,
+      name: 'poles.csv',
+      fields: { skip_rejected: 'true' },
+    });
     expect(json).toMatchObject({ accepted: 1, written: true });
     expect((await app.call('GET', `${P}/rotations`, { as: lead })).json.items).toHaveLength(1);
     const kept = await app.call('GET', `${P}/imports/${json.import_id}/rejected`, { as: lead });
@@ -81,27 +92,45 @@ describe('open questions', () => {
     const text = 'block;relative_to;age_ma;pole_lat;pole_lon;angle_deg\nsable;mantle-2;10;2,5;-27;4\n';
     const asked = await send({ kind: 'rotations', text });
     expect(asked.json.written).toBe(false);
-    expect(asked.json.questions.map((q: { id: string }) => q.id)).toEqual(['decimal_comma', 'missing_reference']);
-    const answers = Object.fromEntries(asked.json.questions.map((q: { id: string; choices: string[] }) => [q.id, q.choices[0]]));
+    expect(asked.json.questions.map((q: { id: string }) => q.id)).toEqual([
+      'decimal_comma',
+      'missing_reference',
+    ]);
+    const answers = Object.fromEntries(
+      asked.json.questions.map((q: { id: string; choices: string[] }) => [q.id, q.choices[0]]),
+    );
     const done = await send({ kind: 'rotations', text, fields: { answers: JSON.stringify(answers) } });
     expect(done.json).toMatchObject({ written: true, questions: [] });
     const rows = (await app.call('GET', `${P}/rotations`, { as: lead })).json.items;
     expect(rows[0]).toMatchObject({ pole_lat: 2.5, relative_to: 'mantle-2' });
-    const frame = (await app.call('GET', `${P}/blocks`, { as: lead })).json.items.find((b: { code: string }) => b.code === 'mantle-2');
+    const frame = (await app.call('GET', `${P}/blocks`, { as: lead })).json.items.find(
+      (b: { code: string }) => b.code === 'mantle-2',
+    );
     expect(frame).toMatchObject({ kind: 'frame', outlines: [] });
   });
 });
 
 describe('round trip', () => {
   it('imports every file of the demo without a rejection, and exports it so that importing changes nothing', async () => {
-    const kinds = { blocks: 'blocks.geojson', rotations: 'rotations.csv', features: 'features.geojson', directions: 'directions.csv' };
+    const kinds = {
+      blocks: 'blocks.geojson',
+      rotations: 'rotations.csv',
+      features: 'features.geojson',
+      directions: 'directions.csv',
+    };
     const counts = { blocks: 12, rotations: 103, features: 10, directions: 22 };
     for (const [kind, name] of Object.entries(kinds)) {
       const { json } = await send({ kind, text: demo(name), name });
-      expect(json).toMatchObject({ accepted: counts[kind as keyof typeof counts], rejected: [], questions: [], written: true });
+      expect(json).toMatchObject({
+        accepted: counts[kind as keyof typeof counts],
+        rejected: [],
+        questions: [],
+        written: true,
+      });
     }
     const exported: Record<string, string> = {};
-    for (const name of Object.values(kinds)) exported[name] = (await app.call('GET', `${P}/exports/${name}`, { as: lead })).text;
+    for (const name of Object.values(kinds))
+      exported[name] = (await app.call('GET', `${P}/exports/${name}`, { as: lead })).text;
     await app.call('POST', '/api/projects', { as: lead, body: { title: 'Copy', slug: 'copy' } });
     for (const [kind, name] of Object.entries(kinds)) {
       const again = await send({ kind, text: exported[name]!, name });
@@ -111,7 +140,9 @@ describe('round trip', () => {
       form.set('file', new File([exported[name]!], name));
       const copied = await app.call('POST', '/api/projects/copy/imports', { as: lead, raw: form });
       expect(copied.json.written).toBe(true);
-      expect((await app.call('GET', `/api/projects/copy/exports/${name}`, { as: lead })).text).toBe(exported[name]);
+      expect((await app.call('GET', `/api/projects/copy/exports/${name}`, { as: lead })).text).toBe(
+        exported[name],
+      );
     }
   });
 
@@ -120,7 +151,9 @@ describe('round trip', () => {
     const text = `${ROTATIONS.trim()},source,note\r\nsable,tarn,0.1,-0.30000000000000004,359.9999999999,1e-7,"Pell, ""A"" 2016","two\nlines"\r\n`;
     await send({ kind: 'rotations', text });
     const { text: out } = await app.call('GET', `${P}/exports/rotations.csv`, { as: lead });
-    expect(out).toContain('sable,tarn,0.1,-0.30000000000000004,359.9999999999,1e-7,,,unconstrained,,,,,,,,"Pell, ""A"" 2016","two\nlines"');
+    expect(out).toContain(
+      'sable,tarn,0.1,-0.30000000000000004,359.9999999999,1e-7,,,unconstrained,,,,,,,,"Pell, ""A"" 2016","two\nlines"',
+    );
   });
 });
 
@@ -153,7 +186,11 @@ describe('limits and rights', () => {
     const form = new FormData();
     form.set('kind', 'rotations');
     form.set('file', new File([`${ROTATIONS}sable,tarn,10,2.5,-27,4\n`], 'r.csv'));
-    const stale = await app.call('POST', `${P}/imports`, { as: lead, raw: form, headers: { 'If-Match': '"0"' } });
+    const stale = await app.call('POST', `${P}/imports`, {
+      as: lead,
+      raw: form,
+      headers: { 'If-Match': '"0"' },
+    });
     expect(stale.status).toBe(412);
   });
 });

@@ -8,7 +8,8 @@ import { closeWorkers } from '~/server/workers';
 import { createTestApp, type TestApp } from '../support/app';
 
 let app: TestApp;
-const slice = (format: string, query: string) => app.respond('GET', `/api/projects/lantern-sea/slice.${format}?${query}`);
+const slice = (format: string, query: string) =>
+  app.respond('GET', `/api/projects/lantern-sea/slice.${format}?${query}`);
 const PATH = 'path_block=sable&path_lat=-29.6&path_lon=41.2';
 
 beforeAll(async () => {
@@ -32,33 +33,66 @@ describe('SVG', () => {
     expect(answer.headers.get('cache-control')).toContain('immutable');
     const svg = await answer.text();
     const text = words(svg).replace(/[\u00a0\u2009]/g, ' ');
-    for (const part of ['62.4 Ma', 'Danian', 'spin axis', 'Version 7', 'Mollweide', 'Tolland et al. 2021', 'Merrow 2014', 'CC BY 4.0', 'ICS', 'km at the centre', '30° N', 'Sable']) {
+    for (const part of [
+      '62.4 Ma',
+      'Danian',
+      'spin axis',
+      'Version 7',
+      'Mollweide',
+      'Tolland et al. 2021',
+      'Merrow 2014',
+      'CC BY 4.0',
+      'ICS',
+      'km at the centre',
+      '30° N',
+      'Sable',
+    ]) {
       expect(text).toContain(part);
     }
     expect(text).toContain(CAUTION_LINE.slice(0, 60));
     expect(svg.includes('data:font/woff2;base64,')).toBe(true);
-    expect([...svg.matchAll(/data-block="([\w-]+)"/g)].map((m) => m[1]).sort()).toEqual(
-      ['corrie', 'fennick', 'marl', 'old-harrow', 'quill', 'sable', 'stannard', 'tarn', 'tessel', 'wether'],
-    );
+    expect([...svg.matchAll(/data-block="([\w-]+)"/g)].map((m) => m[1]).sort()).toEqual([
+      'corrie',
+      'fennick',
+      'marl',
+      'old-harrow',
+      'quill',
+      'sable',
+      'stannard',
+      'tarn',
+      'tessel',
+      'wether',
+    ]);
     expect(svg.match(/class="row"/g)!.length).toBeGreaterThan(10);
     expect(svg.includes('class="ellipse"')).toBe(true);
   });
 
   it('draws nothing that was turned off, whatever else is asked', async () => {
     const svg = await (await slice('svg', 'age_ma=0&layers=')).text();
-    for (const part of ['class="graticule"', 'class="coast"', 'class="velocity"']) expect(svg.includes(part)).toBe(false);
+    for (const part of ['class="graticule"', 'class="coast"', 'class="velocity"'])
+      expect(svg.includes(part)).toBe(false);
     expect(words(svg)).toContain('A reconstruction is a model');
     const arrows = await (await slice('svg', 'age_ma=62.4&layers=velocity')).text();
     expect(arrows.includes('class="velocity"')).toBe(true);
   });
 
   it('escapes what the user wrote', async () => {
-    const svg = await (await slice('svg', `age_ma=0&title=${encodeURIComponent('<script>alert(1)</script>')}`)).text();
+    const svg = await (
+      await slice('svg', `age_ma=0&title=${encodeURIComponent('<script>alert(1)</script>')}`)
+    ).text();
     expect(svg.includes('<script')).toBe(false);
     expect(svg.includes('&lt;script&gt;')).toBe(true);
   });
 
-  it.each(['equal-earth', 'mollweide', 'robinson', 'lambert-azimuthal', 'orthographic', 'polar-stereographic', 'mercator'])('%s', async (projection) => {
+  it.each([
+    'equal-earth',
+    'mollweide',
+    'robinson',
+    'lambert-azimuthal',
+    'orthographic',
+    'polar-stereographic',
+    'mercator',
+  ])('%s', async (projection) => {
     const answer = await slice('svg', `age_ma=100&projection=${projection}&centre_lat=-20&centre_lon=30`);
     expect(answer.status).toBe(200);
     const svg = await answer.text();
@@ -97,8 +131,18 @@ describe('PNG and PDF', () => {
     const document = await getDocument({ data: bytes, useSystemFonts: false, verbosity: 0 }).promise;
     const page = await document.getPage(1);
     const content = await page.getTextContent();
-    const text = content.items.map((item) => ('str' in item ? item.str : '')).join(' ').replace(/[\u00a0\u2009]/g, ' ');
-    for (const part of ['Closing of the Lantern Sea, 62.4 Ma', 'Version 7', 'Merrow 2014', 'A reconstruction is a model', 'Equal Earth']) expect(text).toContain(part);
+    const text = content.items
+      .map((item) => ('str' in item ? item.str : ''))
+      .join(' ')
+      .replace(/[\u00a0\u2009]/g, ' ');
+    for (const part of [
+      'Closing of the Lantern Sea, 62.4 Ma',
+      'Version 7',
+      'Merrow 2014',
+      'A reconstruction is a model',
+      'Equal Earth',
+    ])
+      expect(text).toContain(part);
     const [, , width, height] = page.view;
     expect(Math.abs(width! - 841.89)).toBeLessThan(0.1);
     expect(Math.abs(height! - 595.28)).toBeLessThan(0.1);
@@ -109,7 +153,12 @@ describe('GeoJSON', () => {
   it('is the same slice: outlines within ±180°, closed, with what it is said beside', async () => {
     const answer = await slice('geojson', 'age_ma=62.4');
     const data = (await answer.json()) as any;
-    expect(data).toMatchObject({ type: 'FeatureCollection', age_ma: 62.4, relative_to: 'spin-axis', caution: CAUTION_LINE });
+    expect(data).toMatchObject({
+      type: 'FeatureCollection',
+      age_ma: 62.4,
+      relative_to: 'spin-axis',
+      caution: CAUTION_LINE,
+    });
     const outlines = data.features.filter((f: any) => f.properties.kind === 'outline');
     expect(outlines).toHaveLength(10);
     for (const { geometry } of outlines) {
@@ -126,9 +175,15 @@ describe('GeoJSON', () => {
 
   it('at 0 Ma holds the outlines as they were entered', async () => {
     const now = (await (await slice('geojson', 'age_ma=0')).json()) as any;
-    const entered = JSON.parse(await (await app.respond('GET', '/api/projects/lantern-sea/exports/blocks.geojson')).text());
-    const at = (data: any, code: string) => data.features.find((f: any) => (f.properties.block ?? f.properties.code) === code);
-    const ring = (feature: any): number[][] => (feature.geometry.type === 'Polygon' ? feature.geometry.coordinates[0] : feature.geometry.coordinates[0][0]);
+    const entered = JSON.parse(
+      await (await app.respond('GET', '/api/projects/lantern-sea/exports/blocks.geojson')).text(),
+    );
+    const at = (data: any, code: string) =>
+      data.features.find((f: any) => (f.properties.block ?? f.properties.code) === code);
+    const ring = (feature: any): number[][] =>
+      feature.geometry.type === 'Polygon'
+        ? feature.geometry.coordinates[0]
+        : feature.geometry.coordinates[0][0];
     const drawn = ring(at(now, 'sable'));
     for (const [lon, lat] of ring(at(entered, 'sable'))) {
       const nearest = Math.min(...drawn.map(([x, y]) => Math.hypot(x! - lon!, y! - lat!)));
