@@ -34,18 +34,26 @@ export default function ImportDesk({ slug, blocks }: Props) {
   const [busy, setBusy] = useState<'reading' | 'writing' | null>(null);
   const [refused, setRefused] = useState<string | null>(null);
   const heading = useRef<HTMLHeadingElement>(null);
+  // The file chosen last is the one that counts, however late an earlier answer comes.
+  const latest = useRef(0);
 
   async function run(next: Desk, dryRun: boolean, skipRejected = false): Promise<void> {
+    const mine = ++latest.current;
     setDesk(next);
     setBusy(dryRun ? 'reading' : 'writing');
     setRefused(null);
     try {
-      setReport(await sendImport({ slug, ...next, dryRun, skipRejected }));
+      const read = await sendImport({ slug, ...next, dryRun, skipRejected });
+      if (mine !== latest.current) return;
+      setReport(read);
       heading.current?.focus();
     } catch (error) {
-      setRefused(error instanceof ImportRefused ? error.message : 'The server did not answer. Nothing was written; try again.');
+      if (mine !== latest.current) return;
+      setRefused(
+        error instanceof ImportRefused ? error.message : 'The server did not answer. Nothing was written; try again.',
+      );
     } finally {
-      setBusy(null);
+      if (mine === latest.current) setBusy(null);
     }
   }
 
@@ -61,7 +69,7 @@ export default function ImportDesk({ slug, blocks }: Props) {
 
   return (
     <div className="mt-6 grid gap-8">
-      <FilePicker busy={busy !== null} onChoose={(file) => void choose(file)} empty={blocks === 0} />
+      <FilePicker busy={busy === 'writing'} onChoose={(file) => void choose(file)} empty={blocks === 0} />
       {refused && (
         <p className="wrong" role="alert">
           {refused}
