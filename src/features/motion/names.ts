@@ -24,6 +24,10 @@ export const mapName = (block: Named): string => block.name.replace(/ (terrane|b
 export const blockName = (block: Named): string =>
   block.name.replace(/ (craton|terrane|block|microcontinent)$/, '');
 
+/** "Spin axis frame", "Old Harrow held still"; inside a sentence "spin axis frame". */
+export const frameName = (block: Named, within = false): string =>
+  block.kind === 'frame' ? `${within ? inText(block) : block.name} frame` : `${shortName(block)} held still`;
+
 /** "MK" for "Mara Kell". */
 export function initials(name: string): string {
   const words = name.trim().split(/\s+/);

@@ -49,7 +49,7 @@ function Panels({ head, ledger, notice }: Pick<Props, 'head' | 'ledger' | 'notic
           <LogPanel />
         </div>
         <div className="border-frame relative min-h-0 border-b max-xl:h-[600px]">
-          <GlobePanel />
+          <GlobePanel importHref={head.pages.find(({ id }) => id === 'import')?.href} />
           <div className="absolute right-5 bottom-2">{notice}</div>
           <Keys />
         </div>

@@ -25,9 +25,9 @@ export interface WorkbenchIslandProps {
   readonly heldStill: string | null;
   /** Why the ledger cannot be edited; null where it may. */
   readonly readOnly: string | null;
-  /** Lists read with the page; they spare the first requests. */
   /** True where the request came from a phone. */
   readonly phone?: boolean;
+  /** Lists read with the page; they spare the first requests. */
   readonly initial?: {
     readonly motions: MotionsAnswer;
     readonly tables: Readonly<Record<'blocks' | 'features' | 'directions', readonly unknown[]>>;

@@ -1,10 +1,13 @@
 /** The right half of the workbench: globe, map, or then and now, with the legend. */
+import { useMemo } from 'react';
 import { Segmented } from '../../../../components/ui/Segmented';
-import { age as ageText, coordinates, meridian, parallel } from '../../format';
+import { age as ageText, coordinates, count, meridian, parallel } from '../../format';
+import { frameAt, matrixOf } from '../../scene/frame';
 import { placeOf } from '../../globe/matrix';
 import { setView } from '../../store/actions';
 import { type View } from '../../store/state';
-import { useBench, useWorkbench } from '../bench';
+import { useBench, useCalmAge, useWorkbench } from '../bench';
+import { frameName } from '../../names';
 import { useNames } from '../use-names';
 import { BlockList } from './BlockList';
 import { GlobeCanvas } from './GlobeCanvas';
@@ -17,13 +20,12 @@ const VIEWS: readonly { readonly id: View; readonly label: string }[] = [
   { id: 'then-and-now', label: 'Then and now' },
 ];
 
-/** "Spin axis frame", "Sable held still". */
-export function useFrameName(): string {
+/** The frame's name as a heading, or inside a sentence. */
+export function useFrameName(within = false): string {
   const { scene } = useBench();
   const heldStill = useWorkbench((state) => state.heldStill);
   const block = scene.blocks.find(({ code }) => code === heldStill);
-  if (!block) return heldStill;
-  return block.kind === 'frame' ? `${block.name} frame` : `${block.short} held still`;
+  return block ? frameName(block, within) : heldStill;
 }
 
 function Heading({ view }: { view: View }) {
@@ -52,26 +54,50 @@ function Heading({ view }: { view: View }) {
   );
 }
 
-/** Where the pointer is; empty while it is elsewhere. */
+/** Where the pointer is; while it is elsewhere, how many blocks are missing from the picture. */
 function UnderPointer() {
+  const { scene, model } = useBench();
+  const age = useCalmAge();
+  const heldStill = useWorkbench((state) => state.heldStill);
+  const unplaced = useMemo(() => {
+    const frame = frameAt(model, age, heldStill);
+    return scene.blocks.filter((block) => block.outlines.length > 0 && !matrixOf(frame, block.code)).length;
+  }, [scene.blocks, model, age, heldStill]);
   const cursor = useWorkbench((state) => state.cursor);
   const nameOf = useNames();
   const place = cursor && placeOf(cursor.at);
   return (
-    <p
-      className="t-label tabular text-ink-2 pointer-events-none absolute bottom-2 left-5 h-[14px]"
-      aria-hidden="true"
-    >
+    <p className="t-label tabular text-ink-2 pointer-events-none absolute bottom-2 left-5 h-[14px]">
+      {!place && unplaced > 0 && `${count(unplaced, 'block has', 'blocks have')} no place at this age`}
       {place &&
         `${coordinates(place.lat, place.lon)}${cursor?.hit ? `, on ${nameOf(cursor.hit.block)}` : ''}`}
     </p>
   );
 }
 
-export function GlobePanel() {
-  const { store } = useBench();
+/** In place of a picture: there is nothing to draw yet, and two ways on. */
+function NoBlocks({ importHref }: { importHref: string | undefined }) {
+  return (
+    <div className="bg-paper/80 absolute inset-0 flex flex-col items-center justify-center gap-2">
+      <p className="t-answer">No blocks with an outline yet.</p>
+      <p className="t-body text-ink-2">
+        Add one in the ledger{importHref && ', or '}
+        {importHref && (
+          <a className="link" href={importHref}>
+            import a file
+          </a>
+        )}
+        .
+      </p>
+    </div>
+  );
+}
+
+export function GlobePanel({ importHref }: { readonly importHref?: string | undefined }) {
+  const { store, scene } = useBench();
   const view = useWorkbench((state) => state.view);
   const frame = useFrameName();
+  const empty = !scene.blocks.some(({ outlines }) => outlines.length > 0);
   return (
     <section aria-label="Globe" className="flex h-full min-h-0 flex-col">
       <header className="flex min-h-11 flex-wrap items-center gap-x-4 gap-y-1 px-5 pt-1.5 max-md:px-3.5">
@@ -94,6 +120,7 @@ export function GlobePanel() {
               flat={view === 'map'}
             />
             <UnderPointer />
+            {empty && <NoBlocks importHref={importHref} />}
           </div>
           <div className="overflow-auto py-4 max-md:hidden">
             <Legend />

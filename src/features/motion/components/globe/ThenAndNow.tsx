@@ -45,7 +45,7 @@ function UnderCursor() {
 
 export function ThenAndNow() {
   const age = useWorkbench((state) => state.age);
-  const frame = useFrameName();
+  const frame = useFrameName(true);
   return (
     <>
       <div className="grid min-h-0 grow grid-cols-2 max-sm:grid-cols-1">
@@ -53,7 +53,7 @@ export function ThenAndNow() {
           <figcaption className="px-5 py-1 max-md:px-3.5">
             <span className="t-answer mr-2.5 font-semibold">Then</span>
             <span className="t-value text-ochre-ink">{ageText(age)}</span>{' '}
-            <span className="t-body text-ink-2">{frame.charAt(0).toLowerCase() + frame.slice(1)}</span>
+            <span className="t-body text-ink-2">{frame}</span>
           </figcaption>
           <div className="min-h-0 grow">
             <GlobeCanvas label={`Then, ${ageText(age)}: drag to turn both globes`} describedBy="block-list" />

@@ -110,9 +110,14 @@ export function AgeLine({
         className="cursor-ns-resize outline-none"
       >
         <rect x={-4} y={-22} width={52} height={44} className="fill-transparent" />
-        {focused && <path d={flag(3)} className="stroke-ochre fill-none" strokeWidth="2" />}
-        <path d={flag(0)} className="fill-ochre stroke-paper" strokeWidth="1" />
-        <text x={32} y={4.2} textAnchor="end" className="t-table tabular fill-on-accent font-semibold">
+        {focused && <path d={flag(3, age)} className="stroke-ochre fill-none" strokeWidth="2" />}
+        <path d={flag(0, age)} className="fill-ochre stroke-paper" strokeWidth="1" />
+        <text
+          x={body(age) - 2}
+          y={4.2}
+          textAnchor="end"
+          className="t-table tabular fill-on-accent font-semibold"
+        >
           {ageValue(age)}
         </text>
       </g>
@@ -122,6 +127,11 @@ export function AgeLine({
 
 const strip = (layout: LogLayout, id: string) => layout.strips.find((candidate) => candidate.id === id);
 
+/** Width of the flag without its point: three figures before the point need more. */
+const body = (age: number): number => (age >= 99.95 ? 38 : 34);
+
 /** The flag's outline, grown by `g` for the focus ring. */
-const flag = (g: number): string =>
-  `M${0 - g} ${-9 - g}H${34 + g / 2}L${39 + g * 1.6} 0L${34 + g / 2} ${9 + g}H${0 - g}Z`;
+function flag(g: number, age: number): string {
+  const w = body(age);
+  return `M${0 - g} ${-9 - g}H${w + g / 2}L${w + 5 + g * 1.6} 0L${w + g / 2} ${9 + g}H${0 - g}Z`;
+}

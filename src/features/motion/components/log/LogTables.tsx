@@ -21,7 +21,7 @@ function Table({
     <table className="t-table mb-5 w-full border-collapse">
       <caption className="t-head border-frame border-b pb-1 text-left">{caption}</caption>
       <thead>
-        <tr className="border-rule text-ink-2 border-b [&>th]:px-2 [&>th]:py-1 [&>th]:text-right [&>th]:font-normal [&>th:first-child]:pl-0">
+        <tr className="border-rule text-ink-2 border-b [&>th]:px-2 [&>th]:py-1 [&>th]:text-right [&>th]:font-normal [&>th:first-child]:pl-0 [&>th:first-child]:text-left">
           {heads.map((head) => (
             <th key={head} scope="col">
               {head}
@@ -29,7 +29,7 @@ function Table({
           ))}
         </tr>
       </thead>
-      <tbody className="tabular [&_tr]:border-rule [&_td]:px-2 [&_td]:py-0.5 [&_td]:text-right [&_td:first-child]:pl-0 [&_tr]:border-b">
+      <tbody className="tabular [&_tr]:border-rule [&_td]:px-2 [&_td]:py-0.5 [&_td]:text-right [&_td:first-child]:pl-0 [&_td:first-child]:text-left [&_tr]:border-b">
         {children}
       </tbody>
     </table>
@@ -70,7 +70,7 @@ export function LogTables() {
         {columns.flatMap(({ block, bars }) =>
           bars.map((bar, i) => (
             <tr key={`${block}-${i}`}>
-              <td className="!text-left">{nameOf(block)}</td>
+              <td>{nameOf(block)}</td>
               <td>{ageValue(bar.age)}</td>
               <td>{bar.handOver ? 'yes' : ''}</td>
               <td>{bar.withoutCovariance ? 'none' : 'given'}</td>
@@ -101,7 +101,7 @@ export function LogTables() {
         >
           {observed.map((datum) => (
             <tr key={datum.id}>
-              <td className="!text-left">{datum.site}</td>
+              <td>{datum.site}</td>
               <td>{ageValue(datum.age)}</td>
               <td>{number(datum.lat, 1)}</td>
               {limits(datum.lower, datum.upper)}

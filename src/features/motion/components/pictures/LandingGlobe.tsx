@@ -31,11 +31,11 @@ export default function LandingGlobe({ version, ...props }: Props) {
 
 function Caption({ title, version }: { title: string; version: string }) {
   const age = useWorkbench((state) => state.age);
-  const frame = useFrameName();
+  const frame = useFrameName(true);
   return (
     <figcaption className="t-caption text-ink-2 mx-auto max-w-[36em] pt-1 text-center">
-      {title}, {version}, at {ageText(age)} in the {frame.charAt(0).toLowerCase() + frame.slice(1)}. Dashed:
-      present coast, for location only. A reconstruction is a model, not an observation.
+      {title}, {version}, at {ageText(age)}, {frame}. Dashed: present coast, for location only. A
+      reconstruction is a model, not an observation.
     </figcaption>
   );
 }

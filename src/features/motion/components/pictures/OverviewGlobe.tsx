@@ -33,14 +33,14 @@ export default function OverviewGlobe({ version, ...props }: Props) {
 function Caption({ version }: { version: string }) {
   const { point, scene } = useBench();
   const age = useWorkbench((state) => state.age);
-  const frame = useFrameName();
+  const frame = useFrameName(true);
   const path = point ? ` Ochre: drift path of ${point.subject}.` : '';
   const coasts = scene.lines.some(({ kind }) => kind === 'layer')
     ? ' Dashed: present coast, for location only.'
     : '';
   return (
     <figcaption className="t-caption text-ink-2 pt-2 text-center">
-      {ageText(age)}, {frame.charAt(0).toLowerCase() + frame.slice(1)}, {version}.{path}
+      {ageText(age)}, {frame}, {version}.{path}
       {coasts}
     </figcaption>
   );

@@ -4,14 +4,22 @@ import { initials } from '../../names';
 import { otherTheme, setTheme, useTheme } from '../../theme';
 import { type Account } from './head';
 
-export function AccountCell({ account }: { readonly account: Account | null }) {
+const ROUND =
+  'flex size-7 items-center justify-center rounded-full border border-ink text-center text-[11.5px] font-medium max-md:size-11';
+
+interface Props {
+  readonly account: Account | null;
+  readonly signIn: string;
+}
+
+export function AccountCell({ account, signIn }: Props) {
   const theme = useTheme();
   const other = otherTheme(theme);
   const look = { id: 'theme', label: other === 'dark' ? 'Night desk' : 'Light paper' };
-  const links = account?.links ?? [];
+  const links = account?.links ?? [{ id: 'sign-in', label: 'Sign in', href: signIn }];
   return (
     <MenuCell
-      label={account ? `Account of ${account.name}` : 'Sign in and appearance'}
+      label={account ? `${initials(account.name)}, account of ${account.name}` : 'Sign in, and the theme'}
       groups={[
         { ...(account ? { title: `${account.name}, ${account.email}` } : {}), choices: [...links, look] },
       ]}
@@ -20,9 +28,9 @@ export function AccountCell({ account }: { readonly account: Account | null }) {
         if (id === 'sign-out') signOut();
       }}
       placement="bottom end"
-      className="border-ink flex size-7 items-center justify-center rounded-full border text-center text-[11.5px] font-medium max-md:size-11"
+      className={account ? ROUND : 'button'}
     >
-      <span aria-hidden="true">{account ? initials(account.name) : '?'}</span>
+      {account ? initials(account.name) : 'Sign in'}
     </MenuCell>
   );
 }

@@ -148,7 +148,7 @@ export function TitleBlock({ head }: { readonly head: Head }) {
       <div className="ml-auto flex items-center gap-2 px-5">
         <Share />
         <PrintLink href={head.print} />
-        <AccountCell account={head.account} />
+        <AccountCell account={head.account} signIn={head.signIn} />
       </div>
     </header>
   );

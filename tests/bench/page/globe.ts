@@ -3,13 +3,13 @@
  * time of every frame.
  */
 import { geoOrthographic, geoPath, type GeoPermissibleObjects } from 'd3-geo';
-import { Clipper } from '../../src/features/motion/globe/clip';
-import { globeGround } from '../../src/features/motion/globe/ground-globe';
-import { multiply, viewMatrix } from '../../src/features/motion/globe/matrix';
-import { paintBlocks, type DrawnBlock } from '../../src/features/motion/globe/paint-blocks';
-import { buildPatterns } from '../../src/features/motion/globe/patterns';
-import { TOKENS, type Palette } from '../../src/features/motion/globe/palette';
-import { polygonShape } from '../../src/features/motion/globe/shape';
+import { Clipper } from '../../../src/features/motion/globe/clip';
+import { globeGround } from '../../../src/features/motion/globe/ground-globe';
+import { multiply, viewMatrix } from '../../../src/features/motion/globe/matrix';
+import { paintBlocks, type DrawnBlock } from '../../../src/features/motion/globe/paint-blocks';
+import { buildPatterns } from '../../../src/features/motion/globe/patterns';
+import { TOKENS, type Palette } from '../../../src/features/motion/globe/palette';
+import { polygonShape, type Shape } from '../../../src/features/motion/globe/shape';
 
 const BLOCKS = 300;
 const EVIDENCE = ['published', 'fitted', 'posed', 'unconstrained'] as const;
@@ -84,6 +84,9 @@ function d3Rotation(m: Float64Array): [number, number, number] {
   return [-lon * deg, -lat * deg, Math.atan2(-(m[2] as number), m[5] as number) * deg];
 }
 
+/** `ours` draws as the workbench does while it moves, by level of detail; `every vertex` drops none, as d3-geo. */
+export type Renderer = 'ours' | 'every vertex' | 'd3';
+
 export interface Timing {
   readonly frames: number[];
   readonly vertices: number;
@@ -93,6 +96,9 @@ const LIGHT: Record<string, string> = {
   globe: '#FCFAF5', outline: '#27313C', 'ev-ink': '#3E4A52', 'ev-published': '#DCDCD6',
   'ev-fitted': '#CBDCD5', 'ev-posed': '#EADBC0', 'ev-unconstrained': '#F7F4EC',
 }; // prettier-ignore
+
+/** A shape without coarser levels: every vertex is drawn at any scale. */
+const whole = (shape: Shape): Shape => ({ ...shape, levels: shape.levels.slice(0, 1) });
 
 function canvasOf(size: number): CanvasRenderingContext2D {
   const canvas = document.createElement('canvas');
@@ -104,7 +110,7 @@ function canvasOf(size: number): CanvasRenderingContext2D {
 /** Waits for a painted frame, so that the time of rasterising counts. */
 const flushed = (ctx: CanvasRenderingContext2D) => ctx.getImageData(0, 0, 1, 1).data[0];
 
-export function run(which: 'ours' | 'd3', vertices: number, frames: number, size: number): Timing {
+export function run(which: Renderer, vertices: number, frames: number, size: number): Timing {
   const ctx = canvasOf(size);
   const palette = {
     ...Object.fromEntries(TOKENS.map((name) => [name, '#1C2530'])),
@@ -116,19 +122,16 @@ export function run(which: 'ours' | 'd3', vertices: number, frames: number, size
   const times: number[] = [];
   const drawn: DrawnBlock[] = moving.map((body, i) => ({
     evidence: body.evidence,
-    shape: polygonShape(body.geometry),
+    shape: which === 'every vertex' ? whole(polygonShape(body.geometry)) : polygonShape(body.geometry),
     carrier: i,
   }));
   const clipper = new Clipper();
   const projection = geoOrthographic().scale(disc.radius).translate([disc.cx, disc.cy]).clipAngle(90);
   const path = geoPath(projection, ctx);
-  const reversed = moving.map(
-    (body) =>
-      ({
-        ...body.geometry,
-        coordinates: body.geometry.coordinates.map((r) => [...r].reverse()),
-      }),
-  );
+  const reversed = moving.map((body) => ({
+    ...body.geometry,
+    coordinates: body.geometry.coordinates.map((r) => [...r].reverse()),
+  }));
   const poses = new Float64Array(9 * BLOCKS);
   const turned = new Float64Array(9);
   const fit = (2 * disc.radius) / size;
@@ -138,7 +141,7 @@ export function run(which: 'ours' | 'd3', vertices: number, frames: number, size
     moving.forEach((body, i) => poses.set(spin(body.pole, body.rate * frame), 9 * i));
     ctx.fillStyle = palette.globe;
     ctx.fillRect(0, 0, size, size);
-    if (which === 'ours') {
+    if (which !== 'd3') {
       const ground = globeGround(
         { centre, zoom: 1, width: size, height: size, scale: 1, moving: true, fit },
         clipper,
@@ -168,7 +171,7 @@ export function run(which: 'ours' | 'd3', vertices: number, frames: number, size
 declare global {
   interface Window {
     globeBench: typeof run;
-    globePicture: (which: 'ours' | 'd3') => string;
+    globePicture: (which: Renderer) => string;
   }
 }
 window.globeBench = run;
