@@ -3,7 +3,7 @@
  * d3-geo drawing the same blocks with the same fills. Ours drops what a pixel cannot show while it moves; the last row
  * draws every vertex, as d3-geo always does.
  */
-import { type Renderer } from './page/globe';
+import type { Renderer } from './page/globe';
 import path from 'node:path';
 import { build } from 'esbuild';
 import { chromium } from 'playwright';
