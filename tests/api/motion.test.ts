@@ -1,0 +1,138 @@
+/**
+ * The kernel's exact cases over HTTP. Each follows from the definition of a rotation about one pole or two at right angles
+ * (Chang 1988 for the conventions); the sphere has R = 6371.0088 km (IUGG mean), so 1° is 111.195 km.
+ */
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { createTestApp, type Answer, type TestApp } from '../support/app';
+import { addRotations, createTeam, type Team } from '../support/team';
+
+let app: TestApp;
+let team: Team;
+beforeAll(async () => {
+  app = await createTestApp();
+});
+beforeEach(async () => {
+  await app.reset();
+  team = await createTeam(app);
+});
+afterAll(() => app.close());
+
+type Rows = Parameters<typeof addRotations>[2];
+const give = async (rows: Rows): Promise<void> => {
+  const answer = await addRotations(app, team, rows);
+  expect(answer.status, answer.text).toBeLessThan(300);
+};
+const get = (path: string): Promise<Answer> => app.call('GET', team.at(path), { as: team.reviewer });
+const near = (value: number, expected: number, within: number): void => expect(Math.abs(value - expected)).toBeLessThanOrEqual(within);
+const KM_PER_DEG = (6371.0088 * Math.PI) / 180;
+
+describe('rotation', () => {
+  it('between 90° about 90°N at 10 Ma and 90° about (0, 0) at 20 Ma is 70.529° about (45, 0) at 15 Ma', async () => {
+    await give([['sable', 'spin-axis', 10, 90, 0, 90], ['sable', 'spin-axis', 20, 0, 0, 90]]); // prettier-ignore
+    const { json } = await get('rotation?block=sable&age_ma=15&relative_to=spin-axis');
+    near(json.pole_lat, 45, 1e-9);
+    near(json.pole_lon, 0, 1e-9);
+    near(json.angle_deg, 70.528779, 1e-6);
+    expect(json).toMatchObject({ version: 'draft', covariance: null, uncertainty: 'none of 1 links carries a covariance' });
+    expect(json.chain[0]).toMatchObject({ block: 'sable', relative_to: 'spin-axis', older_ma: 20, younger_ma: 10 });
+  });
+
+  it('of A by 90° about 90°N and B on A by 90° about (0, 0) is 120° about (35.264, 45)', async () => {
+    await give([['a', 'axis', 10, 90, 0, 90], ['b', 'a', 10, 0, 0, 90]]); // prettier-ignore
+    const { json } = await get('rotation?block=b&age_ma=10&relative_to=axis');
+    near(json.pole_lat, 35.26439, 1e-5);
+    near(json.pole_lon, 45, 1e-9);
+    near(json.angle_deg, 120, 1e-9);
+  });
+
+  it('of 40° at 20 Ma about one pole is 10° at 5 Ma', async () => {
+    await give([['sable', 'axis', 20, 25, 71, 40]]);
+    near((await get('rotation?block=sable&age_ma=5&relative_to=axis')).json.angle_deg, 10, 1e-9);
+  });
+
+  it('of a block that goes from A to B and back to A takes the younger leg at each hand-over', async () => {
+    await give([
+      ['c', 'a', 10, 90, 0, 5], ['c', 'b', 10, 90, 0, 3], ['c', 'b', 20, 90, 0, 6], ['c', 'a', 20, 90, 0, 9], ['c', 'a', 30, 90, 0, 12],
+      ['a', 'axis', 30, 90, 0, 0], ['b', 'axis', 30, 90, 0, 0],
+    ]); // prettier-ignore
+    const at = async (age: number): Promise<{ angle: number; reference: string }> => {
+      const { json } = await get(`rotation?block=c&age_ma=${age}&relative_to=axis`);
+      return { angle: json.angle_deg, reference: json.chain[0].relative_to };
+    };
+    // At a hand-over the younger leg applies.
+    expect((await at(10)).reference).toBe('a');
+    near((await at(10)).angle, 5, 1e-9);
+    expect(await at(15)).toMatchObject({ reference: 'b' });
+    near((await at(15)).angle, 4.5, 1e-9);
+    expect((await at(20)).reference).toBe('b');
+    near((await at(25)).angle, 10.5, 1e-9);
+  });
+
+  it('answers a question without sense by name, and an age without rotations by status', async () => {
+    await give([['sable', 'axis', 20, 25, 71, 40]]);
+    expect((await get('rotation?block=nobody&age_ma=5&relative_to=axis')).json.title).toBe('Unknown block');
+    expect((await get('rotation?block=sable&age_ma=-5&relative_to=axis')).status).toBe(400);
+    const older = await get('rotation?block=sable&age_ma=25&relative_to=axis');
+    expect(older.status).toBe(200);
+    expect(older.json).toMatchObject({ status: 'outside rotations', pole_lat: null, angle_deg: null });
+  });
+});
+
+describe('motion', () => {
+  it('10° at 10 Ma and 25° at 20 Ma about 90°N: a forward stage of −15° and 166.8 mm/yr due west at the equator', async () => {
+    await give([['sable', 'axis', 10, 90, 0, 10], ['sable', 'axis', 20, 90, 0, 25]]); // prettier-ignore
+    const stage = (await get('stage?block=sable&older_ma=20&younger_ma=10&relative_to=axis&in=reference')).json;
+    // −15° about 90°N is 15° about 90°S.
+    near(Math.sign(stage.pole_lat) * stage.angle_deg, -15, 1e-9);
+    near(Math.abs(stage.pole_lat), 90, 1e-9);
+    const { json } = await get('velocity?block=sable&lat=0&lon=0&age_ma=15&relative_to=axis');
+    near(json.speed_mm_yr, 1.5 * KM_PER_DEG, 1e-6);
+    near(json.speed_mm_yr, 166.8, 0.05);
+    near(json.azimuth_deg, 270, 1e-9);
+    near(json.east_mm_yr, -166.8, 0.05);
+    near(json.north_mm_yr, 0, 1e-9);
+    expect(json).toMatchObject({ older_ma: 20, younger_ma: 10 });
+  });
+
+  it('+1°/Myr forward about 90°N: 111.2 mm/yr at the equator, 55.6 at 60°, due east', async () => {
+    await give([['sable', 'axis', 100, 90, 0, -100]]);
+    const equator = (await get('velocity?block=sable&lat=0&lon=0&age_ma=50&relative_to=axis')).json;
+    near(equator.speed_mm_yr, KM_PER_DEG, 1e-6);
+    near(equator.azimuth_deg, 90, 1e-9);
+    near((await get('velocity?block=sable&lat=60&lon=10&age_ma=50&relative_to=axis')).json.speed_mm_yr, KM_PER_DEG / 2, 1e-6);
+  });
+
+  it('a drift path goes through the steps and the ages of rows, each with its place, speed and kind', async () => {
+    await give([['sable', 'axis', 25, 90, 0, 25], ['sable', 'axis', 40, 90, 0, 55]]); // prettier-ignore
+    const { json } = await get('drift-path?block=sable&lat=10&lon=170&older_ma=45&younger_ma=0&step_ma=10&relative_to=axis');
+    expect(json.points.map((p: { age_ma: number }) => p.age_ma)).toEqual([0, 10, 20, 25, 30, 40, 45]);
+    const at = (age: number) => json.points.find((p: { age_ma: number }) => p.age_ma === age);
+    expect([25, 40].every((age) => at(age).at_row)).toBe(true);
+    expect(at(10).at_row).toBe(false);
+    // (10, 170) turned 25° about the north pole passes the antimeridian.
+    near(at(25).lon, -165, 1e-9);
+    near(at(25).lat, 10, 1e-9);
+    near(at(20).speed_mm_yr, KM_PER_DEG * Math.cos(Math.PI / 18), 1e-6);
+    near(at(30).speed_mm_yr, 2 * KM_PER_DEG * Math.cos(Math.PI / 18), 1e-6);
+    expect(at(45)).toMatchObject({ lat: null, lon: null, status: 'outside rotations', ellipse_95: null });
+    const csv = await get('drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=csv');
+    expect(csv.headers.get('content-type')).toContain('text/csv');
+    const geojson = await get('drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=geojson');
+    expect(geojson.json.type).toBe('FeatureCollection');
+  });
+
+  it('a circuit of two 4°/Myr links agrees by hand and through motions, quaternions and rotation to 10⁻⁹ degrees', async () => {
+    await give([['a', 'axis', 10, 90, 0, 40], ['b', 'a', 10, 0, 0, 40]]); // prettier-ignore
+    const { json } = await get('rotation?block=b&age_ma=5&relative_to=axis');
+    // By hand: 20° about z times 20° about x; w = cos²10°, so the angle is 2 acos(cos²10°).
+    const c = Math.cos(Math.PI / 18);
+    const s = Math.sin(Math.PI / 18);
+    const hand = [c * c, c * s, s * s, c * s];
+    near(json.angle_deg, (2 * Math.acos(c * c) * 180) / Math.PI, 1e-9);
+    const rows = (await get('quaternions?age_ma=5&relative_to=axis')).json;
+    const q = (rows.blocks ?? rows.items).find((row: { block?: string; code?: string }) => (row.block ?? row.code) === 'b').quaternion;
+    hand.forEach((component, i) => near(Math.abs(q[i]), Math.abs(component), 1e-11));
+    const motions = (await get('motions')).json;
+    expect(motions.blocks.find((block: { code: string }) => block.code === 'b').legs[0].stages[0]).toMatchObject({ younger_ma: 0, older_ma: 10 });
+  });
+});
