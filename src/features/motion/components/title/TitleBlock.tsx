@@ -145,7 +145,7 @@ export function TitleBlock({ head }: { readonly head: Head }) {
       <HeldStillCell />
       <AgeCell />
       <SelectedCell />
-      <div className="ml-auto flex items-center gap-2 px-5">
+      <div className="ml-auto flex shrink-0 items-center gap-2 px-5 whitespace-nowrap">
         <Share />
         <PrintLink href={head.print} />
         <AccountCell account={head.account} signIn={head.signIn} />
