@@ -26,7 +26,7 @@ function Value({ label, children, list = false }: { label: string; children: Rea
 }
 
 const Detail = ({ children }: { children: ReactNode }) => (
-  <span className="text-ink-2 font-normal">{children}</span>
+  <span className="text-ink-2 font-normal max-xl:hidden">{children}</span>
 );
 
 export function HeldStillCell({ compact = false }: { compact?: boolean }) {
