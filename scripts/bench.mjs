@@ -13,7 +13,10 @@ const only = process.argv[2];
 const folder = path.join(root, 'tests/bench');
 const cache = path.join(root, 'node_modules/.cache/bench');
 
-for (const file of fs.readdirSync(folder).filter((f) => /^[a-z-]+\.ts$/.test(f)).sort()) {
+for (const file of fs
+  .readdirSync(folder)
+  .filter((f) => /^[a-z-]+\.ts$/.test(f))
+  .sort()) {
   const name = path.parse(file).name;
   if (only && only !== name) continue;
   const outfile = path.join(cache, `${name}.mjs`);
@@ -31,7 +34,12 @@ for (const file of fs.readdirSync(folder).filter((f) => /^[a-z-]+\.ts$/.test(f))
   const { default: bench } = await import(pathToFileURL(outfile).href);
   console.log(`\n${name}`);
   for (const row of await bench()) {
-    const cells = [row.name, `${row.ours} ${row.unit}`, `${row.reference} ${row.unit}`, row.ratio === null ? '' : `× ${row.ratio}`];
+    const cells = [
+      row.name,
+      `${row.ours} ${row.unit}`,
+      `${row.reference} ${row.unit}`,
+      row.ratio === null ? '' : `× ${row.ratio}`,
+    ];
     console.log('  ' + cells.map((cell, i) => String(cell).padEnd([58, 20, 20, 12][i])).join(''));
   }
 }

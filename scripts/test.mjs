@@ -7,7 +7,12 @@ const long = process.argv.includes('--long');
 requireNode();
 await install();
 const chromium = requireChromium();
-const env = { ...process.env, CHROMIUM_PATH: chromium, ASTRO_TELEMETRY_DISABLED: '1', ...(long ? { LONG: '1' } : {}) };
+const env = {
+  ...process.env,
+  CHROMIUM_PATH: chromium,
+  ASTRO_TELEMETRY_DISABLED: '1',
+  ...(long ? { LONG: '1' } : {}),
+};
 
 const STEPS = [
   ['Types', () => run(bin('astro'), ['check', '--minimumFailingSeverity', 'error'], { env })],
@@ -23,7 +28,9 @@ for (const [name, step] of STEPS) {
   const started = Date.now();
   console.log(`\n${name} …`);
   if ((await step()) !== 0) failed.push(name);
-  console.log(`${name}: ${failed.at(-1) === name ? 'failed' : 'passed'} in ${Math.round((Date.now() - started) / 1000)} s`);
+  console.log(
+    `${name}: ${failed.at(-1) === name ? 'failed' : 'passed'} in ${Math.round((Date.now() - started) / 1000)} s`,
+  );
 }
 if (failed.length > 0) console.error(`\nFailed: ${failed.join(', ')}`);
 console.log(`\n${STEPS.length - failed.length} passed, ${failed.length} failed`);

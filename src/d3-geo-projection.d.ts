@@ -7,5 +7,8 @@ declare module 'd3-geo-projection' {
   export function geoRobinson(): GeoProjection;
   export const geoMollweideRaw: GeoRawProjection;
   export const geoRobinsonRaw: GeoRawProjection;
-  export function geoProject<T extends Feature | FeatureCollection | Geometry>(object: T, projection: unknown): T | null;
+  export function geoProject<T extends Feature | FeatureCollection | Geometry>(
+    object: T,
+    projection: unknown,
+  ): T | null;
 }

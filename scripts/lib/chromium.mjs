@@ -2,7 +2,12 @@
 import { spawnSync } from 'node:child_process';
 import fs from 'node:fs';
 
-const PLACES = ['/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome', '/snap/bin/chromium'];
+const PLACES = [
+  '/usr/bin/chromium',
+  '/usr/bin/chromium-browser',
+  '/usr/bin/google-chrome',
+  '/snap/bin/chromium',
+];
 
 /** Flags for a machine without GPU and without a way out to the network. */
 export const CHROMIUM_FLAGS = [

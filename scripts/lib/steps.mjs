@@ -40,7 +40,11 @@ function* filesUnder(entry) {
 export function hashOf(entries) {
   const hash = createHash('sha256');
   for (const entry of entries) {
-    for (const file of filesUnder(entry)) hash.update(file).update('\0').update(fs.readFileSync(path.join(root, file)));
+    for (const file of filesUnder(entry))
+      hash
+        .update(file)
+        .update('\0')
+        .update(fs.readFileSync(path.join(root, file)));
   }
   return hash.update(process.version).digest('hex');
 }

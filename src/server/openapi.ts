@@ -37,16 +37,30 @@ export const addressOf = (file: string): string =>
     .replace(/(?:\/index)?\.ts$/, '')
     .replace(/\[(\w+)\]/g, '{$1}');
 
-const schemaOf = (shape: z.ZodType, io: 'input' | 'output'): unknown => z.toJSONSchema(shape, { io, unrepresentable: 'any' });
+const schemaOf = (shape: z.ZodType, io: 'input' | 'output'): unknown =>
+  z.toJSONSchema(shape, { io, unrepresentable: 'any' });
 
 function queryParameters(shape: z.ZodType | undefined): Parameter[] {
   if (!shape) return [];
-  const { properties = {}, required = [] } = schemaOf(shape, 'input') as { properties?: Record<string, unknown>; required?: string[] };
-  return Object.entries(properties).map(([name, schema]) => ({ name, in: 'query', required: required.includes(name), schema }));
+  const { properties = {}, required = [] } = schemaOf(shape, 'input') as {
+    properties?: Record<string, unknown>;
+    required?: string[];
+  };
+  return Object.entries(properties).map(([name, schema]) => ({
+    name,
+    in: 'query',
+    required: required.includes(name),
+    schema,
+  }));
 }
 
 function parametersOf(path: string, spec: RouteSpec): Parameter[] {
-  const inPath = [...path.matchAll(/\{(\w+)\}/g)].map(([, name]): Parameter => ({ name: name!, in: 'path', required: true, schema: { type: 'string' } }));
+  const inPath = [...path.matchAll(/\{(\w+)\}/g)].map(([, name]): Parameter => ({
+    name: name!,
+    in: 'path',
+    required: true,
+    schema: { type: 'string' },
+  }));
   const revision: Parameter = {
     name: 'If-Match',
     in: 'header',
@@ -57,11 +71,17 @@ function parametersOf(path: string, spec: RouteSpec): Parameter[] {
   return [...inPath, ...queryParameters(spec.query), ...(spec.edits ? [revision] : [])];
 }
 
-const PROBLEM = { content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } } };
+const PROBLEM = {
+  content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } },
+};
 
 function operationOf(path: string, spec: RouteSpec): Operation {
-  const rule = (PROJECT_POLICY as Record<string, { roles: readonly string[]; visitors?: string }>)[spec.action as ProjectAction];
-  const who = rule ? `Roles: ${rule.roles.join(', ')}${rule.visitors ? `; visitors ${rule.visitors}` : ''}.` : `Action: ${spec.action}.`;
+  const rule = (PROJECT_POLICY as Record<string, { roles: readonly string[]; visitors?: string }>)[
+    spec.action as ProjectAction
+  ];
+  const who = rule
+    ? `Roles: ${rule.roles.join(', ')}${rule.visitors ? `; visitors ${rule.visitors}` : ''}.`
+    : `Action: ${spec.action}.`;
   const accepted = spec.accepts ?? spec.body;
   const answer = spec.streams
     ? { content: { [spec.streams]: {} } }
@@ -76,7 +96,10 @@ function operationOf(path: string, spec: RouteSpec): Operation {
     description: who,
     parameters: parametersOf(path, spec),
     ...(body ? { requestBody: { required: true, content: body } } : {}),
-    responses: { [String(spec.status ?? 200)]: { description: 'Done.', ...answer }, default: { description: 'A problem (RFC 9457).', ...PROBLEM } },
+    responses: {
+      [String(spec.status ?? 200)]: { description: 'Done.', ...answer },
+      default: { description: 'A problem (RFC 9457).', ...PROBLEM },
+    },
   };
 }
 
@@ -101,7 +124,8 @@ async function makeDocument(): Promise<OpenApi> {
     info: {
       title: 'Driftwright',
       version: '1',
-      description: 'Build, defend and print plate reconstructions. Ages in Ma, angles in degrees, rates in mm/yr; names carry their unit.',
+      description:
+        'Build, defend and print plate reconstructions. Ages in Ma, angles in degrees, rates in mm/yr; names carry their unit.',
     },
     paths,
     components: {
@@ -125,7 +149,17 @@ const PROBLEM_SCHEMA = {
     detail: text,
     errors: {
       type: 'array',
-      items: { type: 'object', properties: { path: text, line: { type: 'integer' }, column: text, read: text, problem: text, hint: text } },
+      items: {
+        type: 'object',
+        properties: {
+          path: text,
+          line: { type: 'integer' },
+          column: text,
+          read: text,
+          problem: text,
+          hint: text,
+        },
+      },
     },
   },
 };

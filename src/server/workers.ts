@@ -16,7 +16,7 @@ export async function runInWorker<Job, Result>(
   job: Job,
   signal?: AbortSignal,
 ): Promise<Result> {
-  const pools = (holder[KEY] ??= new Map());
+  const pools: Map<string, Piscina> = (holder[KEY] ??= new Map<string, Piscina>());
   let pool = pools.get(file);
   if (!pool) {
     pool = new Piscina({

@@ -37,12 +37,26 @@ afterAll(() => {
   fs.rmSync(folder, { recursive: true, force: true });
 });
 
-function serve(onPort = port): { child: ChildProcess; ended: Promise<{ code: number | null; said: string }> } {
-  const env = { ...process.env, PORT: String(onPort), DATA_DIR: path.join(folder, 'pglite'), DRIFTWRIGHT_DEMO: 'off', LOG_LEVEL: 'silent' };
-  const child = spawn(process.execPath, ['server.mjs'], { cwd: ROOT, env, stdio: ['ignore', 'pipe', 'pipe'] });
+function serve(onPort = port): {
+  child: ChildProcess;
+  ended: Promise<{ code: number | null; said: string }>;
+} {
+  const env = {
+    ...process.env,
+    PORT: String(onPort),
+    DATA_DIR: path.join(folder, 'pglite'),
+    DRIFTWRIGHT_DEMO: 'off',
+    LOG_LEVEL: 'silent',
+  };
+  const child = spawn(process.execPath, ['server.mjs'], {
+    cwd: ROOT,
+    env,
+    stdio: ['ignore', 'pipe', 'pipe'],
+  });
   running.add(child);
   let said = '';
-  for (const stream of [child.stdout, child.stderr]) stream!.on('data', (chunk: Buffer) => (said += chunk.toString()));
+  for (const stream of [child.stdout, child.stderr])
+    stream.on('data', (chunk: Buffer) => (said += chunk.toString()));
   const ended = new Promise<{ code: number | null; said: string }>((resolve) =>
     child.once('close', (code) => {
       running.delete(child);
@@ -61,13 +75,24 @@ async function ready(): Promise<void> {
   throw new Error('the server did not come up');
 }
 
-const json = async (path: string, init: { method?: string; body?: unknown; cookie?: string } = {}): Promise<{ status: number; body: any; cookie: string }> => {
+const json = async (
+  path: string,
+  init: { method?: string; body?: unknown; cookie?: string } = {},
+): Promise<{ status: number; body: any; cookie: string }> => {
   const answer = await fetch(base + path, {
     method: init.method ?? 'GET',
-    headers: { origin: base, ...(init.cookie ? { cookie: init.cookie } : {}), ...(init.body ? { 'content-type': 'application/json', 'if-match': '*' } : {}) },
+    headers: {
+      origin: base,
+      ...(init.cookie ? { cookie: init.cookie } : {}),
+      ...(init.body ? { 'content-type': 'application/json', 'if-match': '*' } : {}),
+    },
     ...(init.body ? { body: JSON.stringify(init.body) } : {}),
   });
-  return { status: answer.status, body: await answer.json().catch(() => null), cookie: answer.headers.getSetCookie()[0]?.split(';')[0] ?? '' };
+  return {
+    status: answer.status,
+    body: await answer.json().catch(() => null),
+    cookie: answer.headers.getSetCookie()[0]?.split(';')[0] ?? '',
+  };
 };
 
 const BUILT = fs.existsSync(path.join(ROOT, 'dist/server/entry.mjs'));
@@ -76,7 +101,10 @@ describe.runIf(BUILT)('a killed server', () => {
   it(`keeps every acknowledged edit through ${KILLS} kills`, async () => {
     let server = serve();
     await ready();
-    const { cookie } = await json('/api/auth/sign-up', { method: 'POST', body: { name: 'Kit Marsh', email: 'kit@example.org', password: 'lava over sand 9' } });
+    const { cookie } = await json('/api/auth/sign-up', {
+      method: 'POST',
+      body: { name: 'Kit Marsh', email: 'kit@example.org', password: 'lava over sand 9' },
+    });
     await json('/api/projects', { method: 'POST', cookie, body: { title: 'Kept', slug: 'kept' } });
     const acknowledged = new Set<string>();
     for (let kill = 0; kill < KILLS; kill++) {
@@ -84,12 +112,17 @@ describe.runIf(BUILT)('a killed server', () => {
       const writing = (async () => {
         for (let i = 0; alive; i++) {
           const code = `k${kill}-b${i}`;
-          const answer = await json('/api/projects/kept/blocks', { method: 'POST', cookie, body: { code, name: code, kind: 'terrane' } }).catch(() => null);
+          const answer = await json('/api/projects/kept/blocks', {
+            method: 'POST',
+            cookie,
+            body: { code, name: code, kind: 'terrane' },
+          }).catch(() => null);
           if (answer && answer.status < 300) acknowledged.add(code);
         }
       })();
       const enough = acknowledged.size + LEAST_EDITS;
-      while (acknowledged.size < enough) await new Promise((resolve) => setTimeout(resolve, 1 + ((37 * kill) % 11)));
+      while (acknowledged.size < enough)
+        await new Promise((resolve) => setTimeout(resolve, 1 + ((37 * kill) % 11)));
       server.child.kill('SIGKILL');
       await server.ended;
       alive = false;
@@ -98,7 +131,10 @@ describe.runIf(BUILT)('a killed server', () => {
       await ready();
       const kept = new Set<string>();
       for (let cursor: string | null = ''; cursor !== null;) {
-        const { body } = await json(`/api/projects/kept/blocks?limit=500${cursor ? `&cursor=${cursor}` : ''}`, { cookie });
+        const { body } = await json(
+          `/api/projects/kept/blocks?limit=500${cursor ? `&cursor=${cursor}` : ''}`,
+          { cookie },
+        );
         for (const { code } of body.items) kept.add(code);
         cursor = body.next_cursor;
       }

@@ -589,15 +589,13 @@ describe('the database itself refuses', () => {
     );
     expect(await attempt({})).toBeNull();
     await expect(
-      app.db
-        .insert(block)
-        .values({
-          project_id: team.id,
-          ...terrane('corrie'),
-          kind: 'terrane',
-          appears_ma: 10,
-          disappears_ma: 20,
-        }),
+      app.db.insert(block).values({
+        project_id: team.id,
+        ...terrane('corrie'),
+        kind: 'terrane',
+        appears_ma: 10,
+        disappears_ma: 20,
+      }),
     ).rejects.toThrow();
     await expect(
       app.db.update(geometry).set({ vertices: 3 }).where(eq(geometry.sha256, 'x')),

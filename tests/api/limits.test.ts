@@ -18,8 +18,17 @@ describe('another site', () => {
   const body = { title: 'Theirs', slug: 'theirs' };
   it.each([
     ['JSON', { body, headers: { Origin: 'https://elsewhere.example' } }],
-    ['a form', { raw: 'title=Theirs&slug=theirs', headers: { Origin: 'https://elsewhere.example', 'Content-Type': 'application/x-www-form-urlencoded' } }],
-    ['text that is JSON', { raw: JSON.stringify(body), headers: { Origin: 'null', 'Content-Type': 'text/plain' } }],
+    [
+      'a form',
+      {
+        raw: 'title=Theirs&slug=theirs',
+        headers: { Origin: 'https://elsewhere.example', 'Content-Type': 'application/x-www-form-urlencoded' },
+      },
+    ],
+    [
+      'text that is JSON',
+      { raw: JSON.stringify(body), headers: { Origin: 'null', 'Content-Type': 'text/plain' } },
+    ],
     ['no Origin but cross-site', { body, headers: { Origin: '', 'Sec-Fetch-Site': 'cross-site' } }],
   ])('may not post %s with the browser’s cookie', async (_, options) => {
     const answer = await app.call('POST', '/api/projects', { as: team.lead, ...options });
@@ -28,15 +37,28 @@ describe('another site', () => {
   });
 
   it('may not delete either, while this one may', async () => {
-    expect((await app.call('DELETE', team.at(), { as: team.lead, headers: { Origin: 'https://elsewhere.example' } })).status).toBe(403);
-    expect((await app.call('DELETE', team.at(), { as: team.lead, headers: { Origin: ORIGIN } })).status).toBe(204);
+    expect(
+      (
+        await app.call('DELETE', team.at(), {
+          as: team.lead,
+          headers: { Origin: 'https://elsewhere.example' },
+        })
+      ).status,
+    ).toBe(403);
+    expect((await app.call('DELETE', team.at(), { as: team.lead, headers: { Origin: ORIGIN } })).status).toBe(
+      204,
+    );
   });
 });
 
 describe('bodies', () => {
   it('over the limit are refused whatever length they state', async () => {
     const big = JSON.stringify({ title: 'x'.repeat(2_000_000), slug: 'big' });
-    const answer = await app.call('POST', '/api/projects', { as: team.lead, raw: big, headers: { 'Content-Type': 'application/json' } });
+    const answer = await app.call('POST', '/api/projects', {
+      as: team.lead,
+      raw: big,
+      headers: { 'Content-Type': 'application/json' },
+    });
     expect(answer.status).toBe(413);
     const stream = new ReadableStream({
       start(controller) {
@@ -44,16 +66,29 @@ describe('bodies', () => {
         controller.close();
       },
     });
-    const streamed = await app.call('POST', '/api/projects', { as: team.lead, raw: stream as unknown as BodyInit, headers: { 'Content-Type': 'application/json' } });
+    const streamed = await app.call('POST', '/api/projects', {
+      as: team.lead,
+      raw: stream as unknown as BodyInit,
+      headers: { 'Content-Type': 'application/json' },
+    });
     expect(streamed.status).toBe(413);
   });
 
   it('of another type, or not JSON, are named', async () => {
-    const xml = await app.call('POST', '/api/projects', { as: team.lead, raw: '<x/>', headers: { 'Content-Type': 'application/xml' } });
+    const xml = await app.call('POST', '/api/projects', {
+      as: team.lead,
+      raw: '<x/>',
+      headers: { 'Content-Type': 'application/xml' },
+    });
     expect(xml.status).toBe(415);
-    const broken = await app.call('POST', '/api/projects', { as: team.lead, raw: '{', headers: { 'Content-Type': 'application/json' } });
+    const broken = await app.call('POST', '/api/projects', {
+      as: team.lead,
+      raw: '{',
+      headers: { 'Content-Type': 'application/json' },
+    });
     expect(broken.status).toBe(400);
-    for (const answer of [xml, broken]) expect(answer.headers.get('content-type')).toContain('application/problem+json');
+    for (const answer of [xml, broken])
+      expect(answer.headers.get('content-type')).toContain('application/problem+json');
   });
 });
 
@@ -69,7 +104,12 @@ describe('every answer', () => {
   });
 
   it('never shows SQL, paths or stacks', async () => {
-    for (const path of [`/api/projects/${encodeURIComponent("'; drop table user; --")}`, team.at('rotations?cursor=%00'), team.at('slice.svg?age_ma=NaN'), '/api/geometry/..%2f..%2fetc']) {
+    for (const path of [
+      `/api/projects/${encodeURIComponent("'; drop table user; --")}`,
+      team.at('rotations?cursor=%00'),
+      team.at('slice.svg?age_ma=NaN'),
+      '/api/geometry/..%2f..%2fetc',
+    ]) {
       const { text } = await app.call('GET', path, { as: team.lead });
       expect(text).not.toMatch(/select |insert |node_modules|at .*\.ts|postgres/i);
     }

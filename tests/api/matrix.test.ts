@@ -11,7 +11,11 @@ import { createTeam, frame, terrane, type Team } from '../support/team';
 const STANDINGS = ['lead', 'researcher', 'reviewer', 'instructor', 'outsider', 'visitor', 'admin'] as const;
 type Standing = (typeof STANDINGS)[number];
 /** What each standing is answered, in the order of STANDINGS: `y` let through, otherwise the status. */
-type Line = readonly [string, string, ...(string | number)[]];
+interface Line {
+  readonly method: string;
+  readonly pattern: string;
+  readonly expected: readonly (string | number)[];
+}
 
 const P = '/api/projects/[slug]';
 const Y = 'y';
@@ -22,7 +26,7 @@ const builders = [Y, Y, 403, 403, 404, 404, 404];
 const leads = [Y, 403, 403, 403, 404, 404, 404];
 
 const tables = ['blocks', 'outlines', 'rotations', 'features', 'directions', 'sources'];
-const MATRIX: readonly Line[] = [
+const LINES: readonly (readonly [method: string, pattern: string, ...expected: (string | number)[]])[] = [
   ['GET', '/api/health', ...anyone],
   ['GET', '/api/openapi.json', ...anyone],
   ['POST', '/api/theme', ...anyone],
@@ -52,7 +56,7 @@ const MATRIX: readonly Line[] = [
   ['POST', `${P}/members`, ...leads],
   ['PATCH', `${P}/members/[id]`, ...leads],
   ['DELETE', `${P}/members/[id]`, ...leads],
-  ...tables.flatMap((table): Line[] => [
+  ...tables.flatMap((table): [string, string, ...(string | number)[]][] => [
     ['GET', `${P}/${table}`, ...team],
     ['POST', `${P}/${table}`, ...builders],
     ['PATCH', `${P}/${table}/[id]`, ...builders],
@@ -83,6 +87,8 @@ const MATRIX: readonly Line[] = [
   ['GET', `${P}/versions/[number]`, ...team],
 ];
 
+const MATRIX = LINES.map(([method, pattern, ...expected]): Line => ({ method, pattern, expected }));
+
 let app: TestApp;
 let people: Team;
 beforeAll(async () => {
@@ -94,7 +100,8 @@ afterAll(async () => {
 });
 
 const GUARDED = new Set([401, 403, 404]);
-const who = (standing: Standing): TestUser | undefined => (standing === 'visitor' ? undefined : people[standing]);
+const who = (standing: Standing): TestUser | undefined =>
+  standing === 'visitor' ? undefined : people[standing];
 
 /** Some row that is not there, so that what is let through changes nothing. */
 const address = (pattern: string): string =>
@@ -113,26 +120,39 @@ it('has a line for every endpoint, and no line for what is gone', async () => {
     const module = await file.load();
     for (const method of METHODS) if (module[method]) found.push(`${method} ${file.pattern}`);
   }
-  expect(MATRIX.map(([method, pattern]) => `${method} ${pattern}`).sort()).toEqual(found.sort());
+  expect(MATRIX.map(({ method, pattern }) => `${method} ${pattern}`).sort()).toEqual(found.sort());
 });
 
-describe.each(MATRIX)('%s %s', (method, pattern, ...expected) => {
+describe.each(MATRIX)('$method $pattern', ({ method, pattern, expected }) => {
   it('lets through and refuses as the policy says', async () => {
     await app.reset();
     people = await createTeam(app);
-    await app.call('POST', people.at('blocks'), { as: people.researcher, body: [frame('axis'), terrane('sable')], revision: '*' });
+    await app.call('POST', people.at('blocks'), {
+      as: people.researcher,
+      body: [frame('axis'), terrane('sable')],
+      revision: '*',
+    });
     for (const [i, standing] of STANDINGS.entries()) {
       const body = method === 'GET' || method === 'DELETE' ? {} : { body: {} };
-      const response = await app.respond(method, address(pattern), { as: who(standing), revision: '*', ...body });
+      const response = await app.respond(method, address(pattern), {
+        as: who(standing),
+        revision: '*',
+        ...body,
+      });
       const { status } = response;
       await response.body?.cancel();
       const named = { standing, status };
       if (expected[i] !== 'y') expect(named).toEqual({ standing, status: expected[i] });
       else if (status === 404) {
         // Let through to look, and there is nothing of that name: the caller may see the project, or there is none in the address.
-        const seen = pattern.startsWith(P) ? (await app.call('GET', people.at(), { as: who(standing) })).status : 200;
+        const seen = pattern.startsWith(P)
+          ? (await app.call('GET', people.at(), { as: who(standing) })).status
+          : 200;
         expect({ ...named, seen }).toEqual({ ...named, seen: 200 });
-      } else expect(GUARDED.has(status) ? named : 'let through').toBe(pattern.includes('/auth/') && status === 401 ? named : 'let through');
+      } else
+        expect(GUARDED.has(status) ? named : 'let through').toBe(
+          pattern.includes('/auth/') && status === 401 ? named : 'let through',
+        );
       if (method === 'DELETE' && pattern === P && status === 204) people = await createTeam(app, 'again');
     }
   });

@@ -23,7 +23,8 @@ const give = async (rows: Rows): Promise<void> => {
   expect(answer.status, answer.text).toBeLessThan(300);
 };
 const get = (path: string): Promise<Answer> => app.call('GET', team.at(path), { as: team.reviewer });
-const near = (value: number, expected: number, within: number): void => expect(Math.abs(value - expected)).toBeLessThanOrEqual(within);
+const near = (value: number, expected: number, within: number): void =>
+  expect(Math.abs(value - expected)).toBeLessThanOrEqual(within);
 const KM_PER_DEG = (6371.0088 * Math.PI) / 180;
 
 describe('rotation', () => {
@@ -33,8 +34,17 @@ describe('rotation', () => {
     near(json.pole_lat, 45, 1e-9);
     near(json.pole_lon, 0, 1e-9);
     near(json.angle_deg, 70.528779, 1e-6);
-    expect(json).toMatchObject({ version: 'draft', covariance: null, uncertainty: 'none of 1 links carries a covariance' });
-    expect(json.chain[0]).toMatchObject({ block: 'sable', relative_to: 'spin-axis', older_ma: 20, younger_ma: 10 });
+    expect(json).toMatchObject({
+      version: 'draft',
+      covariance: null,
+      uncertainty: 'none of 1 links carries a covariance',
+    });
+    expect(json.chain[0]).toMatchObject({
+      block: 'sable',
+      relative_to: 'spin-axis',
+      older_ma: 20,
+      younger_ma: 10,
+    });
   });
 
   it('of A by 90° about 90°N and B on A by 90° about (0, 0) is 120° about (35.264, 45)', async () => {
@@ -81,7 +91,8 @@ describe('rotation', () => {
 describe('motion', () => {
   it('10° at 10 Ma and 25° at 20 Ma about 90°N: a forward stage of −15° and 166.8 mm/yr due west at the equator', async () => {
     await give([['sable', 'axis', 10, 90, 0, 10], ['sable', 'axis', 20, 90, 0, 25]]); // prettier-ignore
-    const stage = (await get('stage?block=sable&older_ma=20&younger_ma=10&relative_to=axis&in=reference')).json;
+    const stage = (await get('stage?block=sable&older_ma=20&younger_ma=10&relative_to=axis&in=reference'))
+      .json;
     // −15° about 90°N is 15° about 90°S.
     near(Math.sign(stage.pole_lat) * stage.angle_deg, -15, 1e-9);
     near(Math.abs(stage.pole_lat), 90, 1e-9);
@@ -99,12 +110,18 @@ describe('motion', () => {
     const equator = (await get('velocity?block=sable&lat=0&lon=0&age_ma=50&relative_to=axis')).json;
     near(equator.speed_mm_yr, KM_PER_DEG, 1e-6);
     near(equator.azimuth_deg, 90, 1e-9);
-    near((await get('velocity?block=sable&lat=60&lon=10&age_ma=50&relative_to=axis')).json.speed_mm_yr, KM_PER_DEG / 2, 1e-6);
+    near(
+      (await get('velocity?block=sable&lat=60&lon=10&age_ma=50&relative_to=axis')).json.speed_mm_yr,
+      KM_PER_DEG / 2,
+      1e-6,
+    );
   });
 
   it('a drift path goes through the steps and the ages of rows, each with its place, speed and kind', async () => {
     await give([['sable', 'axis', 25, 90, 0, 25], ['sable', 'axis', 40, 90, 0, 55]]); // prettier-ignore
-    const { json } = await get('drift-path?block=sable&lat=10&lon=170&older_ma=45&younger_ma=0&step_ma=10&relative_to=axis');
+    const { json } = await get(
+      'drift-path?block=sable&lat=10&lon=170&older_ma=45&younger_ma=0&step_ma=10&relative_to=axis',
+    );
     expect(json.points.map((p: { age_ma: number }) => p.age_ma)).toEqual([0, 10, 20, 25, 30, 40, 45]);
     const at = (age: number) => json.points.find((p: { age_ma: number }) => p.age_ma === age);
     expect([25, 40].every((age) => at(age).at_row)).toBe(true);
@@ -115,9 +132,13 @@ describe('motion', () => {
     near(at(20).speed_mm_yr, KM_PER_DEG * Math.cos(Math.PI / 18), 1e-6);
     near(at(30).speed_mm_yr, 2 * KM_PER_DEG * Math.cos(Math.PI / 18), 1e-6);
     expect(at(45)).toMatchObject({ lat: null, lon: null, status: 'outside rotations', ellipse_95: null });
-    const csv = await get('drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=csv');
+    const csv = await get(
+      'drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=csv',
+    );
     expect(csv.headers.get('content-type')).toContain('text/csv');
-    const geojson = await get('drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=geojson');
+    const geojson = await get(
+      'drift-path?block=sable&lat=10&lon=170&older_ma=40&younger_ma=0&step_ma=10&relative_to=axis&format=geojson',
+    );
     expect(geojson.json.type).toBe('FeatureCollection');
   });
 
@@ -130,9 +151,13 @@ describe('motion', () => {
     const hand = [c * c, c * s, s * s, c * s];
     near(json.angle_deg, (2 * Math.acos(c * c) * 180) / Math.PI, 1e-9);
     const rows = (await get('quaternions?age_ma=5&relative_to=axis')).json;
-    const q = (rows.blocks ?? rows.items).find((row: { block?: string; code?: string }) => (row.block ?? row.code) === 'b').quaternion;
+    const q = (rows.blocks ?? rows.items).find(
+      (row: { block?: string; code?: string }) => (row.block ?? row.code) === 'b',
+    ).quaternion;
     hand.forEach((component, i) => near(Math.abs(q[i]), Math.abs(component), 1e-11));
     const motions = (await get('motions')).json;
-    expect(motions.blocks.find((block: { code: string }) => block.code === 'b').legs[0].stages[0]).toMatchObject({ younger_ma: 0, older_ma: 10 });
+    expect(
+      motions.blocks.find((block: { code: string }) => block.code === 'b').legs[0].stages[0],
+    ).toMatchObject({ younger_ma: 0, older_ma: 10 });
   });
 });

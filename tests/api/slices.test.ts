@@ -152,7 +152,7 @@ describe('PNG and PDF', () => {
 describe('GeoJSON', () => {
   it('is the same slice: outlines within ±180°, closed, with what it is said beside', async () => {
     const answer = await slice('geojson', 'age_ma=62.4');
-    const data = (await answer.json()) as any;
+    const data = await answer.json();
     expect(data).toMatchObject({
       type: 'FeatureCollection',
       age_ma: 62.4,
@@ -174,7 +174,7 @@ describe('GeoJSON', () => {
   });
 
   it('at 0 Ma holds the outlines as they were entered', async () => {
-    const now = (await (await slice('geojson', 'age_ma=0')).json()) as any;
+    const now = await (await slice('geojson', 'age_ma=0')).json();
     const entered = JSON.parse(
       await (await app.respond('GET', '/api/projects/lantern-sea/exports/blocks.geojson')).text(),
     );

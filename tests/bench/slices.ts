@@ -31,13 +31,17 @@ function subject(): SliceSubject {
     shapes.set(code, { type: 'MultiPolygon', coordinates: [[[...ring, ring[0]!]]] });
   });
   const life = { appears_ma: null, disappears_ma: null };
-  const rows = codes.flatMap((block, i): RotationInput[] =>
+  const rows = codes.flatMap(
+    (block, i): RotationInput[] =>
     [0, 100].map((age_ma) => ({
       id: `${block} ${age_ma}`, block, relative_to: 'axis', age_ma, pole_lat: 40 - (i % 80), pole_lon: (i * 53) % 360 - 180,
       angle_deg: age_ma / 4, evidence: 'fitted', covariance: null, cov_dof: null, age_two_sigma_ma: null, source: null,
     })), // prettier-ignore
   );
-  const inputs = [...codes.map((code) => ({ code, kind: 'terrane' as const, ...life })), { code: 'axis', kind: 'frame' as const, ...life }];
+  const inputs = [
+    ...codes.map((code) => ({ code, kind: 'terrane' as const, ...life })),
+    { code: 'axis', kind: 'frame' as const, ...life },
+  ];
   return {
     title: 'Bench', version: 'Draft', licence: null, date: '', model: compileModel(inputs, rows), frame: { code: 'axis', name: 'Axis' },
     blocks: codes.map((code) => ({ code, name: code, evidence: 'fitted', source: null, outlines: [{ sha256: code, inside: 'smaller', outline_older_ma: null, outline_younger_ma: null }] })),
@@ -58,7 +62,11 @@ function median(work: () => unknown): number {
 export default function slices() {
   const given = subject();
   const query = sliceQuery.parse({ age_ma: '62.4', layers: '' });
-  const projection = fitProjection('equal-earth', { lat: 0, lon: 0 }, { x: 0, y: 0, width: 800, height: 400 });
+  const projection = fitProjection(
+    'equal-earth',
+    { lat: 0, lon: 0 },
+    { x: 0, y: 0, width: 800, height: 400 },
+  );
   const carried = carry(given, 62.4, 'axis');
   const points = carried.blocks.flatMap(({ area }) => area.coordinates.flat(2));
   const bare = median(() => {
@@ -67,8 +75,16 @@ export default function slices() {
     return sum;
   });
   const page = median(() => slicePage({ subject: given, carried, query, path: null }));
-  const whole = median(() => slicePage({ subject: given, carried: carry(given, 62.4, 'axis'), query, path: null }));
-  const row = (name: string, ms: number) => ({ name, ours: ms.toFixed(0), reference: bare.toFixed(0), ratio: (ms / bare).toFixed(1), unit: 'ms' });
+  const whole = median(() =>
+    slicePage({ subject: given, carried: carry(given, 62.4, 'axis'), query, path: null }),
+  );
+  const row = (name: string, ms: number) => ({
+    name,
+    ours: ms.toFixed(0),
+    reference: bare.toFixed(0),
+    ratio: (ms / bare).toFixed(1),
+    unit: 'ms',
+  });
   return [
     row(`SVG page of ${points.length} vertices (bare projection)`, page),
     row('the same, with carrying the outlines to the age', whole),

@@ -26,15 +26,30 @@ async function firstPage(child: ChildProcess, url: string): Promise<number> {
 export default async function start() {
   const data = fs.mkdtempSync(path.join(os.tmpdir(), 'driftwright-bench-'));
   const url = `http://127.0.0.1:${PORT}/`;
-  const env = { ...process.env, PORT: String(PORT), DATA_DIR: path.join(data, 'pglite'), DRIFTWRIGHT_DEMO: 'on', LOG_LEVEL: 'error' };
+  const env = {
+    ...process.env,
+    PORT: String(PORT),
+    DATA_DIR: path.join(data, 'pglite'),
+    DRIFTWRIGHT_DEMO: 'on',
+    LOG_LEVEL: 'error',
+  };
   const serve = (): ChildProcess => spawn(process.execPath, ['server.mjs'], { env, stdio: 'ignore' });
   const bare = `require('node:http').createServer((_, r) => r.end('ok')).listen(${PORT}, '127.0.0.1')`;
   try {
     const cold = await firstPage(serve(), url);
     const warm = await firstPage(serve(), url);
     const node = await firstPage(spawn(process.execPath, ['-e', bare], { stdio: 'ignore' }), url);
-    const row = (name: string, ms: number) => ({ name, ours: ms.toFixed(0), reference: node.toFixed(0), ratio: (ms / node).toFixed(1), unit: 'ms' });
-    return [row('new data folder, migrated and seeded (bare node:http)', cold), row('existing data folder', warm)];
+    const row = (name: string, ms: number) => ({
+      name,
+      ours: ms.toFixed(0),
+      reference: node.toFixed(0),
+      ratio: (ms / node).toFixed(1),
+      unit: 'ms',
+    });
+    return [
+      row('new data folder, migrated and seeded (bare node:http)', cold),
+      row('existing data folder', warm),
+    ];
   } finally {
     fs.rmSync(data, { recursive: true, force: true });
   }

@@ -42,7 +42,10 @@ test('a forgotten password is set anew by the link in the outbox', async ({ page
 
   await signInAs(page, 'admin', '/admin');
   await page.locator('summary', { hasText: 'runa.holt@example.org' }).first().click();
-  const link = await page.getByRole('link', { name: /\/reset\// }).first().getAttribute('href');
+  const link = await page
+    .getByRole('link', { name: /\/reset\// })
+    .first()
+    .getAttribute('href');
   await page.context().clearCookies();
   await page.goto(link!);
   await page.getByLabel('New password').fill('second password 2');
@@ -61,5 +64,7 @@ test('another team’s project is not to be found', async ({ page }) => {
 
 test('an instructor sees no way to edit, and is told why', async ({ page }) => {
   await signInAs(page, 'instructor', `${DEMO}/workbench`);
-  await expect(page.getByRole('region', { name: 'Ledger' }).or(page.getByLabel('Ledger'))).toContainText('read only');
+  await expect(page.getByRole('region', { name: 'Ledger' }).or(page.getByLabel('Ledger'))).toContainText(
+    'read only',
+  );
 });

@@ -8,21 +8,43 @@ const block = (code: string, ring: number[][] | null) => ({
 });
 const collection = (features: object[]): string => JSON.stringify({ type: 'FeatureCollection', features });
 
-test('two files with mistakes are previewed, mended and accepted, and the blocks stand on the globe', async ({ page }) => {
+test('two files with mistakes are previewed, mended and accepted, and the blocks stand on the globe', async ({
+  page,
+}) => {
   await ownProject(page, 'two-blocks-import');
   const bowTie = [[60, 0], [70, 10], [70, 0], [60, 10], [60, 0]]; // prettier-ignore
   const file = (name: string, text: string) => ({ name, mimeType: 'text/plain', buffer: Buffer.from(text) });
   const choose = page.getByLabel('File to import');
 
-  await choose.setInputFiles(file('blocks.geojson', collection([block('alder', square(0, 0, 20, 15)), block('birch', bowTie), block('axis', null)])));
+  await choose.setInputFiles(
+    file(
+      'blocks.geojson',
+      collection([block('alder', square(0, 0, 20, 15)), block('birch', bowTie), block('axis', null)]),
+    ),
+  );
   await expect(page.getByText('2 rows can be taken, 1 cannot')).toBeVisible();
   await expect(page.getByRole('region', { name: 'Rejected rows' })).toContainText('crosses itself');
-  await choose.setInputFiles(file('blocks.geojson', collection([block('alder', square(0, 0, 20, 15)), block('birch', square(60, 0, 70, 10)), block('axis', null)])));
+  await choose.setInputFiles(
+    file(
+      'blocks.geojson',
+      collection([
+        block('alder', square(0, 0, 20, 15)),
+        block('birch', square(60, 0, 70, 10)),
+        block('axis', null),
+      ]),
+    ),
+  );
   await expect(page.getByText('3 rows can be taken')).toBeVisible();
   await page.getByRole('button', { name: 'Accept 3 rows' }).click();
   await expect(page.getByText('3 rows written to the draft')).toBeVisible();
 
-  const rows = ['block;relative_to;age_ma;pole_lat;pole_lon;angle_deg', 'alder;axis;0;0;0;0', 'alder;axis;50;90;0;12,5', 'birch;alder;0;0;0;0', 'birch;alder;50;98,1;20;8'];
+  const rows = [
+    'block;relative_to;age_ma;pole_lat;pole_lon;angle_deg',
+    'alder;axis;0;0;0;0',
+    'alder;axis;50;90;0;12,5',
+    'birch;alder;0;0;0;0',
+    'birch;alder;50;98,1;20;8',
+  ];
   await choose.setInputFiles(file('rotations.csv', rows.join('\n')));
   await expect(page.getByText('Are they decimal commas?')).toBeVisible();
   await page.getByLabel('decimal commas').check();

@@ -1,8 +1,30 @@
 /** Every page: accessible by axe in both themes, nothing wider than the window at 360 px. */
 import { DEMO, expect, expectAccessible, signInAs, test } from './support';
 
-const PUBLIC = ['/', '/sign-in', '/sign-up', '/reset', '/released', '/methods', '/docs/api', DEMO, `${DEMO}/workbench?age=62.4&block=sable`, `${DEMO}/print?age_ma=62.4`, `${DEMO}/versions`, `${DEMO}/sources`, '/nowhere'];
-const OWN = ['/projects', '/projects/new', '/account', `${DEMO}/import`, `${DEMO}/team`, `${DEMO}/history`, `${DEMO}/settings`];
+const PUBLIC = [
+  '/',
+  '/sign-in',
+  '/sign-up',
+  '/reset',
+  '/released',
+  '/methods',
+  '/docs/api',
+  DEMO,
+  `${DEMO}/workbench?age=62.4&block=sable`,
+  `${DEMO}/print?age_ma=62.4`,
+  `${DEMO}/versions`,
+  `${DEMO}/sources`,
+  '/nowhere',
+];
+const OWN = [
+  '/projects',
+  '/projects/new',
+  '/account',
+  `${DEMO}/import`,
+  `${DEMO}/team`,
+  `${DEMO}/history`,
+  `${DEMO}/settings`,
+];
 
 for (const theme of ['light', 'dark'] as const) {
   test(`pages for everyone, ${theme}`, async ({ page, baseURL }) => {

@@ -19,7 +19,14 @@ test('prints a time slice as SVG, PNG and PDF', async ({ page }) => {
     return Buffer.concat(chunks);
   };
   const svg = (await fetched('SVG')).toString();
-  for (const part of ['Sable under way', 'Version 7', 'Mollweide', 'class="velocity"', 'A reconstruction is a model']) expect(svg.includes(part)).toBe(true);
+  for (const part of [
+    'Sable under way',
+    'Version 7',
+    'Mollweide',
+    'class="velocity"',
+    'A reconstruction is a model',
+  ])
+    expect(svg.includes(part)).toBe(true);
   const png = await fetched('PNG');
   expect(png.subarray(1, 4).toString()).toBe('PNG');
   const pdf = await fetched('Print PDF');

@@ -11,7 +11,9 @@ export const test = base.extend<{ page: Page }>({
     page.on('pageerror', (error) => errors.push(String(error)));
     await use(page);
     // A refused form answers 4xx on purpose, which the browser reports as an error of loading.
-    const unexpected = errors.filter((text) => !/Failed to load resource: the server responded with a status of 4\d\d/.test(text));
+    const unexpected = errors.filter(
+      (text) => !/Failed to load resource: the server responded with a status of 4\d\d/.test(text),
+    );
     expect(unexpected).toEqual([]);
   },
 });
@@ -31,9 +33,17 @@ export async function signInAs(page: Page, role: DemoRole, next = '/projects'): 
 
 /** WCAG 2.2 A and AA by axe. */
 export async function expectAccessible(page: Page, except: readonly string[] = []): Promise<void> {
-  const builder = new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa']).disableRules([...except]);
+  const builder = new AxeBuilder({ page })
+    .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
+    .disableRules([...except]);
   const { violations } = await builder.analyze();
-  const found = violations.map((v) => `${v.id}: ${v.nodes.map((n) => n.target.join(' ')).slice(0, 4).join(' | ')}`);
+  const found = violations.map(
+    (v) =>
+      `${v.id}: ${v.nodes
+        .map((n) => n.target.join(' '))
+        .slice(0, 4)
+        .join(' | ')}`,
+  );
   expect(found).toEqual([]);
 }
 

@@ -12,7 +12,9 @@ test.describe('reading', () => {
     await expect(page.getByText('21.1° S, 36.6° E', { exact: true })).toBeVisible();
     await expect(page.getByText(/298 × 220/).first()).toBeVisible();
     await expect(page.getByText('Hand-over at 55.2 Ma jumps 17 km.')).toBeVisible();
-    await expect(page.getByRole('grid', { name: 'Rotations of Sable terrane' })).toContainText('between the rows around it');
+    await expect(page.getByRole('grid', { name: 'Rotations of Sable terrane' })).toContainText(
+      'between the rows around it',
+    );
   });
 
   test('dragging the age line moves everything without a request', async ({ page }) => {
@@ -35,7 +37,11 @@ test.describe('reading', () => {
   test('holding another block still changes the frame everywhere', async ({ page }) => {
     await page.goto(LINK);
     await page.getByRole('button', { name: /Held still/ }).click();
-    await page.getByRole('menuitemradio', { name: /Old Harrow/ }).or(page.getByRole('menuitem', { name: /Old Harrow/ })).first().click();
+    await page
+      .getByRole('menuitemradio', { name: /Old Harrow/ })
+      .or(page.getByRole('menuitem', { name: /Old Harrow/ }))
+      .first()
+      .click();
     await expect(page).toHaveURL(/frame=old-harrow/);
     await expect(page.getByText('21.1° S, 36.6° E', { exact: true })).toHaveCount(0);
   });
@@ -66,26 +72,40 @@ test.describe('reading', () => {
 
   test('then and now, and the map', async ({ page }) => {
     await page.goto(LINK);
-    await page.getByRole('radio', { name: 'Then and now' }).or(page.getByRole('button', { name: 'Then and now' })).first().click();
+    await page
+      .getByRole('radio', { name: 'Then and now' })
+      .or(page.getByRole('button', { name: 'Then and now' }))
+      .first()
+      .click();
     await expect(page.getByText('today’s map')).toBeVisible();
-    await page.getByRole('radio', { name: 'Map' }).or(page.getByRole('button', { name: 'Map', exact: true })).first().click();
+    await page
+      .getByRole('radio', { name: 'Map' })
+      .or(page.getByRole('button', { name: 'Map', exact: true }))
+      .first()
+      .click();
     await expect(page).toHaveURL(/view=map/);
   });
 });
 
 test.describe('editing', () => {
   const grid = (page: Page) => page.getByRole('grid', { name: 'Rotations of Sable terrane' });
-  const angle66 = (page: Page) => grid(page).getByRole('row').filter({ hasText: '66.0' }).getByRole('gridcell').nth(4);
+  const angle66 = (page: Page) =>
+    grid(page).getByRole('row').filter({ hasText: '66.0' }).getByRole('gridcell').nth(4);
 
   test('a cell is edited, previewed, kept and undone', async ({ page }) => {
     await signInAs(page, 'researcher', LINK);
     await angle66(page).dblclick();
-    const input = grid(page).getByRole('textbox', { name: 'Angle, °' }).or(grid(page).getByRole('combobox', { name: 'Angle, °' })).first();
+    const input = grid(page)
+      .getByRole('textbox', { name: 'Angle, °' })
+      .or(grid(page).getByRole('combobox', { name: 'Angle, °' }))
+      .first();
     await input.fill('9.86');
     await expect(page.getByRole('status').filter({ hasText: 'was 9.64' })).toContainText('Moves Sable');
     await input.press('Enter');
     await expect(angle66(page)).toHaveText('9.86');
-    await expect.poll(async () => (await page.request.get('/api/projects/lantern-sea/rotations?version=draft')).text()).toContain('"angle_deg":9.86');
+    await expect
+      .poll(async () => (await page.request.get('/api/projects/lantern-sea/rotations?version=draft')).text())
+      .toContain('"angle_deg":9.86');
     await page.getByRole('button', { name: 'Undo' }).click();
     await expect(angle66(page)).toHaveText('9.64');
   });
@@ -121,7 +141,9 @@ test.describe('editing', () => {
     await page.keyboard.type('By hand');
     await page.keyboard.press('Enter');
     await expect(grid(page)).toContainText('By hand');
-    await expect.poll(async () => (await page.request.get('/api/projects/lantern-sea/rotations?version=draft')).text()).toContain('By hand');
+    await expect
+      .poll(async () => (await page.request.get('/api/projects/lantern-sea/rotations?version=draft')).text())
+      .toContain('By hand');
     await page.keyboard.press('Control+z');
     await expect(grid(page)).not.toContainText('By hand');
   });

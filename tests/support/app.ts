@@ -1,4 +1,3 @@
-import type { APIRoute } from 'astro';
 import { createContext } from 'astro/middleware';
 import { useDatabase, type Database } from '~/db/client';
 import { session, user } from '~/db/schema';
@@ -71,8 +70,7 @@ export async function createTestApp(env: Record<string, string> = {}): Promise<T
       typeof createContext
     >[0]);
     const handler = file && ((await file.load())[method] ?? (await file.load())['ALL']);
-    const next = async () =>
-      handler ? await (handler as APIRoute)(context) : new Response(null, { status: 404 });
+    const next = async () => (handler ? await handler(context) : new Response(null, { status: 404 }));
     const response = (await onRequest(context, next)) as Response;
     for (const cookie of context.cookies.headers()) response.headers.append('Set-Cookie', cookie);
     return response;

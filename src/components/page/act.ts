@@ -49,13 +49,25 @@ async function act(element: HTMLElement, body?: unknown): Promise<void> {
         }
         return;
       }
-      if (then) location.assign(then.replace(/\{(\w+)\}/g, (_, key: string) => String((body as Record<string, unknown>)[key])));
+      if (then)
+        location.assign(
+          then.replace(/\{(\w+)\}/g, (_, key: string) => String((body as Record<string, unknown>)[key])),
+        );
       else location.reload();
       return;
     }
-    const problem = (await answer.json()) as { title: string; detail?: string; errors?: { path?: string; problem: string }[] };
+    const problem = (await answer.json()) as {
+      title: string;
+      detail?: string;
+      errors?: { path?: string; problem: string }[];
+    };
     const [first] = problem.errors ?? [];
-    say(element, first ? `${first.path ?? ''}: ${first.problem}`.replace(/^: /, '') : [problem.title, problem.detail].filter(Boolean).join('. '));
+    say(
+      element,
+      first
+        ? `${first.path ?? ''}: ${first.problem}`.replace(/^: /, '')
+        : [problem.title, problem.detail].filter(Boolean).join('. '),
+    );
   } catch {
     say(element, 'The server did not answer. Nothing was changed; try again.');
   }

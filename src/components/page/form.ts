@@ -13,7 +13,8 @@ function show(form: HTMLFormElement, problem: Problem): void {
   if (!box) return;
   const [field] = problem.errors ?? [];
   const input = field?.path ? form.elements.namedItem(field.path) : null;
-  const label = input instanceof HTMLInputElement ? (input.labels?.[0]?.textContent?.trim() ?? field?.path) : field?.path;
+  const label =
+    input instanceof HTMLInputElement ? (input.labels?.[0]?.textContent?.trim() ?? field?.path) : field?.path;
   const detail = field ? `${label ?? ''}: ${field.problem}.` : (problem.detail ?? '');
   box.textContent = field ? detail : `${problem.title ?? 'That did not work'}. ${detail}`.trim();
   box.hidden = false;

@@ -8,7 +8,13 @@ export interface RotationEdit {
 
 type Pole = readonly [pole_lat: number, pole_lon: number, angle_deg: number];
 const pole = ([pole_lat, pole_lon, angle_deg]: Pole) => ({ pole_lat, pole_lon, angle_deg });
-const was = (block: string, relative_to: string, age_ma: number, before: Pole, after: Pole): RotationEdit => ({
+const was = (
+  block: string,
+  relative_to: string,
+  age_ma: number,
+  before: Pole,
+  after: Pole,
+): RotationEdit => ({
   row: { block, relative_to, age_ma },
   fields: pole(before),
   now: pole(after),

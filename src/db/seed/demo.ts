@@ -34,21 +34,37 @@ export async function seedDemo(db: Database): Promise<void> {
   if (there) return;
   const actors = await actorsOf(db);
   const lead = actors.get('Mara Kell')!;
-  await makeProject(lead, { title: 'Closing of the Lantern Sea', slug: DEMO_SLUG, summary: SUMMARY, visibility: 'public', licence: LICENCE, real_earth: false });
+  await makeProject(lead, {
+    title: 'Closing of the Lantern Sea',
+    slug: DEMO_SLUG,
+    summary: SUMMARY,
+    visibility: 'public',
+    licence: LICENCE,
+    real_earth: false,
+  });
   await join(db, actors);
   const as = (name: string): Promise<Access> => openProject(actors.get(name)!, DEMO_SLUG, 'ledger.edit');
   const [mara, tobin, sefa] = [await as('Mara Kell'), await as('Tobin Ashgrove'), await as('Sefa Lund')];
-  const freeze = (title: string, note = ''): Promise<unknown> => release(mara, { title, note, licence: LICENCE });
+  const freeze = (title: string, note = ''): Promise<unknown> =>
+    release(mara, { title, note, licence: LICENCE });
 
   await take(mara, 'blocks', 'blocks.geojson', blocksFile);
   await changeProject(mara, { draft_public: true, held_still: 'spin-axis' });
   await freeze('Outlines of ten blocks');
   await take(tobin, 'rotations', 'rotations.csv', rotationsFile);
-  await edit(tobin, await rotationEdits(tobin, [...BEFORE_SABLE_REFIT, ...BEFORE_QUILL_POSED]), 'Rotations as first read from the papers');
+  await edit(
+    tobin,
+    await rotationEdits(tobin, [...BEFORE_SABLE_REFIT, ...BEFORE_QUILL_POSED]),
+    'Rotations as first read from the papers',
+  );
   await freeze('First rotations, 0 to 178 Ma');
   await take(tobin, 'features', 'features.geojson', featuresFile);
   await freeze('Present coasts carried by their blocks');
-  await edit(mara, [...sourceEdits(), ...(await outlineSourceEdits(mara))], 'Name the source of every outline');
+  await edit(
+    mara,
+    [...sourceEdits(), ...(await outlineSourceEdits(mara))],
+    'Name the source of every outline',
+  );
   await freeze('Sources named');
   await take(sefa, 'directions', 'directions.csv', directionsFile);
   await edit(sefa, await directionSourceEdits(sefa), 'Name the source of every direction');
@@ -76,22 +92,45 @@ async function actorsOf(db: Database): Promise<Map<string, Actor>> {
 async function join(db: Database, actors: Map<string, Actor>): Promise<void> {
   const [row] = await db.select({ id: project.id }).from(project).where(eq(project.slug, DEMO_SLUG));
   const members = DEMO_PEOPLE.filter(({ role }) => role !== 'admin' && role !== 'lead');
-  const others = [...members, ...DEMO_PEOPLE.filter(({ name, role }) => role === 'lead' && name !== 'Mara Kell')];
+  const others = [
+    ...members,
+    ...DEMO_PEOPLE.filter(({ name, role }) => role === 'lead' && name !== 'Mara Kell'),
+  ];
   await db.insert(membership).values(
-    others.map(({ name, role }) => ({ project_id: row!.id, user_id: actors.get(name)!.user!.id, role: role as Role })),
+    others.map(({ name, role }) => ({
+      project_id: row!.id,
+      user_id: actors.get(name)!.user!.id,
+      role: role as Role,
+    })),
   );
 }
 
 async function take(access: Access, kind: ImportKind, name: string, text: string): Promise<void> {
   const file = { name, bytes: new TextEncoder().encode(text) };
-  const report = await importInto(access, { file, kind, answers: {}, mapping: {}, dryRun: false, skipRejected: false, expected: '*' });
-  if (!report.written) throw new Error(`The demo's ${name} was not taken: ${JSON.stringify(report.rejected[0] ?? report.questions[0])}`);
+  const report = await importInto(access, {
+    file,
+    kind,
+    answers: {},
+    mapping: {},
+    dryRun: false,
+    skipRejected: false,
+    expected: '*',
+  });
+  if (!report.written)
+    throw new Error(
+      `The demo's ${name} was not taken: ${JSON.stringify(report.rejected[0] ?? report.questions[0])}`,
+    );
 }
 
 const edit = (access: Access, edits: readonly Edit[], label: string): Promise<unknown> =>
   editDraft(access, edits, { expected: '*', action: 'edit', label });
 
-const update = (table: Table, id: string, fields: Record<string, unknown>): Edit => ({ op: 'update', table, id, fields });
+const update = (table: Table, id: string, fields: Record<string, unknown>): Edit => ({
+  op: 'update',
+  table,
+  id,
+  fields,
+});
 
 type RotationRow = Row<'rotations'>;
 const meets = (row: RotationRow, { block, relative_to, age_ma }: RotationEdit['row']): boolean =>
@@ -99,7 +138,9 @@ const meets = (row: RotationRow, { block, relative_to, age_ma }: RotationEdit['r
 
 async function rotationEdits(access: Access, edits: readonly RotationEdit[]): Promise<Edit[]> {
   const { rotations } = await loadState(access, 'draft');
-  return edits.map(({ row, fields }) => update('rotations', rotations.find((r) => meets(r, row))!.id, fields));
+  return edits.map(({ row, fields }) =>
+    update('rotations', rotations.find((r) => meets(r, row))!.id, fields),
+  );
 }
 
 /** The file's own values for rows that were seeded with earlier ones. */
@@ -110,7 +151,8 @@ function restore(access: Access, edits: readonly RotationEdit[]): Promise<Edit[]
   );
 }
 
-const sourceEdits = (): Edit[] => DEMO_SOURCES.map((fields) => ({ op: 'create', table: 'sources', fields: { ...fields } }));
+const sourceEdits = (): Edit[] =>
+  DEMO_SOURCES.map((fields) => ({ op: 'create', table: 'sources', fields: { ...fields } }));
 
 async function outlineSourceEdits(access: Access): Promise<Edit[]> {
   const { blocks } = await loadState(access, 'draft');
@@ -121,5 +163,7 @@ async function outlineSourceEdits(access: Access): Promise<Edit[]> {
 
 async function directionSourceEdits(access: Access): Promise<Edit[]> {
   const { directions } = await loadState(access, 'draft');
-  return directions.map(({ id, rock }) => update('directions', id, { source: rock === 'lava' ? 'Lund & Quarrie 2020' : 'Pell 2016' }));
+  return directions.map(({ id, rock }) =>
+    update('directions', id, { source: rock === 'lava' ? 'Lund & Quarrie 2020' : 'Pell 2016' }),
+  );
 }

@@ -25,14 +25,22 @@ export async function sendImport(request: ImportRequest): Promise<ImportReport> 
   const answer = await fetch(`/api/projects/${request.slug}/imports`, { method: 'POST', body });
   if (answer.ok) return (await answer.json()) as ImportReport;
   const problem = (await answer.json().catch(() => ({}))) as { title?: string; detail?: string };
-  throw new ImportRefused([problem.title ?? `The server answered ${answer.status}`, problem.detail].filter(Boolean).join('. '));
+  throw new ImportRefused(
+    [problem.title ?? `The server answered ${answer.status}`, problem.detail].filter(Boolean).join('. '),
+  );
 }
 
 /** What a file most likely holds, by its name and first characters; the user can say otherwise. */
 export function guessKind(name: string, head: string): ImportKind {
   const lower = name.toLowerCase();
   if (/^\s*\uFEFF?\s*[{[]/.test(head) || /\.(geo)?json$/.test(lower)) {
-    return /"(age_ma|side|chron)"|"kind"\s*:\s*"(layer|ridge|trench|transform|suture|margin|isochron|fracture_zone|pick|rock)"/.test(head) ? 'features' : 'blocks';
+    return /"(age_ma|side|chron)"|"kind"\s*:\s*"(layer|ridge|trench|transform|suture|margin|isochron|fracture_zone|pick|rock)"/.test(
+      head,
+    )
+      ? 'features'
+      : 'blocks';
   }
-  return /inclination|declination|alpha95|site/i.test(head.split(/\r?\n/, 1)[0] ?? '') ? 'directions' : 'rotations';
+  return /inclination|declination|alpha95|site/i.test(head.split(/\r?\n/, 1)[0] ?? '')
+    ? 'directions'
+    : 'rotations';
 }

@@ -10,7 +10,10 @@ import { coastVectors, cutCoast, type Line } from './rules/cut-coast';
 export interface CoastJob {
   readonly blocks: readonly {
     readonly code: string;
-    readonly outlines: readonly { readonly geometry: GeoPolygon | MultiPolygon; readonly inside: 'smaller' | 'larger' }[];
+    readonly outlines: readonly {
+      readonly geometry: GeoPolygon | MultiPolygon;
+      readonly inside: 'smaller' | 'larger';
+    }[];
   }[];
 }
 

@@ -5,7 +5,12 @@ import { z } from 'zod';
 export const IMPORT_KINDS = ['blocks', 'rotations', 'features', 'directions'] as const;
 export type ImportKind = (typeof IMPORT_KINDS)[number];
 
-export const EXPORT_NAMES = ['blocks.geojson', 'rotations.csv', 'features.geojson', 'directions.csv'] as const;
+export const EXPORT_NAMES = [
+  'blocks.geojson',
+  'rotations.csv',
+  'features.geojson',
+  'directions.csv',
+] as const;
 export type ExportName = (typeof EXPORT_NAMES)[number];
 
 /** The largest file that one import reads. */

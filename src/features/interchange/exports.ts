@@ -33,7 +33,10 @@ export function rotationsCsv(rotations: readonly Rotation[]): string {
 }
 
 export function directionsCsv(directions: readonly Direction[]): string {
-  return csvTable(DIRECTION_COLUMNS, directions.map((row) => DIRECTION_COLUMNS.map((column) => row[column])));
+  return csvTable(
+    DIRECTION_COLUMNS,
+    directions.map((row) => DIRECTION_COLUMNS.map((column) => row[column])),
+  );
 }
 
 /** One feature a line, so that a text comparison of two exports shows which block changed. */
@@ -59,9 +62,11 @@ export function blocksGeojson(blocks: readonly Block[], geometryOf: GeometryOf):
 
 export function featuresGeojson(features: readonly Feature[], geometryOf: GeometryOf): string {
   return featureCollection(
-    features.map(({ block, kind, name, age_ma, appears_ma, disappears_ma, chron, side, source, note, sha256 }) => ({
-      properties: { block, kind, name, age_ma, appears_ma, disappears_ma, chron, side, source, note },
-      geometry: geometryOf(sha256),
-    })),
+    features.map(
+      ({ block, kind, name, age_ma, appears_ma, disappears_ma, chron, side, source, note, sha256 }) => ({
+        properties: { block, kind, name, age_ma, appears_ma, disappears_ma, chron, side, source, note },
+        geometry: geometryOf(sha256),
+      }),
+    ),
   );
 }

@@ -56,17 +56,26 @@ export async function importInto(access: Access, request: ImportRequest): Promis
     notes: [...notes, ...reading.notes],
     preview: plan.preview.slice(0, MOST_PREVIEW).map((row) => ({ ...row })),
     table: reading.table
-      ? { headings: [...reading.table.headings], columns: [...reading.table.columns], required: [...reading.table.required] }
+      ? {
+          headings: [...reading.table.headings],
+          columns: [...reading.table.columns],
+          required: [...reading.table.required],
+        }
       : null,
     written: false,
     revision: state.revision,
     import_id: null,
   };
-  const blocked = questions.length > 0 || (plan.rejected.length > 0 && !request.skipRejected) || plan.accepted === 0;
+  const blocked =
+    questions.length > 0 || (plan.rejected.length > 0 && !request.skipRejected) || plan.accepted === 0;
   return request.dryRun || blocked ? report : write(access, request, plan, report);
 }
 
-function readFile(text: string, { kind, answers, mapping }: ImportRequest, state: State): { reading: FileReading<unknown>; plan: ImportPlan } {
+function readFile(
+  text: string,
+  { kind, answers, mapping }: ImportRequest,
+  state: State,
+): { reading: FileReading<unknown>; plan: ImportPlan } {
   const codes = new Set(state.blocks.map((block) => block.code));
   switch (kind) {
     case 'blocks': {
@@ -88,7 +97,12 @@ function readFile(text: string, { kind, answers, mapping }: ImportRequest, state
   }
 }
 
-async function write(access: Access, request: ImportRequest, plan: ImportPlan, report: ImportReport): Promise<ImportReport> {
+async function write(
+  access: Access,
+  request: ImportRequest,
+  plan: ImportPlan,
+  report: ImportReport,
+): Promise<ImportReport> {
   const { file, kind, expected } = request;
   const import_id = crypto.randomUUID();
   const { revision } = await editDraft(access, plan.edits, {
@@ -117,16 +131,25 @@ async function write(access: Access, request: ImportRequest, plan: ImportPlan, r
 export async function rejectedRows(access: Access, id: string): Promise<{ name: string; csv: string }> {
   demand(access, 'import');
   const own = and(eq(importFile.project_id, access.project.id), eq(importFile.id, id));
-  const [row] = await database().select({ name: importFile.name, rejected: importFile.rejected }).from(importFile).where(own);
+  const [row] = await database()
+    .select({ name: importFile.name, rejected: importFile.rejected })
+    .from(importFile)
+    .where(own);
   if (!row?.rejected) throw new Problem('NotFound');
   return { name: `${row.name.replace(/\.[^.]*$/, '')}-rejected.csv`, csv: row.rejected };
 }
 
 /** A kept original, byte for byte. @throws Problem `NotFound` */
-export async function importedFile(access: Access, id: string): Promise<{ name: string; content: Uint8Array }> {
+export async function importedFile(
+  access: Access,
+  id: string,
+): Promise<{ name: string; content: Uint8Array }> {
   demand(access, 'import');
   const own = and(eq(importFile.project_id, access.project.id), eq(importFile.id, id));
-  const [row] = await database().select({ name: importFile.name, content: importFile.content }).from(importFile).where(own);
+  const [row] = await database()
+    .select({ name: importFile.name, content: importFile.content })
+    .from(importFile)
+    .where(own);
   if (!row) throw new Problem('NotFound');
   return row;
 }
@@ -137,9 +160,15 @@ export async function exportFile(state: State, name: ExportName): Promise<{ type
   const csv = 'text/csv; charset=utf-8';
   switch (name) {
     case 'blocks.geojson':
-      return { type: geojson, body: blocksGeojson(state.blocks, await loadShapes(state.outlines.map((o) => o.sha256))) };
+      return {
+        type: geojson,
+        body: blocksGeojson(state.blocks, await loadShapes(state.outlines.map((o) => o.sha256))),
+      };
     case 'features.geojson':
-      return { type: geojson, body: featuresGeojson(state.features, await loadShapes(state.features.map((f) => f.sha256))) };
+      return {
+        type: geojson,
+        body: featuresGeojson(state.features, await loadShapes(state.features.map((f) => f.sha256))),
+      };
     case 'rotations.csv':
       return { type: csv, body: rotationsCsv(state.rotations) };
     case 'directions.csv':

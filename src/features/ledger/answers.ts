@@ -30,7 +30,7 @@ async function touched(access: Access, { changed }: DraftResult) {
     const own = [...last].filter(([, one]) => one.table === table);
     const rows = own.flatMap(([, { row }]) => row ?? []);
     const answered = await asAnswered(database(), access.project.id, table, rows);
-    items.push(...answered.map((row) => ({ table, row: row as unknown as LogRow })));
+    items.push(...answered.map((row) => ({ table, row: row })));
     deleted.push(...own.flatMap(([id, { row }]) => (row ? [] : { table, id })));
   }
   return { items, deleted };

@@ -32,7 +32,11 @@ export class EditRefused extends Error {
   get cells(): readonly { readonly edit: number; readonly field: string | null; readonly problem: string }[] {
     return (this.body.errors ?? []).map(({ path, problem, hint }) => {
       const [, index, field] = /^edits\.(\d+)(?:\.fields(?:\.(\w+))?)?/.exec(path ?? '') ?? [];
-      return { edit: Number(index ?? 0), field: field ?? null, problem: hint ? `${problem}: ${hint}` : problem };
+      return {
+        edit: Number(index ?? 0),
+        field: field ?? null,
+        problem: hint ? `${problem}: ${hint}` : problem,
+      };
     });
   }
 }
@@ -55,18 +59,30 @@ const base = (slug: string): string => `/api/projects/${encodeURIComponent(slug)
 /** Rows that others changed since and that these edits touch too. */
 export function overlap(edits: readonly Edit[], changes: readonly ChangeEntry[]): string[] {
   const own = new Set(edits.map((edit) => edit.id));
-  return changes.flatMap((entry) => entry.changes ?? []).flatMap(({ entity_id }) => (own.has(entity_id) ? [entity_id] : []));
+  return changes
+    .flatMap((entry) => entry.changes ?? [])
+    .flatMap(({ entity_id }) => (own.has(entity_id) ? [entity_id] : []));
 }
 
 /**
  * Sends edits. Where the draft has moved on but none of these rows was touched, they are sent again on the new revision.
  * @throws EditRefused
  */
-export async function sendEdits(slug: string, revision: number, edits: readonly Edit[], label?: string): Promise<BatchAnswer> {
+export async function sendEdits(
+  slug: string,
+  revision: number,
+  edits: readonly Edit[],
+  label?: string,
+): Promise<BatchAnswer> {
   try {
     return await post<BatchAnswer>(`${base(slug)}/edits`, revision, { edits, ...(label ? { label } : {}) });
   } catch (error) {
-    if (!(error instanceof EditRefused) || error.revision === null || overlap(edits, error.changes).length > 0) throw error;
+    if (
+      !(error instanceof EditRefused) ||
+      error.revision === null ||
+      overlap(edits, error.changes).length > 0
+    )
+      throw error;
     return post<BatchAnswer>(`${base(slug)}/edits`, error.revision, { edits, ...(label ? { label } : {}) });
   }
 }

@@ -25,7 +25,12 @@ interface State {
 
 /** Oldest age to which a block, frames aside, has rotations; 0 for none. */
 export const historyOldest = (model: Model): number =>
-  Math.max(0, ...model.blocks.filter(({ kind }) => kind !== 'frame').flatMap(({ legs }) => legs.map(({ older_ma }) => older_ma)));
+  Math.max(
+    0,
+    ...model.blocks
+      .filter(({ kind }) => kind !== 'frame')
+      .flatMap(({ legs }) => legs.map(({ older_ma }) => older_ma)),
+  );
 
 /** @param frame the frame whose north pole is the spin axis; latitudes mean something in it alone. */
 export function checksOf(model: Model, state: State, frame: string | null): Check[] {

@@ -28,7 +28,7 @@ const plane = {
  * great circles, outer rings anticlockwise. Null for what is empty.
  */
 export function flatten(geometry: Geometry): Geometry | null {
-  const flat = geoProject(geometry, plane) as Geometry | null;
+  const flat = geoProject<Geometry>(geometry, plane);
   if (flat?.type === 'Polygon') return { ...flat, coordinates: flat.coordinates.map(wound) };
   if (flat?.type === 'MultiPolygon')
     return { ...flat, coordinates: flat.coordinates.map((rings) => rings.map(wound)) };

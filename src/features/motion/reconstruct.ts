@@ -144,5 +144,5 @@ function mapPositions(geometry: Geometry, change: (position: Position) => Positi
   const walk = (value: Nested): Nested =>
     typeof value[0] === 'number' ? change(value as Position) : (value as Nested[]).map(walk);
   const { type, coordinates } = geometry as Exclude<Geometry, { type: 'GeometryCollection' }>;
-  return { type, coordinates: walk(coordinates as Nested) } as Geometry;
+  return { type, coordinates: walk(coordinates) } as Geometry;
 }

@@ -21,11 +21,20 @@ export const firstAge = (oldest_ma: number): number => Math.round(SHARE * oldest
 /** @returns null where nothing is released to everyone. */
 export async function showcase(actor: Actor): Promise<Showcase | null> {
   const { items } = await listProjects(actor, { limit: 500 });
-  const released = items.filter(({ visibility, latest_version }) => visibility === 'public' && latest_version);
-  const [project] = released.sort((a, b) => b.latest_version!.released_at.localeCompare(a.latest_version!.released_at));
+  const released = items.filter(
+    ({ visibility, latest_version }) => visibility === 'public' && latest_version,
+  );
+  const [project] = released.sort((a, b) =>
+    b.latest_version!.released_at.localeCompare(a.latest_version!.released_at),
+  );
   if (!project) return null;
   const access = await openProject(actor, project.slug, 'version.view');
   const state = await loadState(access, project.latest_version!.number);
   const heldStill = project.held_still ?? undefined;
-  return { project, access, state, shown: { age: firstAge(modelOf(state).oldest_ma), ...(heldStill ? { heldStill } : {}) } };
+  return {
+    project,
+    access,
+    state,
+    shown: { age: firstAge(modelOf(state).oldest_ma), ...(heldStill ? { heldStill } : {}) },
+  };
 }

@@ -44,7 +44,7 @@ export function sliceSearch(settings: SliceSettings, version: string): string {
   const query = new URLSearchParams({ version });
   for (const [key, value] of Object.entries(settings) as [string, SliceSettings[keyof SliceSettings]][]) {
     if (value === null || value === '') continue;
-    query.set(key, Array.isArray(value) ? value.join(',') : String(value as string | number));
+    query.set(key, Array.isArray(value) ? value.join(',') : String(value));
   }
   if (settings.path_block === '' || settings.path_lat === null || settings.path_lon === null) {
     for (const key of ['path_block', 'path_lat', 'path_lon']) query.delete(key);
@@ -52,4 +52,5 @@ export function sliceSearch(settings: SliceSettings, version: string): string {
   return `?${query}`;
 }
 
-export const sliceHref = (slug: string, format: string, search: string): string => `/api/projects/${slug}/slice.${format}${search}`;
+export const sliceHref = (slug: string, format: string, search: string): string =>
+  `/api/projects/${slug}/slice.${format}${search}`;

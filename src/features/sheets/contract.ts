@@ -1,6 +1,10 @@
 /** What a time-slice map is asked for, shared by the print page and the endpoints. */
 import { z } from 'zod';
-import { DEFAULT_PROJECTION, PROJECTION_NAMES, type ProjectionName } from '../../kernel/cartography/projections';
+import {
+  DEFAULT_PROJECTION,
+  PROJECTION_NAMES,
+  type ProjectionName,
+} from '../../kernel/cartography/projections';
 import { slug } from '../ledger/contract';
 
 export const LAYERS = ['graticule', 'coasts', 'names', 'velocity', 'path', 'ellipse'] as const;
@@ -26,7 +30,10 @@ const projection = z
   .transform((name, context): ProjectionName => {
     const found = PROJECTION_NAMES.find((known) => plain(known) === plain(name)) ?? ALIASES[plain(name)];
     if (found) return found;
-    context.addIssue({ code: 'custom', message: `not a projection known here: ${PROJECTION_NAMES.join(', ')}` });
+    context.addIssue({
+      code: 'custom',
+      message: `not a projection known here: ${PROJECTION_NAMES.join(', ')}`,
+    });
     return z.NEVER;
   });
 
@@ -37,7 +44,10 @@ const layers = z
     const names = text === undefined ? [...USUAL_LAYERS] : text.split(',').filter((name) => name !== '');
     const unknown = names.filter((name) => !LAYERS.some((layer) => layer === name));
     if (unknown.length === 0) return names as Layer[];
-    context.addIssue({ code: 'custom', message: `no such layer: ${unknown.join(', ')}; known are ${LAYERS.join(', ')}` });
+    context.addIssue({
+      code: 'custom',
+      message: `no such layer: ${unknown.join(', ')}; known are ${LAYERS.join(', ')}`,
+    });
     return z.NEVER;
   });
 
@@ -45,11 +55,20 @@ const layers = z
 const number = (least: number, most: number) =>
   z
     .union([z.number(), z.string().trim().min(1, 'missing').transform(Number)])
-    .refine((value) => Number.isFinite(value) && value >= least && value <= most, `a number from ${least} to ${most}`);
+    .refine(
+      (value) => Number.isFinite(value) && value >= least && value <= most,
+      `a number from ${least} to ${most}`,
+    );
 
 export const sliceQuery = z.object({
   version: z
-    .union([z.literal('draft'), z.string().regex(/^[1-9]\d{0,8}$/, '"draft" or a version’s number').transform(Number)])
+    .union([
+      z.literal('draft'),
+      z
+        .string()
+        .regex(/^[1-9]\d{0,8}$/, '"draft" or a version’s number')
+        .transform(Number),
+    ])
     .optional(),
   age_ma: number(0, 4600),
   relative_to: slug.optional(),

@@ -34,7 +34,12 @@ function png({ svg, width_pt, dpi }: RenderJob): Uint8Array {
 }
 
 function pdf({ svg, width_pt, height_pt, title }: RenderJob): Promise<Uint8Array> {
-  const document = new PDFDocument({ size: [width_pt, height_pt], margin: 0, info: { Title: title, Creator: 'Driftwright' }, lang: 'en' });
+  const document = new PDFDocument({
+    size: [width_pt, height_pt],
+    margin: 0,
+    info: { Title: title, Creator: 'Driftwright' },
+    lang: 'en',
+  });
   for (const [key, file] of Object.entries(FONT_FILES)) document.registerFont(key, file());
   const chunks: Buffer[] = [];
   document.on('data', (chunk: Buffer) => chunks.push(chunk));

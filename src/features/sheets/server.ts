@@ -16,7 +16,12 @@ import { sliceGeojson } from './slice/geojson';
 import { sliceFileName, slicePage, type Page } from './slice/page';
 import type { SliceSubject } from './slice/subject';
 
-export const SLICE_FORMATS = { svg: 'image/svg+xml', png: 'image/png', pdf: 'application/pdf', geojson: 'application/geo+json' } as const;
+export const SLICE_FORMATS = {
+  svg: 'image/svg+xml',
+  png: 'image/png',
+  pdf: 'application/pdf',
+  geojson: 'application/geo+json',
+} as const;
 export type SliceFormat = keyof typeof SLICE_FORMATS;
 
 export interface Slice {
@@ -25,22 +30,39 @@ export interface Slice {
   readonly state: State;
 }
 
-const day = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' });
+const day = new Intl.DateTimeFormat('en-GB', {
+  day: 'numeric',
+  month: 'long',
+  year: 'numeric',
+  timeZone: 'UTC',
+});
 
 /** @throws KernelError for an unknown frame or block, Problem where the version may not be seen */
-export async function drawSlice(access: Access, query: SliceQuery, format: SliceFormat, signal?: AbortSignal): Promise<Slice> {
+export async function drawSlice(
+  access: Access,
+  query: SliceQuery,
+  format: SliceFormat,
+  signal?: AbortSignal,
+): Promise<Slice> {
   demand(access, 'compute');
   const state = await loadState(access, query.version);
   const subject = await subjectOf(access, state, query);
   const carried = carry(subject, query.age_ma, subject.frame.code);
   const name = sliceFileName(access.project.slug, String(state.version), query.age_ma, format);
-  if (format === 'geojson') return { body: JSON.stringify(sliceGeojson(subject, carried, query)), name, state };
+  if (format === 'geojson')
+    return { body: JSON.stringify(sliceGeojson(subject, carried, query)), name, state };
   const page = slicePage({ subject, carried, query, path: pathOf(subject, query) });
   if (format === 'svg') return { body: page.svg, name, state };
   return { body: await render(page, format, query, subject.title, signal), name, state };
 }
 
-function render(page: Page, format: 'png' | 'pdf', query: SliceQuery, title: string, signal?: AbortSignal): Promise<Uint8Array> {
+function render(
+  page: Page,
+  format: 'png' | 'pdf',
+  query: SliceQuery,
+  title: string,
+  signal?: AbortSignal,
+): Promise<Uint8Array> {
   return runInWorker<RenderJob, Uint8Array>(renderTask, { ...page, format, dpi: query.dpi, title }, signal);
 }
 
@@ -66,7 +88,10 @@ async function subjectOf(access: Access, state: State, query: SliceQuery): Promi
   const hashes = [...state.outlines, ...coasts].map((row) => row.sha256);
   return {
     title: access.project.title,
-    version: state.sha256 === null ? `Draft, revision ${state.revision}` : `Version ${state.version}, sha256 ${shortHash(state.sha256)}`,
+    version:
+      state.sha256 === null
+        ? `Draft, revision ${state.revision}`
+        : `Version ${state.version}, sha256 ${shortHash(state.sha256)}`,
     licence: access.project.licence,
     date: day.format(new Date()),
     model,
@@ -77,7 +102,10 @@ async function subjectOf(access: Access, state: State, query: SliceQuery): Promi
   };
 }
 
-function pathOf(subject: SliceSubject, query: SliceQuery): { name: string; points: ReturnType<typeof driftPath> } | null {
+function pathOf(
+  subject: SliceSubject,
+  query: SliceQuery,
+): { name: string; points: ReturnType<typeof driftPath> } | null {
   const { path_block: block, path_lat: lat, path_lon: lon, path_step_ma: step_ma } = query;
   if (block === undefined || lat === undefined || lon === undefined) return null;
   const span = { older_ma: Math.max(subject.model.oldest_ma, step_ma), younger_ma: 0, step_ma };

@@ -24,8 +24,20 @@ export interface ProjectionKind {
 }
 
 export const PROJECTIONS = {
-  'equal-earth': { label: 'Equal Earth', property: 'equal-area', reach: null, centre: 'equator', create: geoEqualEarth },
-  mollweide: { label: 'Mollweide', property: 'equal-area', reach: null, centre: 'equator', create: geoMollweide },
+  'equal-earth': {
+    label: 'Equal Earth',
+    property: 'equal-area',
+    reach: null,
+    centre: 'equator',
+    create: geoEqualEarth,
+  },
+  mollweide: {
+    label: 'Mollweide',
+    property: 'equal-area',
+    reach: null,
+    centre: 'equator',
+    create: geoMollweide,
+  },
   'lambert-azimuthal': {
     label: 'Lambert azimuthal equal-area',
     property: 'equal-area',
@@ -33,8 +45,20 @@ export const PROJECTIONS = {
     centre: 'any',
     create: geoAzimuthalEqualArea,
   },
-  robinson: { label: 'Robinson', property: 'compromise', reach: null, centre: 'equator', create: geoRobinson },
-  orthographic: { label: 'Orthographic', property: 'perspective', reach: { usual: 90, most: 90 }, centre: 'any', create: geoOrthographic },
+  robinson: {
+    label: 'Robinson',
+    property: 'compromise',
+    reach: null,
+    centre: 'equator',
+    create: geoRobinson,
+  },
+  orthographic: {
+    label: 'Orthographic',
+    property: 'perspective',
+    reach: { usual: 90, most: 90 },
+    centre: 'any',
+    create: geoOrthographic,
+  },
   'polar-stereographic': {
     label: 'Polar stereographic',
     property: 'conformal',

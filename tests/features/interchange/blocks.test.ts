@@ -43,13 +43,18 @@ describe('blocks.geojson', () => {
     expect(open.asking.questions()[0]!.examples[0]).toMatch(/line 2: sable, 9\d\.\d % of the globe/);
     const larger = readBlocks(text, { ring_winding: 'the larger side' });
     expect(larger.candidates[0]!.fields.outlines[0]!.inside).toBe('larger');
-    expect(ids(readBlocks(file(block('sable', square(20, -35, 50, -20).reverse(), { inside: 'smaller' }))))).toEqual([]);
+    expect(
+      ids(readBlocks(file(block('sable', square(20, -35, 50, -20).reverse(), { inside: 'smaller' })))),
+    ).toEqual([]);
   });
 
   it('asks about exchanged latitude and longitude, and exchanges only when told', () => {
     const ring = square(-35, 120, -20, 150);
     expect(ids(readBlocks(file(block('x', ring))))).toContain('swapped_lat_lon');
-    const { candidates } = readBlocks(file(block('x', ring)), { swapped_lat_lon: 'exchange them', ring_winding: 'the smaller side' });
+    const { candidates } = readBlocks(file(block('x', ring)), {
+      swapped_lat_lon: 'exchange them',
+      ring_winding: 'the smaller side',
+    });
     expect(candidates[0]!.fields.outlines[0]!.geometry.coordinates[0]).toContainEqual([120, -35]);
     const kept = readBlocks(file(block('x', ring)), { swapped_lat_lon: 'keep them' });
     expect(kept.rejected[0]!.problem).toBe('a position off the globe');
@@ -61,7 +66,7 @@ describe('blocks.geojson', () => {
     ['three positions', [[0, 0], [10, 0], [0, 0]], /four positions/],
     ['a latitude of 95', [[0, 0], [10, 0], [10, 95], [0, 10], [0, 0]], /off the globe/],
   ])('rejects %s and says where', (_, ring, problem) => {
-    const { candidates, rejected } = readBlocks(file(block('good', square(0, 0, 5, 5)), block('bad', ring as Ring)));
+    const { candidates, rejected } = readBlocks(file(block('good', square(0, 0, 5, 5)), block('bad', ring)));
     expect(candidates.map((c) => c.fields.fields.code)).toEqual(['good']);
     expect(rejected).toHaveLength(1);
     expect(rejected[0]).toMatchObject({ line: 3, column: 'geometry' });
@@ -77,12 +82,20 @@ describe('blocks.geojson', () => {
   });
 
   it('says where JSON breaks, and what a wrong code could be', () => {
-    expect(readBlocks('{"type":"FeatureCollection",\n"features":[{]}').rejected[0]).toMatchObject({ line: 2, problem: 'not JSON' });
-    expect(readBlocks(file(block('Sable Terrane', square(0, 0, 5, 5)))).rejected[0]).toMatchObject({ column: 'code', hint: 'Write sable-terrane?' });
+    expect(readBlocks('{"type":"FeatureCollection",\n"features":[{]}').rejected[0]).toMatchObject({
+      line: 2,
+      problem: 'not JSON',
+    });
+    expect(readBlocks(file(block('Sable Terrane', square(0, 0, 5, 5)))).rejected[0]).toMatchObject({
+      column: 'code',
+      hint: 'Write sable-terrane?',
+    });
   });
 
   it('refuses ages that run backwards', () => {
-    const { rejected } = readBlocks(file(block('x', square(0, 0, 5, 5), { appears_ma: 10, disappears_ma: 50 })));
+    const { rejected } = readBlocks(
+      file(block('x', square(0, 0, 5, 5), { appears_ma: 10, disappears_ma: 50 })),
+    );
     expect(rejected[0]!.problem).toBe('the block disappears before it appears');
   });
 });
@@ -100,9 +113,16 @@ describe('features.geojson', () => {
   it('is carried by a block of the project', () => {
     const line = { type: 'LineString', coordinates: [[0, 1], [2, 3]] }; // prettier-ignore
     const feature = (props: object) => ({ type: 'Feature', properties: props, geometry: line });
-    const text = file(feature({ block: 'sable', kind: 'layer', name: 'coast' }), feature({ block: 'nobody', kind: 'layer' }), feature({ block: 'sable', kind: 'beach' }));
+    const text = file(
+      feature({ block: 'sable', kind: 'layer', name: 'coast' }),
+      feature({ block: 'nobody', kind: 'layer' }),
+      feature({ block: 'sable', kind: 'beach' }),
+    );
     const { candidates, rejected } = readFeatures(text, new Set(['sable']));
     expect(candidates).toHaveLength(1);
-    expect(rejected.map((r) => [r.line, r.column])).toEqual([[3, 'block'], [4, 'kind']]);
+    expect(rejected.map((r) => [r.line, r.column])).toEqual([
+      [3, 'block'],
+      [4, 'kind'],
+    ]);
   });
 });

@@ -18,7 +18,8 @@ describe('a coast cut by an outline', () => {
     const parts = cutCoast(line, box(10, -5, 20, 5), 'smaller');
     expect(parts).toHaveLength(1);
     expect(parts[0]!.map(([lon]) => Math.round(lon * 100) / 100)).toEqual([10, 13, 16, 20]);
-    for (const end of [parts[0]![0]![0] - 10, parts[0]!.at(-1)![0] - 20]) expect(Math.abs(end) * KM_PER_DEG).toBeLessThan(CUT_ERROR_KM);
+    for (const end of [parts[0]![0]![0] - 10, parts[0]!.at(-1)![0] - 20])
+      expect(Math.abs(end) * KM_PER_DEG).toBeLessThan(CUT_ERROR_KM);
   });
 
   it('leaves and comes back, and takes the other side when that is meant', () => {
@@ -44,7 +45,9 @@ describe('a coast cut by an outline', () => {
       if (lon < -25 || lon > 60 || Math.abs(lat) > 40) continue;
       const near = [-20, 52].some((x) => Math.abs(lon - x) < 0.01) || Math.abs(lat + 36) < 0.01;
       if (near) continue;
-      expect(inside.has(`${round(lon)} ${round(lat)}`), `${lon} ${lat}`).toBe(geoContains(clockwise, [lon, lat]));
+      expect(inside.has(`${round(lon)} ${round(lat)}`), `${lon} ${lat}`).toBe(
+        geoContains(clockwise, [lon, lat]),
+      );
       checked++;
     }
     expect(checked).toBeGreaterThan(2000);

@@ -9,28 +9,50 @@ import { resolveRotations } from '~/features/interchange/rules/resolve-rotations
 
 const HEAD = 'block,relative_to,age_ma,pole_lat,pole_lon,angle_deg';
 const file = (...lines: string[]): string => [HEAD, ...lines].join('\n');
-const ids = (reading: ReturnType<typeof readRotations>): string[] => reading.asking.questions().map((q) => q.id);
+const ids = (reading: ReturnType<typeof readRotations>): string[] =>
+  reading.asking.questions().map((q) => q.id);
 
 describe('a plain table', () => {
   it('is taken as it stands, columns in any order and blanks unknown', () => {
-    const text = 'angle_deg,block,relative_to,age_ma,pole_lon,pole_lat,source\n9.64,sable,tarn,66.0,-27.04,2.54,"Ashgrove, Pell 2019"\n';
+    const text =
+      'angle_deg,block,relative_to,age_ma,pole_lon,pole_lat,source\n9.64,sable,tarn,66.0,-27.04,2.54,"Ashgrove, Pell 2019"\n';
     const { candidates, rejected, asking } = readRotations(text);
     expect(rejected).toEqual([]);
     expect(asking.questions()).toEqual([]);
     expect(candidates[0]).toMatchObject({
       line: 2,
-      fields: { block: 'sable', relative_to: 'tarn', age_ma: 66, pole_lat: 2.54, pole_lon: -27.04, angle_deg: 9.64, source: 'Ashgrove, Pell 2019', covariance: null, chron: null },
+      fields: {
+        block: 'sable',
+        relative_to: 'tarn',
+        age_ma: 66,
+        pole_lat: 2.54,
+        pole_lon: -27.04,
+        angle_deg: 9.64,
+        source: 'Ashgrove, Pell 2019',
+        covariance: null,
+        chron: null,
+      },
     });
   });
 
   it('says what is missing in the heading line', () => {
     const { rejected } = readRotations('block,age_ma\nsable,10\n');
-    expect(rejected[0]).toMatchObject({ line: 1, problem: 'the heading line has no relative_to, pole_lat, pole_lon, angle_deg' });
+    expect(rejected[0]).toMatchObject({
+      line: 1,
+      problem: 'the heading line has no relative_to, pole_lat, pole_lon, angle_deg',
+    });
   });
 
   it('maps headings of another table', () => {
     const text = 'Terrane,Against,Age,Lat,Lon,Rot\nsable,tarn,10,1,2,3\n';
-    const mapping = { Terrane: 'block', Against: 'relative_to', Age: 'age_ma', Lat: 'pole_lat', Lon: 'pole_lon', Rot: 'angle_deg' };
+    const mapping = {
+      Terrane: 'block',
+      Against: 'relative_to',
+      Age: 'age_ma',
+      Lat: 'pole_lat',
+      Lon: 'pole_lon',
+      Rot: 'angle_deg',
+    };
     expect(readRotations(text, {}, mapping).candidates).toHaveLength(1);
   });
 });
@@ -45,7 +67,9 @@ describe('what is wrong is said by line and column, with a way to mend it', () =
     ['sable,sable,10,12,20,5', 'relative_to', 'sable', /own reference/],
     ['sable,tarn,10,12,420,5', 'pole_lon', '420', /longitude beyond/],
   ])('%s', (line, column, read, problem) => {
-    const { candidates, rejected } = readRotations(file('sable,tarn,20,12,20,5', line, 'sable,tarn,30,12,20,5'));
+    const { candidates, rejected } = readRotations(
+      file('sable,tarn,20,12,20,5', line, 'sable,tarn,30,12,20,5'),
+    );
     expect(candidates).toHaveLength(2);
     expect(rejected).toHaveLength(1);
     expect(rejected[0]).toMatchObject({ line: 3, column, read });
@@ -61,7 +85,9 @@ describe('what is wrong is said by line and column, with a way to mend it', () =
 
   it('a covariance that is not positive semi-definite, or incomplete', () => {
     const head = `${HEAD},cov_xx,cov_xy,cov_xz,cov_yy,cov_yz,cov_zz\n`;
-    const { rejected } = readRotations(`${head}a,b,10,1,2,3,1e-4,5e-4,0,1e-4,0,1e-4\na,b,20,1,2,3,1e-4,,0,1e-4,0,1e-4\n`);
+    const { rejected } = readRotations(
+      `${head}a,b,10,1,2,3,1e-4,5e-4,0,1e-4,0,1e-4\na,b,20,1,2,3,1e-4,,0,1e-4,0,1e-4\n`,
+    );
     expect(rejected.map((r) => r.line)).toEqual([2, 3]);
     expect(rejected[1]!.problem).toMatch(/lacks cov_xy/);
   });
@@ -69,7 +95,9 @@ describe('what is wrong is said by line and column, with a way to mend it', () =
   it('reads the published form: C = (1/κ̂) [a b c; b d e; c e f] × 10⁻ᵍ (Royer & Chang 1991)', () => {
     const { candidates } = readRotations(`${HEAD},kappa,a,b,c,d,e,f,g\nx,y,10,1,2,3,2,4,1,0,6,0,8,5\n`);
     const expected = [2e-5, 0.5e-5, 0, 3e-5, 0, 4e-5];
-    candidates[0]!.fields.covariance!.forEach((entry, i) => expect(Math.abs(entry - expected[i]!)).toBeLessThan(1e-18));
+    candidates[0]!.fields.covariance!.forEach((entry, i) =>
+      expect(Math.abs(entry - expected[i]!)).toBeLessThan(1e-18),
+    );
   });
 });
 
@@ -87,7 +115,12 @@ describe('what is open is asked, once each, and never changed silently', () => {
     expect(open.asking.questions()[0]!.examples[0]).toBe('line 2: 66,0');
     const answered = readRotations(text, { decimal_comma: 'decimal commas' });
     expect(answered.asking.questions()).toEqual([]);
-    expect(answered.candidates[0]!.fields).toMatchObject({ age_ma: 66, pole_lat: 2.54, pole_lon: -27.04, angle_deg: 9.64 });
+    expect(answered.candidates[0]!.fields).toMatchObject({
+      age_ma: 66,
+      pole_lat: 2.54,
+      pole_lon: -27.04,
+      angle_deg: 9.64,
+    });
     expect(readRotations(text, { decimal_comma: 'reject these rows' }).candidates).toEqual([]);
   });
 
@@ -121,7 +154,11 @@ describe('what is open is asked, once each, and never changed silently', () => {
   });
 
   it('angles in radians', () => {
-    const text = file('sable,tarn,10,42.5,120,0.0873', 'sable,tarn,20,42.5,121,0.1745', 'sable,tarn,30,42.5,122,0.2618');
+    const text = file(
+      'sable,tarn,10,42.5,120,0.0873',
+      'sable,tarn,20,42.5,121,0.1745',
+      'sable,tarn,30,42.5,122,0.2618',
+    );
     expect(ids(readRotations(text))).toEqual(['angle_unit']);
     const { candidates } = readRotations(text, { angle_unit: 'radians' });
     expect(Math.abs(candidates[1]!.fields.angle_deg - 9.998)).toBeLessThan(1e-3);
@@ -156,7 +193,12 @@ describe('against the draft', () => {
   });
 
   it('refuses the rows that close a loop, and names the loop with its ages', () => {
-    const lines = ['sable,tarn,0,0,0,0', 'sable,tarn,40,12,20,5', 'tarn,sable,20,12,20,5', 'tarn,sable,40,12,20,8'];
+    const lines = [
+      'sable,tarn,0,0,0,0',
+      'sable,tarn,40,12,20,5',
+      'tarn,sable,20,12,20,5',
+      'tarn,sable,40,12,20,8',
+    ];
     const reading = readRotations(file(...lines));
     const { rejected } = resolveRotations(reading.candidates, { blocks, rotations: [] }, reading.asking);
     expect(rejected.length).toBeGreaterThan(0);
@@ -164,10 +206,36 @@ describe('against the draft', () => {
   });
 
   it('tells new rows from changed and unchanged ones', () => {
-    const rest = { chron: null, age_two_sigma_ma: null, evidence: 'unconstrained' as const, covariance: null, cov_dof: null, source: null, note: null };
+    const rest = {
+      chron: null,
+      age_two_sigma_ma: null,
+      evidence: 'unconstrained' as const,
+      covariance: null,
+      cov_dof: null,
+      source: null,
+      note: null,
+    };
     const existing = [
-      { id: '1', block: 'sable', relative_to: 'tarn', age_ma: 10, pole_lat: 12, pole_lon: 20, angle_deg: 5, ...rest },
-      { id: '2', block: 'sable', relative_to: 'tarn', age_ma: 20, pole_lat: 12, pole_lon: 20, angle_deg: 9, ...rest },
+      {
+        id: '1',
+        block: 'sable',
+        relative_to: 'tarn',
+        age_ma: 10,
+        pole_lat: 12,
+        pole_lon: 20,
+        angle_deg: 5,
+        ...rest,
+      },
+      {
+        id: '2',
+        block: 'sable',
+        relative_to: 'tarn',
+        age_ma: 20,
+        pole_lat: 12,
+        pole_lon: 20,
+        angle_deg: 9,
+        ...rest,
+      },
     ];
     const text = file('sable,tarn,10,12,20,5', 'sable,tarn,20,12,20,9.5', 'sable,tarn,30,12,20,12');
     const open = readRotations(text);

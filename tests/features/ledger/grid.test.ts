@@ -3,7 +3,14 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readCells, writeCells } from '~/features/ledger/grid/clipboard';
 import { BLANK_ROTATION, rotationColumns } from '~/features/ledger/grid/columns';
-import { fieldsOf, missingIn, pasteAt, readyEdits, withChanges, withNewRow } from '~/features/ledger/grid/pending';
+import {
+  fieldsOf,
+  missingIn,
+  pasteAt,
+  readyEdits,
+  withChanges,
+  withNewRow,
+} from '~/features/ledger/grid/pending';
 import { move, START, within } from '~/features/ledger/grid/selection';
 
 const columns = rotationColumns(['sable', 'tarn']);
@@ -35,13 +42,20 @@ describe('a cell reads what people type', () => {
 
 describe('the clipboard', () => {
   it('reads tabs, lines and quoted cells', () => {
-    expect(readCells('1\t2\r\n"a\tb"\t"say ""so"""\r\n')).toEqual([['1', '2'], ['a\tb', 'say "so"']]);
+    expect(readCells('1\t2\r\n"a\tb"\t"say ""so"""\r\n')).toEqual([
+      ['1', '2'],
+      ['a\tb', 'say "so"'],
+    ]);
   });
 
   it('comes back as it was copied', () => {
     const cell = fc.string().filter((text) => !text.includes('\r'));
     const block = fc.array(fc.array(cell, { minLength: 2, maxLength: 4 }), { minLength: 1, maxLength: 5 });
-    fc.assert(fc.property(block, (cells) => expect(readCells(writeCells(cells))).toEqual(cells)));
+    fc.assert(
+      fc.property(block, (cells) => {
+        expect(readCells(writeCells(cells))).toEqual(cells);
+      }),
+    );
   });
 });
 
@@ -59,7 +73,10 @@ describe('pending edits', () => {
     const ready = readyEdits(pending, 'rotations', columns);
     expect(ready.problems).toBe(1);
     expect(ready.edits).toEqual([{ op: 'update', table: 'rotations', id: 'b', fields: { angle_deg: 5 } }]);
-    expect(pending.get('a')!.cells['pole_lat']).toEqual({ text: '91', problem: 'latitude beyond 90°: moved decimal point?' });
+    expect(pending.get('a')!.cells['pole_lat']).toEqual({
+      text: '91',
+      problem: 'latitude beyond 90°: moved decimal point?',
+    });
   });
 
   it('a new row waits until nothing required is blank', () => {
@@ -68,21 +85,51 @@ describe('pending edits', () => {
     const half = withChanges(begun, [{ row: 'n', key: 'age_ma', text: '60' }], columns);
     expect(missingIn(half.get('n')!, columns)).toEqual(['pole_lat', 'pole_lon', 'angle_deg']);
     expect(readyEdits(half, 'rotations', columns).edits).toEqual([]);
-    const whole = withChanges(half, [['pole_lat', '1'], ['pole_lon', '2'], ['angle_deg', '3']].map(([key, text]) => ({ row: 'n', key: key!, text: text! })), columns);
+    const whole = withChanges(
+      half,
+      [
+        ['pole_lat', '1'],
+        ['pole_lon', '2'],
+        ['angle_deg', '3'],
+      ].map(([key, text]) => ({ row: 'n', key: key!, text: text! })),
+      columns,
+    );
     const [edit] = readyEdits(whole, 'rotations', columns).edits;
-    expect(edit).toMatchObject({ op: 'create', id: 'n', fields: { block: 'sable', relative_to: 'tarn', age_ma: 60, pole_lat: 1, pole_lon: 2, angle_deg: 3, covariance: null } });
+    expect(edit).toMatchObject({
+      op: 'create',
+      id: 'n',
+      fields: {
+        block: 'sable',
+        relative_to: 'tarn',
+        age_ma: 60,
+        pole_lat: 1,
+        pole_lon: 2,
+        angle_deg: 3,
+        covariance: null,
+      },
+    });
   });
 
   it('pastes over rows, makes new ones below, and counts what lies beyond the last column', () => {
     const at = { row: 1, column: columns.length - 1 };
     const { changes, newRows, dropped } = pasteAt([['x', 'y'], ['z']], at, ['a', 'b'], columns, () => 'new');
-    expect(changes.map(({ row, text }) => [row, text])).toEqual([['b', 'x'], ['new', 'z']]);
+    expect(changes.map(({ row, text }) => [row, text])).toEqual([
+      ['b', 'x'],
+      ['new', 'z'],
+    ]);
     expect(newRows).toEqual(['new']);
     expect(dropped).toBe(1);
   });
 
   it('keeps the fields that can be read', () => {
-    const pending = withChanges(new Map(), [{ row: 'a', key: 'pole_lon', text: '7,25' }, { row: 'a', key: 'age_ma', text: '?' }], columns);
+    const pending = withChanges(
+      new Map(),
+      [
+        { row: 'a', key: 'pole_lon', text: '7,25' },
+        { row: 'a', key: 'age_ma', text: '?' },
+      ],
+      columns,
+    );
     expect(fieldsOf(pending.get('a')!, columns)).toEqual({ pole_lon: 7.25 });
   });
 });

@@ -7,10 +7,14 @@ import { fitProjection, PROJECTION_NAMES } from '~/kernel/cartography/projection
 
 const box = { x: 0, y: 0, width: 1190, height: 595 };
 const blob = (lon: number, lat: number, r: number, n: number): MultiPolygon => {
-  const ring = Array.from({ length: n }, (_, i) => [lon + (r * Math.sin((2 * Math.PI * i) / n)) / Math.cos((lat * Math.PI) / 180), lat + r * Math.cos((2 * Math.PI * i) / n)]);
+  const ring = Array.from({ length: n }, (_, i) => [
+    lon + (r * Math.sin((2 * Math.PI * i) / n)) / Math.cos((lat * Math.PI) / 180),
+    lat + r * Math.cos((2 * Math.PI * i) / n),
+  ]);
   return { type: 'MultiPolygon', coordinates: [[[...ring, ring[0]!]]] };
 };
-const points = (d: string): number[][] => (d.match(/-?[\d.]+,-?[\d.]+/g) ?? []).map((pair) => pair.split(',').map(Number));
+const points = (d: string): number[][] =>
+  (d.match(/-?[\d.]+,-?[\d.]+/g) ?? []).map((pair) => pair.split(',').map(Number));
 /** Greatest distance of a vertex of one path from the nearest vertex or edge of the other. */
 function apart(a: number[][], b: number[][]): number {
   const toSegment = ([x, y]: number[], [p, q]: number[], [r, s]: number[]): number => {
@@ -39,7 +43,10 @@ describe('outlines on a map', () => {
     const write = pathWriter(projection);
     const path = geoPath(projection).digits(2);
     const square: MultiPolygon = { type: 'MultiPolygon', coordinates: [[[[0, 0], [0, 30], [40, 30], [40, 0], [0, 0]]]] }; // prettier-ignore
-    const pole: MultiPolygon = { type: 'MultiPolygon', coordinates: [[Array.from({ length: 181 }, (_, i) => [2 * i, 70])]] };
+    const pole: MultiPolygon = {
+      type: 'MultiPolygon',
+      coordinates: [[Array.from({ length: 181 }, (_, i) => [2 * i, 70])]],
+    };
     for (const shape of [blob(175, 10, 12, 64), square, pole]) expect(write(shape)).toBe(path(shape));
     expect(STRAIGHT_EDGE_DEG).toBeLessThan(40);
   });

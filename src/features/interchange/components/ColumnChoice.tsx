@@ -10,14 +10,15 @@ interface Props {
 /** For a table with headings of its own: which of them holds what. */
 export function ColumnChoice({ table, mapping, onChange }: Props) {
   const [chosen, setChosen] = useState<ColumnMapping>(mapping);
-  const headingOf = (column: string): string => Object.keys(chosen).find((heading) => chosen[heading] === column) ?? '';
+  const headingOf = (column: string): string =>
+    Object.keys(chosen).find((heading) => chosen[heading] === column) ?? '';
   const choose = (column: string, heading: string): void => {
     const rest = Object.entries(chosen).filter(([h, c]) => c !== column && h !== heading);
     setChosen(Object.fromEntries(heading === '' ? rest : [...rest, [heading, column]]));
   };
   return (
     <form
-      className="border border-edge p-4"
+      className="border-edge border p-4"
       onSubmit={(e) => {
         e.preventDefault();
         onChange(chosen);
@@ -26,9 +27,13 @@ export function ColumnChoice({ table, mapping, onChange }: Props) {
       <h3 className="t-head">Which of your columns holds what?</h3>
       <div className="mt-3 grid grid-cols-3 gap-x-6 gap-y-2 max-md:grid-cols-1">
         {table.columns.map((column) => (
-          <label key={column} className="flex items-center justify-between gap-3 t-body">
+          <label key={column} className="t-body flex items-center justify-between gap-3">
             <span className={table.required.includes(column) ? 'font-medium' : 'text-ink-2'}>{column}</span>
-            <select className="min-h-7 w-40 border border-edge bg-sheet px-1" value={headingOf(column)} onChange={(e) => choose(column, e.target.value)}>
+            <select
+              className="border-edge bg-sheet min-h-7 w-40 border px-1"
+              value={headingOf(column)}
+              onChange={(e) => choose(column, e.target.value)}
+            >
               <option value="">by its name</option>
               {table.headings.map((heading) => (
                 <option key={heading} value={heading}>

@@ -46,7 +46,9 @@ export function FilePicker({ busy, empty, onChoose }: Props) {
           Choose a file …
         </button>
         <p className="t-body text-ink-2">
-          {empty ? 'Begin with blocks.geojson; rotations come after the blocks they turn.' : 'Up to 64 MB. Nothing is written before you have seen it.'}
+          {empty
+            ? 'Begin with blocks.geojson; rotations come after the blocks they turn.'
+            : 'Up to 64 MB. Nothing is written before you have seen it.'}
         </p>
       </div>
       <form
@@ -58,7 +60,13 @@ export function FilePicker({ busy, empty, onChoose }: Props) {
       >
         <label className="field">
           <span className="label">Or paste a table with its heading line</span>
-          <textarea className="input font-mono text-[12px]" rows={6} value={pasted} onChange={(e) => setPasted(e.target.value)} placeholder="block,relative_to,age_ma,pole_lat,pole_lon,angle_deg" />
+          <textarea
+            className="input font-mono text-[12px]"
+            rows={6}
+            value={pasted}
+            onChange={(e) => setPasted(e.target.value)}
+            placeholder="block,relative_to,age_ma,pole_lat,pole_lon,angle_deg"
+          />
         </label>
         <div>
           <button className="button" disabled={busy || pasted.trim() === ''}>

@@ -1,7 +1,13 @@
 /** Bringing files in: choose, see what would be written and what is wrong, answer what is open, accept. */
 import { useRef, useState } from 'react';
 import { guessKind, ImportRefused, sendImport } from '../client';
-import { IMPORT_KINDS, type Answers, type ColumnMapping, type ImportKind, type ImportReport } from '../contract';
+import {
+  IMPORT_KINDS,
+  type Answers,
+  type ColumnMapping,
+  type ImportKind,
+  type ImportReport,
+} from '../contract';
 import { ColumnChoice } from './ColumnChoice';
 import { FilePicker } from './FilePicker';
 import { PreviewTable } from './PreviewTable';
@@ -50,7 +56,9 @@ export default function ImportDesk({ slug, blocks }: Props) {
     } catch (error) {
       if (mine !== latest.current) return;
       setRefused(
-        error instanceof ImportRefused ? error.message : 'The server did not answer. Nothing was written; try again.',
+        error instanceof ImportRefused
+          ? error.message
+          : 'The server did not answer. Nothing was written; try again.',
       );
     } finally {
       if (mine === latest.current) setBusy(null);
@@ -77,14 +85,14 @@ export default function ImportDesk({ slug, blocks }: Props) {
       )}
       {desk && (
         <section aria-labelledby="import-file" aria-busy={busy !== null}>
-          <div className="flex flex-wrap items-baseline justify-between gap-3 border-b border-frame pb-1">
+          <div className="border-frame flex flex-wrap items-baseline justify-between gap-3 border-b pb-1">
             <h2 id="import-file" className="t-head" tabIndex={-1} ref={heading}>
               {desk.file.name}
             </h2>
             <label className="t-body text-ink-2">
               read as{' '}
               <select
-                className="border-b border-edge bg-transparent text-ink"
+                className="border-edge text-ink border-b bg-transparent"
                 value={desk.kind}
                 onChange={(e) => again({ kind: e.target.value as ImportKind, answers: {}, mapping: {} })}
               >
@@ -96,11 +104,20 @@ export default function ImportDesk({ slug, blocks }: Props) {
               </select>
             </label>
           </div>
-          <p className="h-6 pt-1 t-body text-ink-2" role="status">
+          <p className="t-body text-ink-2 h-6 pt-1" role="status">
             {busy === 'reading' && 'Reading …'}
             {busy === 'writing' && 'Writing …'}
           </p>
-          {report && <Report report={report} desk={desk} busy={busy !== null} again={again} accept={(skip) => void run(desk, false, skip)} slug={slug} />}
+          {report && (
+            <Report
+              report={report}
+              desk={desk}
+              busy={busy !== null}
+              again={again}
+              accept={(skip) => void run(desk, false, skip)}
+              slug={slug}
+            />
+          )}
         </section>
       )}
     </div>
@@ -128,7 +145,9 @@ function Report({ report, desk, busy, again, accept, slug }: ReportProps) {
             , <strong>{rejected}</strong> cannot
           </>
         )}
-        {report.questions.length > 0 && `, ${report.questions.length} ${report.questions.length === 1 ? 'question is' : 'questions are'} open`}. Nothing is written yet.
+        {report.questions.length > 0 &&
+          `, ${report.questions.length} ${report.questions.length === 1 ? 'question is' : 'questions are'} open`}
+        . Nothing is written yet.
       </p>
       {report.notes.length > 0 && (
         <ul className="t-body text-ink-2">
@@ -138,20 +157,38 @@ function Report({ report, desk, busy, again, accept, slug }: ReportProps) {
         </ul>
       )}
       {report.table && report.rejected[0]?.line === 1 && (
-        <ColumnChoice table={report.table} mapping={desk.mapping} onChange={(mapping) => again({ mapping })} />
+        <ColumnChoice
+          table={report.table}
+          mapping={desk.mapping}
+          onChange={(mapping) => again({ mapping })}
+        />
       )}
       {report.questions.length > 0 && (
-        <Questions questions={report.questions} busy={busy} onAnswer={(answers) => again({ answers: { ...desk.answers, ...answers } })} />
+        <Questions
+          questions={report.questions}
+          busy={busy}
+          onAnswer={(answers) => again({ answers: { ...desk.answers, ...answers } })}
+        />
       )}
-      {rejected > 0 && <RejectedTable rows={report.rejected} beyond={report.rejected_beyond} file={desk.file.name} />}
+      {rejected > 0 && (
+        <RejectedTable rows={report.rejected} beyond={report.rejected_beyond} file={desk.file.name} />
+      )}
       {report.preview.length > 0 && <PreviewTable rows={report.preview} accepted={report.accepted} />}
-      <div className="flex flex-wrap items-center gap-3 border-t border-rule pt-4">
+      <div className="border-rule flex flex-wrap items-center gap-3 border-t pt-4">
         {rejected === 0 ? (
-          <button className="button button-main" disabled={busy || report.questions.length > 0 || report.accepted === 0} onClick={() => accept(false)}>
+          <button
+            className="button button-main"
+            disabled={busy || report.questions.length > 0 || report.accepted === 0}
+            onClick={() => accept(false)}
+          >
             Accept {report.accepted} {report.accepted === 1 ? 'row' : 'rows'}
           </button>
         ) : (
-          <button className="button button-main" disabled={busy || report.questions.length > 0 || report.accepted === 0} onClick={() => accept(true)}>
+          <button
+            className="button button-main"
+            disabled={busy || report.questions.length > 0 || report.accepted === 0}
+            onClick={() => accept(true)}
+          >
             Accept {report.accepted}, keep {rejected} to mend
           </button>
         )}
@@ -185,7 +222,9 @@ function Written({ report, slug }: { readonly report: ImportReport; readonly slu
           </a>
         )}
       </div>
-      {rejected > 0 && <RejectedTable rows={report.rejected} beyond={report.rejected_beyond} file={report.file} />}
+      {rejected > 0 && (
+        <RejectedTable rows={report.rejected} beyond={report.rejected_beyond} file={report.file} />
+      )}
     </div>
   );
 }

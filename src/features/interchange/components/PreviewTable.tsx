@@ -13,9 +13,19 @@ export function PreviewTable({ rows, accepted }: Props) {
   return (
     <div>
       <h3 className="t-head">
-        As it would stand {rows.length < accepted && <span className="font-normal text-ink-2">first {rows.length} of {accepted}</span>}
+        As it would stand{' '}
+        {rows.length < accepted && (
+          <span className="text-ink-2 font-normal">
+            first {rows.length} of {accepted}
+          </span>
+        )}
       </h3>
-      <div className="mt-1 max-h-96 overflow-auto" tabIndex={0} role="region" aria-label="Preview of the rows">
+      <div
+        className="mt-1 max-h-96 overflow-auto"
+        tabIndex={0}
+        role="region"
+        aria-label="Preview of the rows"
+      >
         <table className="ruled">
           <thead>
             <tr>
@@ -30,7 +40,9 @@ export function PreviewTable({ rows, accepted }: Props) {
             {rows.map((row, i) => (
               <tr key={i}>
                 <td className="number text-ink-2">{row.line ?? ''}</td>
-                <td className={row.change === 'replaces' ? 'text-ochre-ink' : 'text-ink-2'}>{CHANGES[row.change]}</td>
+                <td className={row.change === 'replaces' ? 'text-ochre-ink' : 'text-ink-2'}>
+                  {CHANGES[row.change]}
+                </td>
                 {columns.map((column) => (
                   <td key={column} className={typeof row.cells[column] === 'number' ? 'number' : ''}>
                     {row.cells[column] ?? ''}

@@ -13,7 +13,7 @@ export function Questions({ questions, busy, onAnswer }: Props) {
   const ready = questions.every((q) => chosen[q.id] !== undefined);
   return (
     <form
-      className="border border-ochre bg-ochre-wash p-4"
+      className="border-ochre bg-ochre-wash border p-4"
       onSubmit={(e) => {
         e.preventDefault();
         onAnswer(chosen);
@@ -26,8 +26,14 @@ export function Questions({ questions, busy, onAnswer }: Props) {
           {q.examples.length > 0 && <p className="t-body text-ink-2">{q.examples.join('; ')}</p>}
           <div className="mt-1 flex flex-wrap gap-x-6">
             {q.choices.map((choice) => (
-              <label key={choice} className="flex min-h-8 items-center gap-2 t-body">
-                <input type="radio" name={q.id} value={choice} checked={chosen[q.id] === choice} onChange={() => setChosen({ ...chosen, [q.id]: choice })} />
+              <label key={choice} className="t-body flex min-h-8 items-center gap-2">
+                <input
+                  type="radio"
+                  name={q.id}
+                  value={choice}
+                  checked={chosen[q.id] === choice}
+                  onChange={() => setChosen({ ...chosen, [q.id]: choice })}
+                />
                 {choice}
               </label>
             ))}

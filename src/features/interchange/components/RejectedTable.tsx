@@ -27,7 +27,7 @@ export function RejectedTable({ rows, beyond, file }: Props) {
               <tr key={i}>
                 <td className="number">{row.line ?? ''}</td>
                 <td>{row.column ?? ''}</td>
-                <td className="max-w-56 break-words text-madder">{row.read === '' ? 'nothing' : row.read}</td>
+                <td className="text-madder max-w-56 break-words">{row.read === '' ? 'nothing' : row.read}</td>
                 <td>{row.problem}</td>
                 <td className="text-ink-2">{row.hint}</td>
               </tr>
@@ -35,7 +35,7 @@ export function RejectedTable({ rows, beyond, file }: Props) {
           </tbody>
         </table>
       </div>
-      {beyond > 0 && <p className="mt-2 t-body text-ink-2">and {beyond} more</p>}
+      {beyond > 0 && <p className="t-body text-ink-2 mt-2">and {beyond} more</p>}
     </div>
   );
 }

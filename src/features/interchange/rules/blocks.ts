@@ -32,7 +32,9 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
   const { features, rejected } = readFeatureCollection(text);
   const reader = new PropertyReader(asking);
   const swapped = outlineFaults.swapped(features, asking);
-  const parts = features.map((feature) => readFeature(feature, reader, asking, swapped)).filter((part) => part !== null);
+  const parts = features
+    .map((feature) => readFeature(feature, reader, asking, swapped))
+    .filter((part) => part !== null);
   const all = [...rejected, ...reader.rejected];
   const candidates = gather(parts, all);
   return { candidates, rejected: all, asking, notes: notesOf(features) };
@@ -44,7 +46,12 @@ interface Part {
   readonly outline: OutlineCandidate | null;
 }
 
-function readFeature(feature: LocatedFeature, reader: PropertyReader, asking: Asking, swapped: boolean): Part | null {
+function readFeature(
+  feature: LocatedFeature,
+  reader: PropertyReader,
+  asking: Asking,
+  swapped: boolean,
+): Part | null {
   const before = reader.rejected.length;
   const code = reader.text(feature, 'code') ?? '';
   if (!isSlug(code)) {
@@ -55,18 +62,39 @@ function readFeature(feature: LocatedFeature, reader: PropertyReader, asking: As
   const kind = reader.word(feature, 'kind', BLOCK_KINDS, feature.geometry ? 'other' : 'frame');
   const evidence = reader.word(feature, 'evidence', EVIDENCE, 'unconstrained');
   const inside = reader.word(feature, 'inside', ['smaller', 'larger'] as const, null);
-  const ages = ['appears_ma', 'disappears_ma', 'outline_older_ma', 'outline_younger_ma'].map((c) => reader.age(feature, c));
+  const ages = ['appears_ma', 'disappears_ma', 'outline_older_ma', 'outline_younger_ma'].map((c) =>
+    reader.age(feature, c),
+  );
   const [appears_ma, disappears_ma, outline_older_ma, outline_younger_ma] = ages as (number | null)[];
   if (appears_ma != null && disappears_ma != null && disappears_ma >= appears_ma) {
-    reader.reject(feature, 'disappears_ma', 'the block disappears before it appears', 'appears_ma is the older age, disappears_ma the younger.');
+    reader.reject(
+      feature,
+      'disappears_ma',
+      'the block disappears before it appears',
+      'appears_ma is the older age, disappears_ma the younger.',
+    );
   }
   if (outline_older_ma != null && outline_younger_ma != null && outline_younger_ma >= outline_older_ma) {
-    reader.reject(feature, 'outline_younger_ma', 'the outline ends before it begins', 'outline_older_ma is the older age.');
+    reader.reject(
+      feature,
+      'outline_younger_ma',
+      'the outline ends before it begins',
+      'outline_older_ma is the older age.',
+    );
   }
   if (kind === 'frame' && feature.geometry) {
-    reader.reject(feature, 'geometry', 'a frame has no outline', 'Set the geometry to null, or give the block another kind.', feature.geometry.type);
+    reader.reject(
+      feature,
+      'geometry',
+      'a frame has no outline',
+      'Set the geometry to null, or give the block another kind.',
+      feature.geometry.type,
+    );
   }
-  const outline = feature.geometry && reader.rejected.length === before ? readOutline(feature, inside ?? null, reader, asking, swapped) : null;
+  const outline =
+    feature.geometry && reader.rejected.length === before
+      ? readOutline(feature, inside ?? null, reader, asking, swapped)
+      : null;
   if (reader.rejected.length > before) return null;
   const fields: BlockFields = {
     code,
@@ -82,7 +110,13 @@ function readFeature(feature: LocatedFeature, reader: PropertyReader, asking: As
   return {
     line: feature.line,
     fields,
-    outline: outline && { line: feature.line, ...span, inside: outline.inside, source: null, geometry: outline.geometry },
+    outline: outline && {
+      line: feature.line,
+      ...span,
+      inside: outline.inside,
+      source: null,
+      geometry: outline.geometry,
+    },
   };
 }
 
@@ -93,18 +127,32 @@ function gather(parts: readonly Part[], rejected: RejectedRow[]): Candidate<Bloc
     const { code } = part.fields;
     const block = byCode.get(code);
     if (!block) {
-      byCode.set(code, { line: part.line, fields: part.fields, outlines: part.outline ? [part.outline] : [] });
+      byCode.set(code, {
+        line: part.line,
+        fields: part.fields,
+        outlines: part.outline ? [part.outline] : [],
+      });
       continue;
     }
-    const differs = (Object.keys(part.fields) as (keyof BlockFields)[]).find((k) => part.fields[k] !== block.fields[k]);
+    const differs = (Object.keys(part.fields) as (keyof BlockFields)[]).find(
+      (k) => part.fields[k] !== block.fields[k],
+    );
     const overlap = part.outline && block.outlines.find((o) => overlapping(o, part.outline!));
     const row = { line: part.line, column: 'code', read: code };
     if (differs) {
       const problem = `${differs} differs from line ${block.line} of the same code`;
-      rejected.push({ ...row, problem, hint: 'Several features of one code are outlines by age of one block: give them equal properties.' });
+      rejected.push({
+        ...row,
+        problem,
+        hint: 'Several features of one code are outlines by age of one block: give them equal properties.',
+      });
     } else if (!part.outline || overlap) {
       const problem = `a second outline at the same ages as line ${overlap ? overlap.line : block.line}`;
-      rejected.push({ ...row, problem, hint: 'Say when each holds in outline_older_ma and outline_younger_ma, or join them as a MultiPolygon.' });
+      rejected.push({
+        ...row,
+        problem,
+        hint: 'Say when each holds in outline_older_ma and outline_younger_ma, or join them as a MultiPolygon.',
+      });
     } else block.outlines.push(part.outline);
   }
   return [...byCode.values()].map(({ line, fields, outlines }) => ({ line, fields: { fields, outlines } }));
@@ -117,7 +165,9 @@ function overlapping(a: OutlineCandidate, b: OutlineCandidate): boolean {
 }
 
 function notesOf(features: readonly LocatedFeature[]): string[] {
-  const ignored = new Set(features.flatMap((f) => Object.keys(f.properties)).filter((key) => !KNOWN.has(key)));
+  const ignored = new Set(
+    features.flatMap((f) => Object.keys(f.properties)).filter((key) => !KNOWN.has(key)),
+  );
   const notes = ignored.size > 0 ? [`Properties not read: ${[...ignored].join(', ')}.`] : [];
   if (features.some((f) => outlineFaults.beyond180(f))) {
     notes.push('Longitudes beyond 180° are kept as they are written; they mean the same places.');

@@ -13,7 +13,11 @@ export interface ColumnMatch {
 }
 
 const UNIT = /[\s_([]+(ka|ma|rad|radians|deg|degrees|°)[\])]?$/i;
-const bare = (heading: string): string => heading.toLowerCase().replace(/[\s-]+/g, '_').replace(/[()[\]°]/g, '');
+const bare = (heading: string): string =>
+  heading
+    .toLowerCase()
+    .replace(/[\s-]+/g, '_')
+    .replace(/[()[\]°]/g, '');
 const stem = (heading: string): string => bare(heading.replace(UNIT, ''));
 
 export function matchColumns(
@@ -26,7 +30,9 @@ export function matchColumns(
   const units = new Map<string, string>();
   for (const name of table.headings) {
     const target =
-      mapping[name] ?? columns.find((c) => c === bare(name)) ?? columns.find((c) => stem(c) === stem(name) && !heading.has(c));
+      mapping[name] ??
+      columns.find((c) => c === bare(name)) ??
+      columns.find((c) => stem(c) === stem(name) && !heading.has(c));
     if (!target || !columns.includes(target) || heading.has(target)) continue;
     heading.set(target, name);
     const unit = UNIT.exec(name)?.[1];

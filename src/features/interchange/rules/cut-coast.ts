@@ -2,7 +2,16 @@
  * Cuts a coastline by an outline: the parts of the lines that lie inside. Ends are found by bisection along each edge
  * that leaves the outline, to {@link CUT_ERROR_KM}. An edge with both ends outside is taken to stay outside.
  */
-import { boundingCap, contains, dot, interpolateArc, toLatLon, toVector, type Inside, type Polygon } from '../../../kernel/sphere';
+import {
+  boundingCap,
+  contains,
+  dot,
+  interpolateArc,
+  toLatLon,
+  toVector,
+  type Inside,
+  type Polygon,
+} from '../../../kernel/sphere';
 import type { Vector3 } from '../../../kernel/rotations/types';
 
 /** Worst distance of a cut end from the outline, for edges up to 500 km. */
@@ -18,7 +27,8 @@ export const coastVectors = (lines: readonly (readonly (readonly number[])[])[])
 /** @returns the inner parts as [longitude, latitude] positions; parts of one point are dropped. */
 export function cutCoast(coast: readonly Line[], polygon: Polygon, inside: Inside): [number, number][][] {
   const cap = inside === 'smaller' ? boundingCap(polygon[0] ?? []) : null;
-  const near = (v: Vector3): boolean => cap === null || dot(v, cap.centre) >= Math.cos(Math.min(Math.PI, cap.radius + 0.05));
+  const near = (v: Vector3): boolean =>
+    cap === null || dot(v, cap.centre) >= Math.cos(Math.min(Math.PI, cap.radius + 0.05));
   const within = (v: Vector3): boolean => near(v) && contains(polygon, v, inside);
   const parts: Vector3[][] = [];
   for (const line of coast) {

@@ -12,7 +12,9 @@ export function decode(bytes: Uint8Array): Decoded {
   if (bytes[0] === 0xfe && bytes[1] === 0xff) return utf16(bytes.subarray(2), 'utf-16be');
   const marked = bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf;
   const body = marked ? bytes.subarray(3) : bytes;
-  const notes = marked ? ['The file starts with a byte-order mark, which is not part of its first heading.'] : [];
+  const notes = marked
+    ? ['The file starts with a byte-order mark, which is not part of its first heading.']
+    : [];
   try {
     return { text: new TextDecoder('utf-8', { fatal: true }).decode(body), notes };
   } catch {

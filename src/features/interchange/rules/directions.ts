@@ -49,23 +49,41 @@ export function readDirections(
   if (match.missing.length > 0) {
     const read = table.headings.join(table.delimiter);
     const problem = `the heading line has no ${match.missing.join(', ')}`;
-    rejected.unshift({ line: 1, column: match.missing[0]!, read, problem, hint: 'Name the columns as in directions.csv, or say which of yours holds what.' });
+    rejected.unshift({
+      line: 1,
+      column: match.missing[0]!,
+      read,
+      problem,
+      hint: 'Name the columns as in directions.csv, or say which of yours holds what.',
+    });
     return { candidates: [], rejected, asking, notes, table: described };
   }
   const reader = new CellReader(match, asking);
   const sites = table.rows.map((row) => readSite(row, reader, blocks)).filter((site) => site !== null);
   const places = sites.map((s) => ({ line: s.row.line, lat: s.fields.lat, lon: s.fields.lon }));
-  if (settleSwap(places, asking, 'Sites')) for (const { fields } of sites) [fields.lat, fields.lon] = [fields.lon, fields.lat];
+  if (settleSwap(places, asking, 'Sites'))
+    for (const { fields } of sites) [fields.lat, fields.lon] = [fields.lon, fields.lat];
   const candidates: Candidate<DirectionFields>[] = [];
   for (const { row, fields } of sites) {
-    if (Math.abs(fields.lat) > 90) reader.reject(row, 'lat', 'latitude beyond 90°', 'Moved decimal point, or latitude and longitude exchanged?');
-    else if (Math.abs(fields.lon) > 360) reader.reject(row, 'lon', 'longitude beyond 360°', 'Moved decimal point?');
+    if (Math.abs(fields.lat) > 90)
+      reader.reject(
+        row,
+        'lat',
+        'latitude beyond 90°',
+        'Moved decimal point, or latitude and longitude exchanged?',
+      );
+    else if (Math.abs(fields.lon) > 360)
+      reader.reject(row, 'lon', 'longitude beyond 360°', 'Moved decimal point?');
     else candidates.push({ line: row.line, fields });
   }
   return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes, table: described };
 }
 
-function readSite(row: TableRow, reader: CellReader, blocks: ReadonlySet<string>): { row: TableRow; fields: DirectionFields } | null {
+function readSite(
+  row: TableRow,
+  reader: CellReader,
+  blocks: ReadonlySet<string>,
+): { row: TableRow; fields: DirectionFields } | null {
   const before = reader.rejected.length;
   const site = reader.text(row, 'site');
   if (site === '') reader.reject(row, 'site', 'blank', 'Name the site.');
@@ -73,7 +91,9 @@ function readSite(row: TableRow, reader: CellReader, blocks: ReadonlySet<string>
   const lon = reader.required(row, 'lon');
   const block = reader.optionalText(row, 'block');
   if (block !== null && !blocks.has(block)) {
-    const hint = blocks.has(toSlug(block)) ? `Write ${toSlug(block)}?` : 'Import the block first, or leave the cell blank.';
+    const hint = blocks.has(toSlug(block))
+      ? `Write ${toSlug(block)}?`
+      : 'Import the block first, or leave the cell blank.';
     reader.reject(row, 'block', 'not a block of the project', hint);
   }
   const measures = {} as Record<Measure, number | null>;
@@ -81,17 +101,33 @@ function readSite(row: TableRow, reader: CellReader, blocks: ReadonlySet<string>
     const value = reader.number(row, column);
     const [least, most] = RANGES[column];
     if (value != null && (value < least || value > most)) {
-      reader.reject(row, column, `outside ${least === Number.MIN_VALUE ? 'above 0' : least} to ${most}`, 'Moved decimal point, or another unit?');
+      reader.reject(
+        row,
+        column,
+        `outside ${least === Number.MIN_VALUE ? 'above 0' : least} to ${most}`,
+        'Moved decimal point, or another unit?',
+      );
     }
     measures[column] = value ?? null;
   }
-  if (measures.n !== null && !Number.isInteger(measures.n)) reader.reject(row, 'n', 'not a whole number', 'n counts samples or sites.');
+  if (measures.n !== null && !Number.isInteger(measures.n))
+    reader.reject(row, 'n', 'not a whole number', 'n counts samples or sites.');
   const { age_min_ma, age_max_ma } = measures;
   if (age_min_ma !== null && age_max_ma !== null && age_min_ma > age_max_ma) {
-    reader.reject(row, 'age_min_ma', 'the youngest age is older than the oldest', 'age_min_ma is the younger age.');
+    reader.reject(
+      row,
+      'age_min_ma',
+      'the youngest age is older than the oldest',
+      'age_min_ma is the younger age.',
+    );
   }
   const polarity = reader.word(row, 'polarity', POLARITIES, null);
-  if (reader.rejected.length > before || lat === undefined || lon === undefined || polarity === undefined) return null;
-  const texts = { rock: reader.optionalText(row, 'rock'), source: reader.optionalText(row, 'source'), note: reader.optionalText(row, 'note') };
+  if (reader.rejected.length > before || lat === undefined || lon === undefined || polarity === undefined)
+    return null;
+  const texts = {
+    rock: reader.optionalText(row, 'rock'),
+    source: reader.optionalText(row, 'source'),
+    note: reader.optionalText(row, 'note'),
+  };
   return { row, fields: { site, lat, lon, block, ...measures, polarity, ...texts } };
 }

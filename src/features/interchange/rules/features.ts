@@ -17,7 +17,11 @@ const SIDES = ['left', 'right', 'north', 'south', 'east', 'west'] as const;
 const SHAPES = ['Point', 'MultiPoint', 'LineString', 'MultiLineString', 'Polygon', 'MultiPolygon'] as const;
 
 /** @param blocks codes of the project's blocks: a feature is carried by one of them. */
-export function readFeatures(text: string, blocks: ReadonlySet<string>, answers: Answers = {}): FileReading<FeatureCandidate> {
+export function readFeatures(
+  text: string,
+  blocks: ReadonlySet<string>,
+  answers: Answers = {},
+): FileReading<FeatureCandidate> {
   const asking = new Asking(answers);
   const { features, rejected } = readFeatureCollection(text);
   const reader = new PropertyReader(asking);
@@ -27,25 +31,50 @@ export function readFeatures(text: string, blocks: ReadonlySet<string>, answers:
   return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes: [] };
 }
 
-function readOne(feature: LocatedFeature, reader: PropertyReader, blocks: ReadonlySet<string>): FeatureCandidate | null {
+function readOne(
+  feature: LocatedFeature,
+  reader: PropertyReader,
+  blocks: ReadonlySet<string>,
+): FeatureCandidate | null {
   const before = reader.rejected.length;
   const block = reader.text(feature, 'block') ?? '';
   if (!isSlug(block) || !blocks.has(block)) {
-    const hint = blocks.has(toSlug(block)) ? `Write ${toSlug(block)}?` : 'Import the block first, or correct the code.';
+    const hint = blocks.has(toSlug(block))
+      ? `Write ${toSlug(block)}?`
+      : 'Import the block first, or correct the code.';
     reader.reject(feature, 'block', block === '' ? 'no block' : 'not a block of the project', hint);
   }
   const kind = reader.word(feature, 'kind', FEATURE_KINDS, null);
   if (kind === null) reader.reject(feature, 'kind', 'no kind', `Write one of: ${FEATURE_KINDS.join(', ')}.`);
   const side = reader.word(feature, 'side', SIDES, null);
-  const [age_ma, appears_ma, disappears_ma] = ['age_ma', 'appears_ma', 'disappears_ma'].map((c) => reader.age(feature, c));
+  const [age_ma, appears_ma, disappears_ma] = ['age_ma', 'appears_ma', 'disappears_ma'].map((c) =>
+    reader.age(feature, c),
+  );
   if (appears_ma != null && disappears_ma != null && disappears_ma >= appears_ma) {
-    reader.reject(feature, 'disappears_ma', 'it disappears before it appears', 'appears_ma is the older age, disappears_ma the younger.');
+    reader.reject(
+      feature,
+      'disappears_ma',
+      'it disappears before it appears',
+      'appears_ma is the older age, disappears_ma the younger.',
+    );
   }
   const { geometry } = feature;
   if (!geometry || !SHAPES.some((shape) => shape === geometry.type)) {
-    reader.reject(feature, 'geometry', 'no points or lines', 'Give a point, a line or a multi-part of them.', geometry?.type ?? 'null');
+    reader.reject(
+      feature,
+      'geometry',
+      'no points or lines',
+      'Give a point, a line or a multi-part of them.',
+      geometry?.type ?? 'null',
+    );
   } else if (!inRange((geometry as { coordinates: unknown }).coordinates)) {
-    reader.reject(feature, 'geometry', 'a position off the globe', 'Positions are [longitude, latitude]: latitude within 90°.', geometry.type);
+    reader.reject(
+      feature,
+      'geometry',
+      'a position off the globe',
+      'Positions are [longitude, latitude]: latitude within 90°.',
+      geometry.type,
+    );
   }
   if (reader.rejected.length > before || !kind || !geometry) return null;
   const fields = {

@@ -27,12 +27,22 @@ export function readFeatureCollection(text: string): GeoJsonReading {
     const position = Number(/position (\d+)/.exec(String(error))?.[1] ?? NaN);
     const line = Number.isFinite(position) ? lineAt(text, position) : null;
     const read = Number.isFinite(position) ? text.slice(Math.max(0, position - 20), position + 20) : '';
-    return wrongFile(line, read, 'not JSON', 'A comma too many or a missing bracket? Save the file as GeoJSON again.');
+    return wrongFile(
+      line,
+      read,
+      'not JSON',
+      'A comma too many or a missing bracket? Save the file as GeoJSON again.',
+    );
   }
   const collection = data as { type?: unknown; features?: unknown };
   if (collection?.type !== 'FeatureCollection' || !Array.isArray(collection.features)) {
     const read = String(collection?.type ?? typeof data);
-    return wrongFile(1, read, 'not a FeatureCollection', 'Wrap the features as {"type":"FeatureCollection","features":[…]}.');
+    return wrongFile(
+      1,
+      read,
+      'not a FeatureCollection',
+      'Wrap the features as {"type":"FeatureCollection","features":[…]}.',
+    );
   }
   const lines = featureLines(text);
   const rejected: RejectedRow[] = [];
@@ -42,7 +52,13 @@ export function readFeatureCollection(text: string): GeoJsonReading {
     const f = feature as { type?: unknown; properties?: unknown; geometry?: unknown } | null;
     if (f?.type !== 'Feature') {
       const hint = 'Each entry has "type":"Feature", properties and a geometry.';
-      rejected.push({ line, column: null, read: String(f?.type), problem: `entry ${index + 1} is not a Feature`, hint });
+      rejected.push({
+        line,
+        column: null,
+        read: String(f?.type),
+        problem: `entry ${index + 1} is not a Feature`,
+        hint,
+      });
       return;
     }
     features.push({

@@ -17,7 +17,10 @@ const MINUTES =
 
 /** @param cell text of one cell; blank means unknown. */
 export function readNumber(cell: string): Reading {
-  const text = cell.replace(MINUS, '-').replace(/[\u00A0\u2009\u202F]/g, ' ').trim();
+  const text = cell
+    .replace(MINUS, '-')
+    .replace(/[\u00A0\u2009\u202F]/g, ' ')
+    .trim();
   if (text === '') return { ok: true, value: null, form: 'plain' };
   if (PLAIN.test(text)) return finite(Number(text), 'plain');
   if (COMMA.test(text)) return finite(Number(text.replace(',', '.')), 'decimal comma');
@@ -40,7 +43,11 @@ function degreesMinutes(match: RegExpExecArray): Reading {
   const m = Number(minutes!.replace(',', '.'));
   const s = Number(seconds.replace(',', '.'));
   if (m >= 60 || s >= 60) {
-    return { ok: false, problem: 'minutes or seconds of 60 or more', hint: 'Write the angle as decimal degrees.' };
+    return {
+      ok: false,
+      problem: 'minutes or seconds of 60 or more',
+      hint: 'Write the angle as decimal degrees.',
+    };
   }
   const size = Number(degrees) + m / 60 + s / 3600;
   const negative = sign === '-' || /[SW]/i.test(hemisphere);

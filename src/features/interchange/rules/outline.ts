@@ -40,7 +40,13 @@ export function readOutline(
     }
   }
   if (polygons.length === 0) {
-    reader.reject(feature, 'geometry', 'no rings', 'Give the outline at least one ring, or set the geometry to null.', read.type);
+    reader.reject(
+      feature,
+      'geometry',
+      'no rings',
+      'Give the outline at least one ring, or set the geometry to null.',
+      read.type,
+    );
     return null;
   }
   return { geometry: read, inside: inside ?? askInside(feature, read, asking) };
@@ -50,23 +56,35 @@ export function readOutline(
  * By ring direction alone a clockwise outer ring holds the rest of the globe (RFC 7946, 3.1.6, asks for
  * anticlockwise). The project reads the smaller side unless told otherwise, so the file is asked which it means.
  */
-function askInside(feature: LocatedFeature, geometry: Polygon | MultiPolygon, asking: Asking): 'smaller' | 'larger' {
-  const outers = geometry.type === 'Polygon' ? [geometry.coordinates[0]] : geometry.coordinates.map((p) => p[0]);
+function askInside(
+  feature: LocatedFeature,
+  geometry: Polygon | MultiPolygon,
+  asking: Asking,
+): 'smaller' | 'larger' {
+  const outers =
+    geometry.type === 'Polygon' ? [geometry.coordinates[0]] : geometry.coordinates.map((p) => p[0]);
   const reversed = outers.map((ring) => ringArea(readRing(ring ?? []))).find((signed) => signed < 0);
   if (reversed === undefined) return 'smaller';
   const percent = (100 * (1 + reversed / SPHERE)).toFixed(1);
   const code = String(feature.properties['code'] ?? `entry ${feature.index + 1}`);
   const ask =
     'Rings run clockwise, so that by their direction they cover most of the globe. Which side of them is the block?';
-  const answer = asking.ask('ring_winding', ask, [SMALLER, LARGER], `line ${feature.line}: ${code}, ${percent} % of the globe`);
+  const answer = asking.ask(
+    'ring_winding',
+    ask,
+    [SMALLER, LARGER],
+    `line ${feature.line}: ${code}, ${percent} % of the globe`,
+  );
   return answer === LARGER ? 'larger' : 'smaller';
 }
 
 function exchange<T extends Polygon | MultiPolygon>(geometry: T): T {
   const turn = (ring: Position[]): Position[] => ring.map(([x, y, ...more]) => [y!, x!, ...more]);
   const coordinates =
-    geometry.type === 'Polygon' ? geometry.coordinates.map(turn) : geometry.coordinates.map((p) => p.map(turn));
-  return { ...geometry, coordinates } as T;
+    geometry.type === 'Polygon'
+      ? geometry.coordinates.map(turn)
+      : geometry.coordinates.map((p) => p.map(turn));
+  return { ...geometry, coordinates };
 }
 
 function positions(geometry: Geometry | null): Position[] {
@@ -79,17 +97,25 @@ function positions(geometry: Geometry | null): Position[] {
 }
 
 export const outlineFaults = {
-  beyond180: (feature: LocatedFeature): boolean => positions(feature.geometry).some((p) => Math.abs(p[0]!) > 180),
+  beyond180: (feature: LocatedFeature): boolean =>
+    positions(feature.geometry).some((p) => Math.abs(p[0]!) > 180),
 
   /** Asks where positions have latitudes beyond 90° and every position would be valid the other way round. */
   swapped(features: readonly LocatedFeature[], asking: Asking): boolean {
     const all = features.flatMap((f) => positions(f.geometry).map((p) => ({ line: f.line, p })));
     const beyond = all.filter(({ p }) => Math.abs(p[1]!) > 90);
-    if (beyond.length < 2 || !all.every(({ p }) => Math.abs(p[0]!) <= 90 && Math.abs(p[1]!) <= 360)) return false;
-    const ask = 'Latitudes go beyond 90°, and all positions would be valid the other way round. Are latitude and longitude exchanged?';
+    if (beyond.length < 2 || !all.every(({ p }) => Math.abs(p[0]!) <= 90 && Math.abs(p[1]!) <= 360))
+      return false;
+    const ask =
+      'Latitudes go beyond 90°, and all positions would be valid the other way round. Are latitude and longitude exchanged?';
     let answer: string | null = null;
     for (const { line, p } of beyond.slice(0, 5)) {
-      answer = asking.ask('swapped_lat_lon', ask, ['exchange them', 'keep them'], `line ${line}: [${p[0]}, ${p[1]}]`);
+      answer = asking.ask(
+        'swapped_lat_lon',
+        ask,
+        ['exchange them', 'keep them'],
+        `line ${line}: [${p[0]}, ${p[1]}]`,
+      );
     }
     return answer !== 'keep them';
   },

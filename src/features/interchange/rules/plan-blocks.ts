@@ -20,7 +20,13 @@ export function planBlocks(reading: BlocksReading, existing: readonly Block[]): 
     const outlines = hashOutlines(candidate, rejected);
     if (!outlines) continue;
     const there = byCode.get(candidate.fields.code);
-    const change = !there ? 'new' : same(candidate, outlines, there) ? 'unchanged' : keep(reading.asking, line, there) ? 'kept' : 'replaces';
+    const change = !there
+      ? 'new'
+      : same(candidate, outlines, there)
+        ? 'unchanged'
+        : keep(reading.asking, line, there)
+          ? 'kept'
+          : 'replaces';
     planner.show(line, change, cells(candidate, outlines));
     if (change === 'new') planner.create('blocks', { ...candidate.fields });
     if (change === 'replaces') {
@@ -28,7 +34,8 @@ export function planBlocks(reading: BlocksReading, existing: readonly Block[]): 
       planner.update('blocks', there!.id, fields);
       for (const outline of there!.outlines) planner.remove('outlines', outline.id);
     }
-    if (change === 'new' || change === 'replaces') for (const outline of outlines) createOutline(planner, candidate, outline);
+    if (change === 'new' || change === 'replaces')
+      for (const outline of outlines) createOutline(planner, candidate, outline);
   }
   return planner.plan(rejected);
 }
@@ -38,7 +45,13 @@ function hashOutlines(candidate: BlockCandidate, rejected: RejectedRow[]): Hashe
   for (const outline of candidate.outlines) {
     const checked = checkGeometry(outline.geometry);
     if (isFieldError(checked)) {
-      rejected.push({ line: outline.line, column: 'geometry', read: checked.read ?? '', problem: checked.problem, hint: checked.hint ?? 'Save the outline again.' });
+      rejected.push({
+        line: outline.line,
+        column: 'geometry',
+        read: checked.read ?? '',
+        problem: checked.problem,
+        hint: checked.hint ?? 'Save the outline again.',
+      });
       return null;
     }
     hashed.push({ ...outline, sha256: checked.sha256, vertices: checked.vertices });
@@ -48,11 +61,19 @@ function hashOutlines(candidate: BlockCandidate, rejected: RejectedRow[]): Hashe
 
 function createOutline(planner: Planner, candidate: BlockCandidate, outline: Hashed): void {
   const { outline_older_ma, outline_younger_ma, inside, source, geometry } = outline;
-  planner.create('outlines', { block: candidate.fields.code, outline_older_ma, outline_younger_ma, inside, source, geometry });
+  planner.create('outlines', {
+    block: candidate.fields.code,
+    outline_older_ma,
+    outline_younger_ma,
+    inside,
+    source,
+    geometry,
+  });
 }
 
-const outlineKey = (o: Pick<Hashed, 'sha256' | 'inside' | 'outline_older_ma' | 'outline_younger_ma'>): string =>
-  [o.sha256, o.inside, o.outline_older_ma, o.outline_younger_ma].join(' ');
+const outlineKey = (
+  o: Pick<Hashed, 'sha256' | 'inside' | 'outline_older_ma' | 'outline_younger_ma'>,
+): string => [o.sha256, o.inside, o.outline_older_ma, o.outline_younger_ma].join(' ');
 
 function same(candidate: BlockCandidate, outlines: readonly Hashed[], block: Block): boolean {
   const [a, b] = [outlines, block.outlines].map((list) => list.map(outlineKey).sort().join('\n'));
@@ -64,8 +85,21 @@ function keep(asking: Asking, line: number | null, block: Block): boolean {
   return asking.ask(id, ask, choices, `line ${line}: ${block.code}`) === DRAFTS;
 }
 
-function cells({ fields }: BlockCandidate, outlines: readonly Hashed[]): Record<string, string | number | null> {
+function cells(
+  { fields }: BlockCandidate,
+  outlines: readonly Hashed[],
+): Record<string, string | number | null> {
   const { code, name, kind, appears_ma, disappears_ma, evidence, source } = fields;
   const vertices = outlines.reduce((sum, o) => sum + o.vertices, 0);
-  return { code, name, kind, outlines: outlines.length, vertices, appears_ma, disappears_ma, evidence, source };
+  return {
+    code,
+    name,
+    kind,
+    outlines: outlines.length,
+    vertices,
+    appears_ma,
+    disappears_ma,
+    evidence,
+    source,
+  };
 }

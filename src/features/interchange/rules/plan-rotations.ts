@@ -7,9 +7,17 @@ import type { Candidate, FileReading } from './rotations';
 export function planRotations(reading: FileReading<RotationFields>, draft: DraftForRotations): ImportPlan {
   const resolved = resolveRotations(reading.candidates, draft, reading.asking);
   const planner = new Planner();
-  const blank = { appears_ma: null, disappears_ma: null, evidence: 'unconstrained', source: null, note: null };
-  for (const code of resolved.addFrames) planner.create('blocks', { code, name: nameOf(code), kind: 'frame', ...blank });
-  for (const code of resolved.addBlocks) planner.create('blocks', { code, name: nameOf(code), kind: 'other', ...blank });
+  const blank = {
+    appears_ma: null,
+    disappears_ma: null,
+    evidence: 'unconstrained',
+    source: null,
+    note: null,
+  };
+  for (const code of resolved.addFrames)
+    planner.create('blocks', { code, name: nameOf(code), kind: 'frame', ...blank });
+  for (const code of resolved.addBlocks)
+    planner.create('blocks', { code, name: nameOf(code), kind: 'other', ...blank });
   const replaced = new Map(resolved.replace.map((candidate) => [candidate.line, candidate.id]));
   const unchanged = new Set(resolved.unchanged.map((candidate) => candidate.line));
   const kept = new Set(resolved.kept.map((candidate) => candidate.line));
@@ -28,7 +36,18 @@ export function planRotations(reading: FileReading<RotationFields>, draft: Draft
 const nameOf = (code: string): string => code.charAt(0).toUpperCase() + code.slice(1).replaceAll('-', ' ');
 
 function cells({ fields }: Candidate<RotationFields>): Record<string, string | number | null> {
-  const { block, relative_to, age_ma, pole_lat, pole_lon, angle_deg, chron, evidence, covariance, source } = fields;
-  return { block, relative_to, age_ma, pole_lat, pole_lon, angle_deg, chron, evidence, covariance: covariance ? 'given' : null, source };
+  const { block, relative_to, age_ma, pole_lat, pole_lon, angle_deg, chron, evidence, covariance, source } =
+    fields;
+  return {
+    block,
+    relative_to,
+    age_ma,
+    pole_lat,
+    pole_lon,
+    angle_deg,
+    chron,
+    evidence,
+    covariance: covariance ? 'given' : null,
+    source,
+  };
 }
-

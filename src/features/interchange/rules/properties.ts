@@ -11,14 +11,15 @@ export class PropertyReader {
 
   reject(feature: LocatedFeature, column: string, problem: string, hint: string, read?: string): void {
     const value = feature.properties[column];
-    const text = read ?? (value === undefined ? '' : typeof value === 'string' ? value : JSON.stringify(value));
+    const text =
+      read ?? (value === undefined ? '' : typeof value === 'string' ? value : JSON.stringify(value));
     this.rejected.push({ line: feature.line, column, read: text.slice(0, 200), problem, hint });
   }
 
   text(feature: LocatedFeature, column: string): string | null {
     const value = feature.properties[column];
     if (value === null || value === undefined || value === '') return null;
-    return typeof value === 'string' ? value.trim() : String(value as number | boolean);
+    return typeof value === 'string' ? value.trim() : String(value);
   }
 
   /** A number or its text; null where absent or blank; undefined where rejected. */
@@ -47,13 +48,25 @@ export class PropertyReader {
   age(feature: LocatedFeature, column: string): number | null | undefined {
     const value = this.number(feature, column);
     if (value == null) return value;
-    if (value < 0) this.reject(feature, column, 'a negative age', 'Ages are Ma before the present: 0 is today, older is larger.');
-    else if (value > 4600) this.reject(feature, column, 'older than the Earth', 'Give the age in Ma; are these ka?');
+    if (value < 0)
+      this.reject(
+        feature,
+        column,
+        'a negative age',
+        'Ages are Ma before the present: 0 is today, older is larger.',
+      );
+    else if (value > 4600)
+      this.reject(feature, column, 'older than the Earth', 'Give the age in Ma; are these ka?');
     else return value;
     return undefined;
   }
 
-  word<T extends string, B extends T | null>(feature: LocatedFeature, column: string, words: readonly T[], blank: B): T | B | undefined {
+  word<T extends string, B extends T | null>(
+    feature: LocatedFeature,
+    column: string,
+    words: readonly T[],
+    blank: B,
+  ): T | B | undefined {
     const read = this.text(feature, column);
     if (read === null) return blank;
     const found = words.find((word) => word === read.toLowerCase());

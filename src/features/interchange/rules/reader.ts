@@ -41,7 +41,13 @@ export class CellReader {
   }
 
   reject(row: TableRow, column: string, problem: string, hint: string, read = this.text(row, column)): void {
-    this.rejected.push({ line: row.line, column: this.match.heading.get(column) ?? column, read, problem, hint });
+    this.rejected.push({
+      line: row.line,
+      column: this.match.heading.get(column) ?? column,
+      read,
+      problem,
+      hint,
+    });
   }
 
   /** @returns the number, null where blank, undefined where the row is rejected. */

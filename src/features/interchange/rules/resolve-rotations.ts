@@ -55,7 +55,12 @@ export function resolveRotations(
   });
 
   const looped = withoutLoops(present, draft, [...addBlocks], [...addFrames], rejected);
-  return { ...against(looped, draft.rotations, asking), rejected, addFrames: [...addFrames], addBlocks: [...addBlocks] };
+  return {
+    ...against(looped, draft.rotations, asking),
+    rejected,
+    addFrames: [...addFrames],
+    addBlocks: [...addBlocks],
+  };
 }
 
 function askMissing(
@@ -70,7 +75,11 @@ function askMissing(
   return asking.ask(id, ask, choices, `line ${candidate.line}: ${code}`);
 }
 
-const unknownCode = (candidate: Candidate<RotationFields>, code: string, asReference: boolean): RejectedRow => ({
+const unknownCode = (
+  candidate: Candidate<RotationFields>,
+  code: string,
+  asReference: boolean,
+): RejectedRow => ({
   line: candidate.line,
   column: asReference ? 'relative_to' : 'block',
   read: code,
@@ -101,7 +110,9 @@ function withoutLoops(
   return candidates.filter(({ line, fields }) => {
     const loop = loops.find(
       (l) =>
-        l.loop.some((code, i) => code === fields.block && l.loop[(i + 1) % l.loop.length] === fields.relative_to) &&
+        l.loop.some(
+          (code, i) => code === fields.block && l.loop[(i + 1) % l.loop.length] === fields.relative_to,
+        ) &&
         fields.age_ma >= l.younger_ma &&
         fields.age_ma <= l.older_ma,
     );
@@ -117,7 +128,11 @@ function withoutLoops(
   });
 }
 
-function against(candidates: readonly Candidate<RotationFields>[], existing: readonly Rotation[], asking: Asking) {
+function against(
+  candidates: readonly Candidate<RotationFields>[],
+  existing: readonly Rotation[],
+  asking: Asking,
+) {
   const byKey = new Map(existing.map((row) => [rotationKey(row), row]));
   const create: Candidate<RotationFields>[] = [];
   const replace: (Candidate<RotationFields> & { id: string })[] = [];
@@ -128,9 +143,11 @@ function against(candidates: readonly Candidate<RotationFields>[], existing: rea
     if (!row) create.push(candidate);
     else if (sameFields(candidate.fields, row)) unchanged.push(candidate);
     else {
-      const ask = 'Rows of the same block, reference and age stand in the draft with other values. Which are to stay?';
+      const ask =
+        'Rows of the same block, reference and age stand in the draft with other values. Which are to stay?';
       const where = `line ${candidate.line}: ${row.block} in ${row.relative_to} at ${row.age_ma} Ma`;
-      if (asking.ask('existing_rows', ask, ["the file's", "the draft's"], where) === "the draft's") kept.push(candidate);
+      if (asking.ask('existing_rows', ask, ["the file's", "the draft's"], where) === "the draft's")
+        kept.push(candidate);
       else replace.push({ ...candidate, id: row.id });
     }
   }
@@ -140,5 +157,7 @@ function against(candidates: readonly Candidate<RotationFields>[], existing: rea
 /** Compares every field of a file's row with the draft's. */
 export function sameFields(fields: object, row: object): boolean {
   const other = row as Record<string, unknown>;
-  return Object.entries(fields).every(([key, value]) => JSON.stringify(value) === JSON.stringify(other[key] ?? null));
+  return Object.entries(fields).every(
+    ([key, value]) => JSON.stringify(value) === JSON.stringify(other[key] ?? null),
+  );
 }

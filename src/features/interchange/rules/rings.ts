@@ -16,23 +16,44 @@ export interface RingFault {
 const point = (p: readonly number[]): string => `[${p[0]}, ${p[1]}]`;
 
 export function ringFault(ring: unknown): RingFault | null {
-  if (!Array.isArray(ring)) return { read: String(ring), problem: 'a ring is not a list of positions', hint: 'Save the file as GeoJSON again.' };
+  if (!Array.isArray(ring))
+    return {
+      read: String(ring),
+      problem: 'a ring is not a list of positions',
+      hint: 'Save the file as GeoJSON again.',
+    };
   const bad = ring.findIndex((p) => !isPosition(p));
   if (bad >= 0) {
-    return { read: JSON.stringify(ring[bad]), problem: `position ${bad + 1} is not two numbers`, hint: 'Write [longitude, latitude].' };
+    return {
+      read: JSON.stringify(ring[bad]),
+      problem: `position ${bad + 1} is not two numbers`,
+      hint: 'Write [longitude, latitude].',
+    };
   }
   const positions = ring as Ring;
   const first = positions[0];
   const last = positions[positions.length - 1];
   if (!first || !last || positions.length < 4) {
-    return { read: `${positions.length} positions`, problem: 'a ring needs four positions or more', hint: 'Give at least three corners and repeat the first.' };
+    return {
+      read: `${positions.length} positions`,
+      problem: 'a ring needs four positions or more',
+      hint: 'Give at least three corners and repeat the first.',
+    };
   }
   const beyond = positions.find((p) => Math.abs(p[1]!) > 90 || Math.abs(p[0]!) > 540);
   if (beyond) {
-    return { read: point(beyond), problem: 'a position off the globe', hint: 'Positions are [longitude, latitude]: latitude within 90°.' };
+    return {
+      read: point(beyond),
+      problem: 'a position off the globe',
+      hint: 'Positions are [longitude, latitude]: latitude within 90°.',
+    };
   }
   if (!same(first, last)) {
-    return { read: `${point(first)} … ${point(last)}`, problem: 'the ring is not closed', hint: 'Repeat the first position at the end.' };
+    return {
+      read: `${point(first)} … ${point(last)}`,
+      problem: 'the ring is not closed',
+      hint: 'Repeat the first position at the end.',
+    };
   }
   const crossing = selfCrossing(positions);
   if (!crossing) return null;

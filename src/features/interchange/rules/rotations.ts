@@ -29,12 +29,23 @@ export interface FileReading<T> {
   readonly asking: Asking;
   readonly notes: string[];
   /** The heading line of a table and the columns read from it; absent for GeoJSON. */
-  readonly table?: { readonly headings: readonly string[]; readonly columns: readonly string[]; readonly required: readonly string[] };
+  readonly table?: {
+    readonly headings: readonly string[];
+    readonly columns: readonly string[];
+    readonly required: readonly string[];
+  };
 }
 
-type Draft = PoleValues & { readonly row: TableRow; readonly rest: Omit<RotationFields, 'age_ma' | 'pole_lat' | 'pole_lon' | 'angle_deg'> };
+type Draft = PoleValues & {
+  readonly row: TableRow;
+  readonly rest: Omit<RotationFields, 'age_ma' | 'pole_lat' | 'pole_lon' | 'angle_deg'>;
+};
 
-export function readRotations(text: string, answers: Answers = {}, mapping: ColumnMapping = {}): FileReading<RotationFields> {
+export function readRotations(
+  text: string,
+  answers: Answers = {},
+  mapping: ColumnMapping = {},
+): FileReading<RotationFields> {
   const table = readTable(text);
   const match = matchColumns(table, READ_COLUMNS, REQUIRED, mapping);
   const asking = new Asking(answers);
@@ -58,8 +69,10 @@ export function readRotations(text: string, answers: Answers = {}, mapping: Colu
   settleAges(drafts, match.units.get('age_ma'), asking);
   settleAngles(drafts, match.units, asking);
   const poles = drafts.map((d) => ({ line: d.line, lat: d.pole_lat, lon: d.pole_lon }));
-  if (settleSwap(poles, asking, 'Poles')) for (const d of drafts) [d.pole_lat, d.pole_lon] = [d.pole_lon, d.pole_lat];
-  if (drafts.some((d) => Math.abs(d.pole_lon) > 180)) notes.push('Pole longitudes beyond 180° are kept as they are written.');
+  if (settleSwap(poles, asking, 'Poles'))
+    for (const d of drafts) [d.pole_lat, d.pole_lon] = [d.pole_lon, d.pole_lat];
+  if (drafts.some((d) => Math.abs(d.pole_lon) > 180))
+    notes.push('Pole longitudes beyond 180° are kept as they are written.');
   const candidates = drafts.filter((draft) => inRange(draft, reader)).map(toCandidate);
   rejected.push(...reader.rejected);
   return { candidates: withoutDuplicates(candidates, rejected), rejected, asking, notes, table: described };
@@ -70,7 +83,12 @@ function readDraft(row: TableRow, reader: CellReader): Draft | null {
   const block = readCode(row, 'block', reader);
   const relative_to = readCode(row, 'relative_to', reader);
   if (block !== '' && block === relative_to) {
-    reader.reject(row, 'relative_to', 'a block cannot be its own reference', 'Name the block or frame it moves against.');
+    reader.reject(
+      row,
+      'relative_to',
+      'a block cannot be its own reference',
+      'Name the block or frame it moves against.',
+    );
   }
   const age_ma = reader.required(row, 'age_ma');
   const pole_lat = reader.required(row, 'pole_lat');
@@ -103,24 +121,40 @@ function readCode(row: TableRow, column: string, reader: CellReader): string {
   if (isSlug(code)) return code;
   const nearest = toSlug(code);
   const hint = nearest ? `Write ${nearest}?` : 'Write the code of a block or frame.';
-  reader.reject(row, column, code === '' ? 'blank' : 'not a code: lower-case letters, digits and hyphens', hint);
+  reader.reject(
+    row,
+    column,
+    code === '' ? 'blank' : 'not a code: lower-case letters, digits and hyphens',
+    hint,
+  );
   return '';
 }
 
 const XYZ = ['cov_xx', 'cov_xy', 'cov_xz', 'cov_yy', 'cov_yz', 'cov_zz'] as const;
 
-function readCovariance(row: TableRow, reader: CellReader): { covariance: Covariance | null; cov_dof: number | null } {
+function readCovariance(
+  row: TableRow,
+  reader: CellReader,
+): { covariance: Covariance | null; cov_dof: number | null } {
   const cov_dof = reader.number(row, 'cov_dof') ?? null;
-  if (cov_dof !== null && cov_dof <= 0) reader.reject(row, 'cov_dof', 'not above zero', 'Leave it blank where κ̂ was known.');
+  if (cov_dof !== null && cov_dof <= 0)
+    reader.reject(row, 'cov_dof', 'not above zero', 'Leave it blank where κ̂ was known.');
   const entries = XYZ.map((column) => reader.number(row, column) ?? null);
   const published = PUBLISHED_FORM.map((column) => reader.number(row, column) ?? null);
   const cap = reader.number(row, 'cap95_deg') ?? null;
   const given = [entries.some(known), published.some(known), cap !== null].filter(Boolean).length;
-  if (given > 1) reader.reject(row, 'cov_xx', 'the covariance is given twice', 'Keep one of its forms and blank the others.');
+  if (given > 1)
+    reader.reject(
+      row,
+      'cov_xx',
+      'the covariance is given twice',
+      'Keep one of its forms and blank the others.',
+    );
   if (given !== 1) return { covariance: null, cov_dof };
   let covariance: Covariance | null = null;
   if (cap !== null) {
-    if (cap < 0 || cap > 180) reader.reject(row, 'cap95_deg', 'outside 0–180°', 'Give the radius of the 95 % cap in degrees.');
+    if (cap < 0 || cap > 180)
+      reader.reject(row, 'cap95_deg', 'outside 0–180°', 'Give the radius of the 95 % cap in degrees.');
     else covariance = cap95ToCovariance(cap);
   } else if (published.some(known)) {
     covariance = readPublished(row, reader, published);
@@ -128,21 +162,46 @@ function readCovariance(row: TableRow, reader: CellReader): { covariance: Covari
     covariance = entries as unknown as Covariance;
   } else {
     const missing = XYZ.filter((_, i) => entries[i] === null).join(', ');
-    reader.reject(row, 'cov_xx', `the covariance lacks ${missing}`, 'Give all six entries in rad², or none.', '');
+    reader.reject(
+      row,
+      'cov_xx',
+      `the covariance lacks ${missing}`,
+      'Give all six entries in rad², or none.',
+      '',
+    );
   }
   const wrong = covariance && checkCovariance(covariance);
-  if (wrong) reader.reject(row, 'cov_xx', wrong.problem, 'A covariance is symmetric with no negative variance in any direction.');
+  if (wrong)
+    reader.reject(
+      row,
+      'cov_xx',
+      wrong.problem,
+      'A covariance is symmetric with no negative variance in any direction.',
+    );
   return { covariance: wrong ? null : covariance, cov_dof };
 }
 
 const known = (value: number | null): value is number => value !== null;
 
-function readPublished(row: TableRow, reader: CellReader, values: readonly (number | null)[]): Covariance | null {
+function readPublished(
+  row: TableRow,
+  reader: CellReader,
+  values: readonly (number | null)[],
+): Covariance | null {
   if (!values.every(known)) {
     reader.reject(row, 'kappa', 'the published form needs kappa and a–g', 'Give all eight numbers, or none.');
     return null;
   }
-  const [kappa, a, b, c, d, e, f, g] = values as [number, number, number, number, number, number, number, number];
+  const [kappa, a, b, c, d, e, f, g] = values as [
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+    number,
+  ];
   if (kappa <= 0) {
     reader.reject(row, 'kappa', 'κ̂ is not above zero', 'Give κ̂ as published.');
     return null;
@@ -153,13 +212,26 @@ function readPublished(row: TableRow, reader: CellReader, values: readonly (numb
 function inRange(draft: Draft, reader: CellReader): boolean {
   const before = reader.rejected.length;
   const { row } = draft;
-  if (draft.age_ma < 0) reader.reject(row, 'age_ma', 'a negative age', 'Ages are Ma before the present: 0 is today, older is larger.');
+  if (draft.age_ma < 0)
+    reader.reject(
+      row,
+      'age_ma',
+      'a negative age',
+      'Ages are Ma before the present: 0 is today, older is larger.',
+    );
   else if (draft.age_ma > 4600) reader.reject(row, 'age_ma', 'older than the Earth', 'Give the age in Ma.');
   if (Math.abs(draft.pole_lat) > 90) {
-    reader.reject(row, 'pole_lat', 'latitude beyond 90°', 'Moved decimal point, or latitude and longitude exchanged?');
+    reader.reject(
+      row,
+      'pole_lat',
+      'latitude beyond 90°',
+      'Moved decimal point, or latitude and longitude exchanged?',
+    );
   }
-  if (Math.abs(draft.pole_lon) > 360) reader.reject(row, 'pole_lon', 'longitude beyond 360°', 'Moved decimal point?');
-  if (Math.abs(draft.angle_deg) > 720) reader.reject(row, 'angle_deg', 'more than two turns', 'Moved decimal point?');
+  if (Math.abs(draft.pole_lon) > 360)
+    reader.reject(row, 'pole_lon', 'longitude beyond 360°', 'Moved decimal point?');
+  if (Math.abs(draft.angle_deg) > 720)
+    reader.reject(row, 'angle_deg', 'more than two turns', 'Moved decimal point?');
   return reader.rejected.length === before;
 }
 
@@ -177,7 +249,10 @@ const toCandidate = (draft: Draft): Candidate<RotationFields> => ({
 export const rotationKey = (row: { block: string; relative_to: string; age_ma: number }): string =>
   `${row.block}\n${row.relative_to}\n${row.age_ma}`;
 
-function withoutDuplicates(candidates: Candidate<RotationFields>[], rejected: RejectedRow[]): Candidate<RotationFields>[] {
+function withoutDuplicates(
+  candidates: Candidate<RotationFields>[],
+  rejected: RejectedRow[],
+): Candidate<RotationFields>[] {
   const first = new Map<string, number | null>();
   return candidates.filter(({ line, fields }) => {
     const key = rotationKey(fields);

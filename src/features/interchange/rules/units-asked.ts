@@ -20,7 +20,13 @@ const SLOWEST_DEG_PER_MYR = 0.03;
 
 const example = (row: PoleValues, value: number): string => `line ${row.line}: ${value}`;
 
-function askEach(asking: Asking, id: string, ask: string, choices: readonly [string, string], rows: readonly string[]): boolean {
+function askEach(
+  asking: Asking,
+  id: string,
+  ask: string,
+  choices: readonly [string, string],
+  rows: readonly string[],
+): boolean {
   let answer: string | null = null;
   for (const row of rows.length > 0 ? rows : [undefined]) answer = asking.ask(id, ask, choices, row);
   return answer === null || answer === choices[0];
@@ -40,7 +46,15 @@ export function settleAges(rows: PoleValues[], unit: string | undefined, asking:
   if (negative.length > 0 && rows.every((row) => row.age_ma <= 0)) {
     const ask = 'All ages are negative. Ages count backwards from the present here: drop the minus sign?';
     const choices = ['drop the minus sign', 'reject these rows'] as const;
-    if (askEach(asking, 'age_sign', ask, choices, negative.map((row) => example(row, row.age_ma)))) {
+    if (
+      askEach(
+        asking,
+        'age_sign',
+        ask,
+        choices,
+        negative.map((row) => example(row, row.age_ma)),
+      )
+    ) {
       for (const row of rows) row.age_ma = Math.abs(row.age_ma);
     }
   }
@@ -80,7 +94,8 @@ export function settleSwap<T extends { line: number; lat: number; lon: number }>
   what: string,
 ): boolean {
   const beyond = rows.filter((row) => Math.abs(row.lat) > 90);
-  const swapped = beyond.length > 0 && rows.every((row) => Math.abs(row.lon) <= 90 && Math.abs(row.lat) <= 360);
+  const swapped =
+    beyond.length > 0 && rows.every((row) => Math.abs(row.lon) <= 90 && Math.abs(row.lat) <= 360);
   if (!swapped || (beyond.length === 1 && rows.length > 1)) return false;
   const ask = `${what} go beyond 90° as latitudes, and all would be valid the other way round. Are latitude and longitude exchanged?`;
   const examples = beyond.map((row) => `line ${row.line}: latitude ${row.lat}`);

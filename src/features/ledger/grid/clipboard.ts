@@ -24,4 +24,8 @@ export function readCells(text: string): string[][] {
 
 /** The inverse: a block of cells as text. */
 export const writeCells = (rows: readonly (readonly string[])[]): string =>
-  rows.map((row) => row.map((cell) => (/[\t\n"]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell)).join('\t')).join('\n');
+  rows
+    .map((row) =>
+      row.map((cell) => (/[\t\n"]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell)).join('\t'),
+    )
+    .join('\n');

@@ -1,7 +1,8 @@
 /** How one column of a ledger is shown, read from what is typed, and filled. */
 import { EVIDENCE } from '../../../kernel/rotations/types';
 
-export type Typed = { readonly ok: true; readonly value: unknown } | { readonly ok: false; readonly problem: string };
+export type Typed =
+  { readonly ok: true; readonly value: unknown } | { readonly ok: false; readonly problem: string };
 
 export interface Column {
   /** Name of the field. */
@@ -23,7 +24,7 @@ export interface Column {
 const ok = (value: unknown): Typed => ({ ok: true, value });
 const no = (problem: string): Typed => ({ ok: false, problem });
 
-const plainText = (value: unknown): string => (value === null || value === undefined ? '' : String(value as string | number));
+const plainText = (value: unknown): string => (value === null || value === undefined ? '' : String(value));
 
 interface NumberRule {
   readonly least: number;
@@ -35,14 +36,23 @@ interface NumberRule {
 
 /** Reads a number with a point or comma and any minus; the range is the contract's. */
 export function readNumberCell(text: string, { least, most, blank = false, beyond }: NumberRule): Typed {
-  const trimmed = text.trim().replace(/[\u2212\u2013]/g, '-').replace(/^([+-]?\d+),(\d+)$/, '$1.$2');
+  const trimmed = text
+    .trim()
+    .replace(/[\u2212\u2013]/g, '-')
+    .replace(/^([+-]?\d+),(\d+)$/, '$1.$2');
   if (trimmed === '') return blank ? ok(null) : no('blank');
   const value = Number(trimmed);
   if (!Number.isFinite(value)) return no('not a number');
   return value < least || value > most ? no(beyond) : ok(value);
 }
 
-export const numberColumn = (key: string, heading: string, unit: string, width: string, rule: NumberRule): Column => ({
+export const numberColumn = (
+  key: string,
+  heading: string,
+  unit: string,
+  width: string,
+  rule: NumberRule,
+): Column => ({
   key,
   heading,
   unit,
@@ -57,21 +67,35 @@ export const textColumn = (key: string, heading: string, width: string, most = 2
   heading,
   width,
   write: plainText,
-  read: (text) => (text.length > most ? no(`more than ${most} characters`) : ok(text.trim() === '' ? null : text.trim())),
+  read: (text) =>
+    text.length > most ? no(`more than ${most} characters`) : ok(text.trim() === '' ? null : text.trim()),
 });
 
 const SLUG = /^[a-z0-9]+(?:-[a-z0-9]+)*$/;
 
-export const codeColumn = (key: string, heading: string, width: string, choices: readonly string[] = []): Column => ({
+export const codeColumn = (
+  key: string,
+  heading: string,
+  width: string,
+  choices: readonly string[] = [],
+): Column => ({
   key,
   heading,
   width,
   choices,
   write: plainText,
-  read: (text) => (SLUG.test(text.trim()) && text.trim().length <= 64 ? ok(text.trim()) : no('a code: lower-case letters, digits, hyphens')),
+  read: (text) =>
+    SLUG.test(text.trim()) && text.trim().length <= 64
+      ? ok(text.trim())
+      : no('a code: lower-case letters, digits, hyphens'),
 });
 
-export const wordColumn = (key: string, heading: string, width: string, words: readonly string[]): Column => ({
+export const wordColumn = (
+  key: string,
+  heading: string,
+  width: string,
+  words: readonly string[],
+): Column => ({
   key,
   heading,
   width,
@@ -84,6 +108,11 @@ export const wordColumn = (key: string, heading: string, width: string, words: r
 });
 
 export const evidenceColumn = (width: string): Column => wordColumn('evidence', 'Evidence', width, EVIDENCE);
-const ageRule = (blank: boolean): NumberRule => ({ least: 0, most: 4600, blank, beyond: 'ages run from 0 to 4600 Ma' });
+const ageRule = (blank: boolean): NumberRule => ({
+  least: 0,
+  most: 4600,
+  blank,
+  beyond: 'ages run from 0 to 4600 Ma',
+});
 export const ageColumn = (key: string, heading: string, width: string, blank: boolean): Column =>
   numberColumn(key, heading, 'Ma', width, ageRule(blank));

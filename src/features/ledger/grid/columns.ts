@@ -1,18 +1,39 @@
 /** The columns of the ledgers that are edited, in the order in which they stand. */
 import { BLOCK_KINDS } from '../../../kernel/rotations/types';
-import { ageColumn, codeColumn, evidenceColumn, numberColumn, textColumn, wordColumn, type Column } from './column';
+import {
+  ageColumn,
+  codeColumn,
+  evidenceColumn,
+  numberColumn,
+  textColumn,
+  wordColumn,
+  type Column,
+} from './column';
 
 export const rotationColumns = (codes: readonly string[]): readonly Column[] => [
   codeColumn('block', 'Block', '84px', codes),
   ageColumn('age_ma', 'Age', '54px', false),
   codeColumn('relative_to', 'Relative to', '92px', codes),
-  numberColumn('pole_lat', 'Pole lat', '°N', '62px', { least: -90, most: 90, beyond: 'latitude beyond 90°: moved decimal point?' }),
-  numberColumn('pole_lon', 'Pole lon', '°E', '70px', { least: -360, most: 360, beyond: 'longitude beyond 360°' }),
+  numberColumn('pole_lat', 'Pole lat', '°N', '62px', {
+    least: -90,
+    most: 90,
+    beyond: 'latitude beyond 90°: moved decimal point?',
+  }),
+  numberColumn('pole_lon', 'Pole lon', '°E', '70px', {
+    least: -360,
+    most: 360,
+    beyond: 'longitude beyond 360°',
+  }),
   numberColumn('angle_deg', 'Angle', '°', '58px', { least: -720, most: 720, beyond: 'more than two turns' }),
   evidenceColumn('112px'),
   textColumn('source', 'Source', 'minmax(140px, 1.4fr)'),
   textColumn('chron', 'Chron', '64px', 40),
-  numberColumn('age_two_sigma_ma', 'Age ± 2σ', 'Myr', '70px', { least: 0, most: 1000, blank: true, beyond: 'from 0 to 1000 Myr' }),
+  numberColumn('age_two_sigma_ma', 'Age ± 2σ', 'Myr', '70px', {
+    least: 0,
+    most: 1000,
+    blank: true,
+    beyond: 'from 0 to 1000 Myr',
+  }),
   textColumn('note', 'Note', 'minmax(140px, 1.4fr)'),
 ];
 

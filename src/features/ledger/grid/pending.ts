@@ -30,14 +30,21 @@ export interface CellChange {
 const KNOWN: PendingRow = { isNew: false, base: {}, cells: {} };
 
 /** Adds typed cells, each read by its column. */
-export function withChanges(pending: Pending, changes: readonly CellChange[], columns: readonly Column[]): Pending {
+export function withChanges(
+  pending: Pending,
+  changes: readonly CellChange[],
+  columns: readonly Column[],
+): Pending {
   const next = new Map(pending);
   for (const { row, key, text } of changes) {
     const column = columns.find((c) => c.key === key);
     if (!column) continue;
     const typed = column.read(text);
     const there = next.get(row) ?? KNOWN;
-    next.set(row, { ...there, cells: { ...there.cells, [key]: { text, problem: typed.ok ? null : typed.problem } } });
+    next.set(row, {
+      ...there,
+      cells: { ...there.cells, [key]: { text, problem: typed.ok ? null : typed.problem } },
+    });
   }
   return next;
 }
@@ -65,7 +72,9 @@ export function fieldsOf(row: PendingRow, columns: readonly Column[]): Record<st
 export function missingIn(row: PendingRow, columns: readonly Column[]): string[] {
   if (!row.isNew) return [];
   const filled = { ...row.base, ...fieldsOf(row, columns) };
-  return columns.filter((c) => !c.read('').ok && (filled[c.key] === null || filled[c.key] === '')).map((c) => c.key);
+  return columns
+    .filter((c) => !c.read('').ok && (filled[c.key] === null || filled[c.key] === ''))
+    .map((c) => c.key);
 }
 
 export interface Ready {
@@ -87,7 +96,11 @@ export function readyEdits(pending: Pending, table: Table, columns: readonly Col
     if (wrong > 0 || missingIn(row, columns).length > 0) continue;
     const fields = fieldsOf(row, columns);
     if (!row.isNew && Object.keys(fields).length === 0) continue;
-    edits.push(row.isNew ? { op: 'create', table, id, fields: { ...row.base, ...fields } } : { op: 'update', table, id, fields });
+    edits.push(
+      row.isNew
+        ? { op: 'create', table, id, fields: { ...row.base, ...fields } }
+        : { op: 'update', table, id, fields },
+    );
     rows.push(id);
   }
   return { edits, rows, problems };

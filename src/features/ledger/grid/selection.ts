@@ -12,9 +12,11 @@ export interface Selection {
 
 export const START: Selection = { at: { row: 0, column: 0 }, from: { row: 0, column: 0 } };
 
-export const cellAt = ({ at }: Selection, place: Place): boolean => at.row === place.row && at.column === place.column;
+export const cellAt = ({ at }: Selection, place: Place): boolean =>
+  at.row === place.row && at.column === place.column;
 
-const between = (value: number, a: number, b: number): boolean => value >= Math.min(a, b) && value <= Math.max(a, b);
+const between = (value: number, a: number, b: number): boolean =>
+  value >= Math.min(a, b) && value <= Math.max(a, b);
 
 export const within = ({ at, from }: Selection, place: Place): boolean =>
   between(place.row, at.row, from.row) && between(place.column, at.column, from.column);
@@ -28,7 +30,11 @@ interface Key {
 const PAGE = 10;
 
 /** The selection after a key that moves; null for a key that does not. Shift keeps the corner. */
-export function move(selection: Selection, { key, shiftKey, command }: Key, size: { rows: number; columns: number }): Selection | null {
+export function move(
+  selection: Selection,
+  { key, shiftKey, command }: Key,
+  size: { rows: number; columns: number },
+): Selection | null {
   const { row, column } = selection.at;
   const last = { row: size.rows - 1, column: size.columns - 1 };
   const to = ((): Place | null => {

@@ -1,7 +1,14 @@
 /** One time slice on paper: the page as it will print in the middle, what is on it to the right, files below. */
 import { useDeferredValue, useEffect, useRef, useState } from 'react';
 import { sliceHref, sliceSearch, type SliceSettings } from '../address';
-import { CaptionControls, LayerControls, MapControls, PageControls, PathControls, type Choice } from './PrintControls';
+import {
+  CaptionControls,
+  LayerControls,
+  MapControls,
+  PageControls,
+  PathControls,
+  type Choice,
+} from './PrintControls';
 
 export interface PrintDeskProps {
   readonly slug: string;
@@ -14,7 +21,14 @@ export interface PrintDeskProps {
 
 export type Change = (change: Partial<SliceSettings>) => void;
 
-export default function PrintDesk({ slug, version, settings: initial, frames, blocks, oldest_ma }: PrintDeskProps) {
+export default function PrintDesk({
+  slug,
+  version,
+  settings: initial,
+  frames,
+  blocks,
+  oldest_ma,
+}: PrintDeskProps) {
   const [settings, setSettings] = useState(initial);
   const change: Change = (part) => setSettings((now) => ({ ...now, ...part }));
   const search = sliceSearch(settings, version);
@@ -23,14 +37,17 @@ export default function PrintDesk({ slug, version, settings: initial, frames, bl
   return (
     <div className="grid min-h-[calc(100dvh-52px)] grid-cols-[minmax(0,1fr)_300px] max-lg:grid-cols-1">
       <Preview href={sliceHref(slug, 'svg', settled)} pending={settled !== search} settings={settings} />
-      <form className="flex flex-col gap-6 border-l border-frame p-5 max-lg:border-t max-lg:border-l-0" onSubmit={(e) => e.preventDefault()}>
+      <form
+        className="border-frame flex flex-col gap-6 border-l p-5 max-lg:border-t max-lg:border-l-0"
+        onSubmit={(e) => e.preventDefault()}
+      >
         <h1 className="sr-only">Print a time slice</h1>
         <PageControls settings={settings} change={change} />
         <MapControls settings={settings} change={change} frames={frames} oldest_ma={oldest_ma} />
         <LayerControls settings={settings} change={change} />
         <PathControls settings={settings} change={change} blocks={blocks} />
         <CaptionControls settings={settings} change={change} />
-        <div className="mt-auto border-t border-frame pt-4">
+        <div className="border-frame mt-auto border-t pt-4">
           <div className="flex flex-wrap gap-2">
             <a className="button button-main" href={sliceHref(slug, 'pdf', search)} download>
               Print PDF
@@ -79,8 +96,11 @@ function Preview({ href, pending, settings }: PreviewProps) {
     setProblem([body.title, body.detail].filter(Boolean).join('. '));
   };
   return (
-    <section className="flex flex-col items-center justify-center bg-sunk p-8 max-md:p-3" aria-label="The page as it will print">
-      <p className="mb-3 h-5 t-body text-ink-2" role="status">
+    <section
+      className="bg-sunk flex flex-col items-center justify-center p-8 max-md:p-3"
+      aria-label="The page as it will print"
+    >
+      <p className="t-body text-ink-2 mb-3 h-5" role="status">
         {state === 'failed' ? '' : pending || state === 'drawing' ? 'Drawing …' : ''}
       </p>
       {state === 'failed' ? (
@@ -92,11 +112,11 @@ function Preview({ href, pending, settings }: PreviewProps) {
         ref={image}
         src={href}
         alt={`Time slice at ${settings.age_ma} Ma`}
-        className={`max-h-[78dvh] max-w-full border border-rule-2 bg-white ${state === 'failed' ? 'hidden' : ''}`}
+        className={`border-rule-2 max-h-[78dvh] max-w-full border bg-white ${state === 'failed' ? 'hidden' : ''}`}
         onLoad={() => setState('shown')}
         onError={() => void explain()}
       />
-      <p className="mt-3 t-body text-ink-2">
+      <p className="t-body text-ink-2 mt-3">
         {settings.paper.toUpperCase()} {settings.orientation}
       </p>
     </section>

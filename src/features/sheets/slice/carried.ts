@@ -41,12 +41,21 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
       continue;
     }
     if (outlines.length === 0) continue;
-    const polygons = outlines.flatMap((o) => polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside));
+    const polygons = outlines.flatMap((o) =>
+      polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside),
+    );
     const sizes = polygons.map((polygon) => areaKm2(polygon));
     const largest = polygons[sizes.indexOf(Math.max(...sizes))]!;
     const area = carryPolygons(polygons, pose.quaternion);
     const label = toLatLon(boundingCap(carriedVectors(largest[0]!, pose)).centre);
-    blocks.push({ code: block.code, name: block.name, evidence: block.evidence, area, area_km2: sizes.reduce((a, b) => a + b, 0), label });
+    blocks.push({
+      code: block.code,
+      name: block.name,
+      evidence: block.evidence,
+      area,
+      area_km2: sizes.reduce((a, b) => a + b, 0),
+      label,
+    });
     cite(sources, pose, block.source);
   }
   for (const line of subject.coasts) {
@@ -64,7 +73,11 @@ function carriedVectors(ring: readonly Vector3[], pose: Extract<Pose, { status: 
   return ring.map((v) => rotate(pose.quaternion, v));
 }
 
-function cite(sources: Set<string>, pose: Extract<Pose, { status: 'placed' }>, outlineSource: string | null): void {
+function cite(
+  sources: Set<string>,
+  pose: Extract<Pose, { status: 'placed' }>,
+  outlineSource: string | null,
+): void {
   if (outlineSource) sources.add(outlineSource);
   for (const link of pose.links) {
     for (const row of [link.younger, link.older]) if (row.source && !row.implied) sources.add(row.source);

@@ -22,9 +22,18 @@ export function pathSvg(path: DrawnPath, projection: GeoProjection, ellipses: bo
   const points = path.points.filter(isPlaced);
   const draw = geoPath(projection).digits(2);
   const line = { type: 'LineString' as const, coordinates: points.map((p) => [p.lon, p.lat]) };
-  const at = points.reduce<Placed | null>((best, p) => (best && Math.abs(best.age_ma - path.age_ma) <= Math.abs(p.age_ma - path.age_ma) ? best : p), null);
+  const at = points.reduce<Placed | null>(
+    (best, p) => (best && Math.abs(best.age_ma - path.age_ma) <= Math.abs(p.age_ma - path.age_ma) ? best : p),
+    null,
+  );
   return [
-    element('path', { class: 'drift-path', d: draw(line) ?? '', fill: 'none', stroke: OCHRE, 'stroke-width': 1.4 }),
+    element('path', {
+      class: 'drift-path',
+      d: draw(line) ?? '',
+      fill: 'none',
+      stroke: OCHRE,
+      'stroke-width': 1.4,
+    }),
     ...points.map((p) => mark(p, projection)),
     ageLabels(points, path, projection),
     ellipses && at ? ellipseSvg(at, (polygon) => draw(polygon) ?? '') : '',
@@ -53,10 +62,18 @@ function ageLabels(points: readonly Placed[], path: DrawnPath, projection: GeoPr
     .map((point) => {
       const steps = point.age_ma / path.label_step_ma;
       const xy = projection([point.lon, point.lat]);
-      if (!xy || Math.abs(steps - Math.round(steps)) > 1e-6 || !visible(projection, [point.lon, point.lat])) return '';
+      if (!xy || Math.abs(steps - Math.round(steps)) > 1e-6 || !visible(projection, [point.lon, point.lat]))
+        return '';
       if (placed.some(([x, y]) => Math.abs(x - xy[0]) < 16 && Math.abs(y - xy[1]) < 8)) return '';
       placed.push(xy);
-      const style = { family: 'Inter', size: 6.5, weight: 500, anchor: 'end', fill: OCHRE_INK, halo: PAPER } as const;
+      const style = {
+        family: 'Inter',
+        size: 6.5,
+        weight: 500,
+        anchor: 'end',
+        fill: OCHRE_INK,
+        halo: PAPER,
+      } as const;
       return textElement(xy[0] - 5, xy[1] + 2.5, ageValue(point.age_ma).replace(/\.0$/, ''), style);
     })
     .join('');
@@ -81,5 +98,13 @@ function ellipseSvg(point: Placed, draw: (polygon: Polygon) => string): string {
   });
   const d = draw({ type: 'Polygon', coordinates: [ring.reverse()] });
   const dash = ellipse.at_least ? '2.4 1.6' : undefined;
-  return element('path', { class: 'ellipse', d, fill: OCHRE, 'fill-opacity': 0.15, stroke: OCHRE, 'stroke-width': 0.7, 'stroke-dasharray': dash });
+  return element('path', {
+    class: 'ellipse',
+    d,
+    fill: OCHRE,
+    'fill-opacity': 0.15,
+    stroke: OCHRE,
+    'stroke-width': 0.7,
+    'stroke-dasharray': dash,
+  });
 }

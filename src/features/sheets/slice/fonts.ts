@@ -59,8 +59,18 @@ const WEB_FONTS = [
   ['Inter', '400', 'normal', '@fontsource/inter/files/inter-latin-400-normal.woff2'],
   ['Inter', '500', 'normal', '@fontsource/inter/files/inter-latin-500-normal.woff2'],
   ['Inter', '600', 'normal', '@fontsource/inter/files/inter-latin-600-normal.woff2'],
-  ['Source Serif 4', '200 900', 'normal', '@fontsource-variable/source-serif-4/files/source-serif-4-latin-wght-normal.woff2'],
-  ['Source Serif 4', '200 900', 'italic', '@fontsource-variable/source-serif-4/files/source-serif-4-latin-wght-italic.woff2'],
+  [
+    'Source Serif 4',
+    '200 900',
+    'normal',
+    '@fontsource-variable/source-serif-4/files/source-serif-4-latin-wght-normal.woff2',
+  ],
+  [
+    'Source Serif 4',
+    '200 900',
+    'italic',
+    '@fontsource-variable/source-serif-4/files/source-serif-4-latin-wght-italic.woff2',
+  ],
 ] as const;
 
 let webFonts: string | undefined;

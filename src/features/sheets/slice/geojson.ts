@@ -3,8 +3,7 @@
  * and latitude stay within {@link EXPORT_ERROR_KM} of the great circles, what the map says of itself as members.
  */
 import type { Feature, FeatureCollection, Geometry } from 'geojson';
-import { geoProject } from 'd3-geo-projection';
-import { geoEquirectangular } from 'd3-geo';
+import { flatten } from '../../motion/plate-carree';
 import type { Carried } from './carried';
 import { CAUTION_LINE } from './page';
 import type { SliceQuery } from '../contract';
@@ -13,40 +12,22 @@ import type { SliceSubject } from './subject';
 /** Worst distance between a written edge and its great circle. */
 export const EXPORT_ERROR_KM = 1;
 
-/** d3-geo cuts at the antimeridian, closes round poles and adds points along curved edges; its plane is then degrees. */
-const DEGREES = 180 / Math.PI;
-/** Tolerance of the added points in projected units, degrees here: 1 km is 0.009°. */
-const PRECISION_DEG = 0.006;
-
-interface Planar {
-  stream: (sink: unknown) => unknown;
-}
-
-function plate(): Planar {
-  const projection = geoEquirectangular().scale(DEGREES).translate([0, 0]).precision(PRECISION_DEG);
-  return {
-    stream: (sink) => {
-      const target = sink as { point: (x: number, y: number) => void };
-      const turned = Object.create(target) as typeof target;
-      turned.point = (x, y) => target.point(round(x), round(-y));
-      return projection.stream(turned as Parameters<typeof projection.stream>[0]);
-    },
-  };
-}
-
-const round = (value: number): number => Math.round(value * 1e6) / 1e6;
-
-export function sliceGeojson(subject: SliceSubject, carried: Carried, query: SliceQuery): FeatureCollection & Record<string, unknown> {
+export function sliceGeojson(
+  subject: SliceSubject,
+  carried: Carried,
+  query: SliceQuery,
+): FeatureCollection & Record<string, unknown> {
   const about = { age_ma: query.age_ma, relative_to: subject.frame.code };
   const features: Feature[] = [];
   const add = (geometry: Geometry, properties: Record<string, unknown>): void => {
-    const flat = geoProject(geometry, plate());
+    const flat = flatten(geometry);
     if (flat) features.push({ type: 'Feature', properties: { ...properties, ...about }, geometry: flat });
   };
   for (const { code, name, evidence, area, area_km2 } of carried.blocks) {
     add(area, { block: code, name, kind: 'outline', evidence, area_km2: Math.round(area_km2) });
   }
-  if (query.layers.includes('coasts')) for (const line of carried.coasts) add(line, { kind: 'layer', name: 'present coast, for location only' });
+  if (query.layers.includes('coasts'))
+    for (const line of carried.coasts) add(line, { kind: 'layer', name: 'present coast, for location only' });
   return {
     type: 'FeatureCollection',
     title: subject.title,

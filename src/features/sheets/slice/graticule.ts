@@ -11,10 +11,25 @@ const LABEL: TextStyle = { family: 'Inter', size: 7, fill: INK_2, halo: PAPER };
 export function graticuleSvg(projection: GeoProjection): string {
   const path = geoPath(projection).digits(2);
   const lines = geoGraticule().extentMajor([[-180, -85], [180, 85]]).extentMinor([[-180, -85], [180, 85]]).step([STEP, STEP]).stepMajor([90, 360]); // prettier-ignore
-  const equator: LineString = { type: 'LineString', coordinates: Array.from({ length: 73 }, (_, i) => [-180 + 5 * i, 0]) };
+  const equator: LineString = {
+    type: 'LineString',
+    coordinates: Array.from({ length: 73 }, (_, i) => [-180 + 5 * i, 0]),
+  };
   return (
-    element('path', { class: 'graticule', d: path(lines()) ?? '', fill: 'none', stroke: GRATICULE, 'stroke-width': 0.5 }) +
-    element('path', { class: 'equator', d: path(equator) ?? '', fill: 'none', stroke: RULE, 'stroke-width': 0.8 })
+    element('path', {
+      class: 'graticule',
+      d: path(lines()) ?? '',
+      fill: 'none',
+      stroke: GRATICULE,
+      'stroke-width': 0.5,
+    }) +
+    element('path', {
+      class: 'equator',
+      d: path(equator) ?? '',
+      fill: 'none',
+      stroke: RULE,
+      'stroke-width': 0.8,
+    })
   );
 }
 
@@ -51,12 +66,18 @@ export function graticuleLabels(projection: GeoProjection): string {
     svg += textElement(x, y, text, { ...LABEL, anchor });
   };
   for (let lat = -60; lat <= 60; lat += 30) {
-    const points = drawn(projection, Array.from({ length: 721 }, (_, i) => [-180 + i / 2, lat]));
+    const points = drawn(
+      projection,
+      Array.from({ length: 721 }, (_, i) => [-180 + i / 2, lat]),
+    );
     const left = points.reduce<Point | null>((best, p) => (best && best.x <= p.x ? best : p), null);
     if (left) put(left.x - 4, left.y + 2.5, parallel(lat), 'end');
   }
   for (let lon = -180; lon < 180; lon += 60) {
-    const points = drawn(projection, Array.from({ length: 341 }, (_, i) => [lon, -85 + i / 2]));
+    const points = drawn(
+      projection,
+      Array.from({ length: 341 }, (_, i) => [lon, -85 + i / 2]),
+    );
     for (const { x, y } of meridianEnds(projection, points)) put(x, y, meridian(lon), 'middle');
   }
   return svg;

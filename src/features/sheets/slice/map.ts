@@ -43,13 +43,31 @@ function blockSvg({ code, evidence, name }: CarriedBlock, d: string): string {
   const stroke = { stroke: OUTLINE, 'stroke-width': 0.7, 'stroke-linejoin': 'round' };
   const dash = evidence === 'unconstrained' ? '5 2.6' : undefined;
   const title = element('title', {}, name.replace(/[&<>]/g, ''));
-  return element('path', { class: 'block', 'data-block': code, d, fill: `url(#ev-${evidence})`, ...stroke, 'stroke-dasharray': dash }, title);
+  return element(
+    'path',
+    {
+      class: 'block',
+      'data-block': code,
+      d,
+      fill: `url(#ev-${evidence})`,
+      ...stroke,
+      'stroke-dasharray': dash,
+    },
+    title,
+  );
 }
 
 function coastsSvg(carried: Carried, draw: (line: Carried['coasts'][number]) => string): string {
   const d = carried.coasts.map(draw).join('');
   if (d === '') return '';
-  return element('path', { class: 'coast', d, fill: 'none', stroke: COAST, 'stroke-width': 0.55, 'stroke-dasharray': '1.8 1.5' });
+  return element('path', {
+    class: 'coast',
+    d,
+    fill: 'none',
+    stroke: COAST,
+    'stroke-width': 0.55,
+    'stroke-dasharray': '1.8 1.5',
+  });
 }
 
 interface Box {
@@ -73,7 +91,13 @@ function namesSvg(blocks: readonly CarriedBlock[], projection: GeoProjection): s
         const box = { x: point[0], y: point[1] + dy, half };
         if (placed.some((p) => Math.abs(p.x - box.x) < p.half + half && Math.abs(p.y - box.y) < 10)) continue;
         placed.push(box);
-        return textElement(box.x, box.y + 2.5, text, { family: 'Inter', size: 7.5, weight: 500, anchor: 'middle', halo: PAPER });
+        return textElement(box.x, box.y + 2.5, text, {
+          family: 'Inter',
+          size: 7.5,
+          weight: 500,
+          anchor: 'middle',
+          halo: PAPER,
+        });
       }
       return '';
     })

@@ -3,7 +3,12 @@ import { EARTH_RADIUS_KM } from '../../../kernel/sphere';
 import { EVIDENCE } from '../../../kernel/rotations/types';
 import type { DriftPoint } from '../../../kernel/rotations';
 import { CHRONOSTRATIGRAPHIC_CHART, unitAt } from '../../../kernel/timescale';
-import { allowedCentre, fitProjection, kmPerUnit, PROJECTIONS } from '../../../kernel/cartography/projections';
+import {
+  allowedCentre,
+  fitProjection,
+  kmPerUnit,
+  PROJECTIONS,
+} from '../../../kernel/cartography/projections';
 import { age, ageValue, coordinates, list, number } from '../../motion/format';
 import { inText } from '../../motion/names';
 import { PAPERS, type SliceQuery } from '../contract';
@@ -48,7 +53,10 @@ interface Line {
   readonly style: TextStyle;
 }
 
-export function pageSize(query: Pick<SliceQuery, 'paper' | 'orientation'>): { width: number; height: number } {
+export function pageSize(query: Pick<SliceQuery, 'paper' | 'orientation'>): {
+  width: number;
+  height: number;
+} {
   const [long, shortSide] = PAPERS[query.paper];
   const [w, h] = query.orientation === 'landscape' ? [long, shortSide] : [shortSide, long];
   return { width: w * PT_PER_MM, height: h * PT_PER_MM };
@@ -67,7 +75,11 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
   const box = { x: MARGIN + 26, y: top, width: inner - 52, height: height - MARGIN - foot - top - 22 };
   const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
   const projection = fitProjection(query.projection, centre, box, query.reach_deg ?? null);
-  const drawnPath = path && { points: path.points, age_ma: query.age_ma, label_step_ma: 2 * query.path_step_ma };
+  const drawnPath = path && {
+    points: path.points,
+    age_ma: query.age_ma,
+    label_step_ma: 2 * query.path_step_ma,
+  };
   const arrows = query.layers.includes('velocity')
     ? carried.blocks.flatMap((block) => blockArrows(subject.model, block, query.age_ma, subject.frame.code))
     : [];
@@ -85,10 +97,21 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
     scaleBar(right, footTop + legendHeight + 10, kmPerUnit(projection, centre, EARTH_RADIUS_KM)),
     writeLines(facts, right, footTop + legendHeight + 36),
   ];
-  return { svg: wrap(width, height, title, subject, query, body.join('')), width_pt: width, height_pt: height };
+  return {
+    svg: wrap(width, height, title, subject, query, body.join('')),
+    width_pt: width,
+    height_pt: height,
+  };
 }
 
-function wrap(width: number, height: number, title: string, subject: SliceSubject, query: SliceQuery, body: string): string {
+function wrap(
+  width: number,
+  height: number,
+  title: string,
+  subject: SliceSubject,
+  query: SliceQuery,
+  body: string,
+): string {
   const style = `<style>${embeddedFontRules()}</style>`;
   const describe = `${subject.version}, ${inText({ ...subject.frame, kind: 'frame' })} frame, ${age(query.age_ma)}. ${CAUTION_LINE}`;
   const head = `xmlns="http://www.w3.org/2000/svg" width="${width.toFixed(2)}pt" height="${height.toFixed(2)}pt" viewBox="0 0 ${width.toFixed(2)} ${height.toFixed(2)}" role="img"`;
@@ -97,20 +120,38 @@ function wrap(width: number, height: number, title: string, subject: SliceSubjec
 }
 
 function subtitle(subject: SliceSubject, age_ma: number): string {
-  const names = (['period', 'epoch', 'stage'] as const).map((rank) => unitAt(age_ma, rank)?.name).filter((n) => n !== undefined);
-  return [`${age(age_ma)}${names.length > 0 ? ` (${[...new Set(names)].reverse().join(', ')})` : ''}`, `${inText({ ...subject.frame, kind: 'frame' })} frame`, subject.version].join('  ·  ');
+  const names = (['period', 'epoch', 'stage'] as const)
+    .map((rank) => unitAt(age_ma, rank)?.name)
+    .filter((n) => n !== undefined);
+  return [
+    `${age(age_ma)}${names.length > 0 ? ` (${[...new Set(names)].reverse().join(', ')})` : ''}`,
+    `${inText({ ...subject.frame, kind: 'frame' })} frame`,
+    subject.version,
+  ].join('  ·  ');
 }
 
-function captionLines(subject: SliceSubject, carried: Carried, query: SliceQuery, pathName: string | null, width: number): Line[] {
+function captionLines(
+  subject: SliceSubject,
+  carried: Carried,
+  query: SliceQuery,
+  pathName: string | null,
+  width: number,
+): Line[] {
   const kind = PROJECTIONS[query.projection];
   const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
   const sentences = [
     query.caption.trim(),
     `Positions at ${age(query.age_ma)} in the ${inText({ ...subject.frame, kind: 'frame' })} frame.`,
     `${kind.label} projection${kind.property === 'equal-area' && !kind.label.includes('equal-area') ? ' (equal-area)' : ''}, centred on ${coordinates(centre.lat, centre.lon, 0)}.`,
-    pathName && query.layers.includes('path') ? `Ochre: drift path of ${pathName}, bars at rows, dots each ${number(query.path_step_ma)} Myr${query.layers.includes('ellipse') ? ', with the 95 % ellipse at this age' : ''}.` : '',
-    query.layers.includes('coasts') && carried.coasts.length > 0 ? 'Dashed: present coast, for location only.' : '',
-    carried.missing.length > 0 ? `Without a place at this age: ${list(carried.missing.map((m) => `${m.name} (${m.status})`))}.` : '',
+    pathName && query.layers.includes('path')
+      ? `Ochre: drift path of ${pathName}, bars at rows, dots each ${number(query.path_step_ma)} Myr${query.layers.includes('ellipse') ? ', with the 95 % ellipse at this age' : ''}.`
+      : '',
+    query.layers.includes('coasts') && carried.coasts.length > 0
+      ? 'Dashed: present coast, for location only.'
+      : '',
+    carried.missing.length > 0
+      ? `Without a place at this age: ${list(carried.missing.map((m) => `${m.name} (${m.status})`))}.`
+      : '',
   ];
   const text = sentences.filter((s) => s !== '').join(' ');
   return [
@@ -154,12 +195,24 @@ function legendEntries(carried: Carried, query: SliceQuery, path: boolean): Lege
   const drawn = EVIDENCE.filter((evidence) => carried.blocks.some((block) => block.evidence === evidence));
   const entries: LegendEntry[] = drawn.map((evidence) => {
     const dash = evidence === 'unconstrained' ? '3 1.8' : undefined;
-    const look = { fill: `url(#ev-${evidence})`, stroke: OUTLINE, 'stroke-width': 0.6, 'stroke-dasharray': dash };
-    return { text: evidence, sample: (x, y) => element('rect', { x, y: y - 6, width: 17, height: 9, ...look }) };
+    const look = {
+      fill: `url(#ev-${evidence})`,
+      stroke: OUTLINE,
+      'stroke-width': 0.6,
+      'stroke-dasharray': dash,
+    };
+    return {
+      text: evidence,
+      sample: (x, y) => element('rect', { x, y: y - 6, width: 17, height: 9, ...look }),
+    };
   });
   if (path && query.layers.includes('path')) {
     const sample = (x: number, y: number): string =>
-      element('path', { d: `M${x} ${y - 1.5}h17M${x + 8.5} ${y - 4.5}v6`, stroke: OCHRE, 'stroke-width': 1.2 });
+      element('path', {
+        d: `M${x} ${y - 1.5}h17M${x + 8.5} ${y - 4.5}v6`,
+        stroke: OCHRE,
+        'stroke-width': 1.2,
+      });
     entries.push({ text: 'drift path', sample });
   }
   if (query.layers.includes('velocity')) {
@@ -170,7 +223,10 @@ function legendEntries(carried: Carried, query: SliceQuery, path: boolean): Lege
   }
   if (carried.coasts.length > 0 && query.layers.includes('coasts')) {
     const look = { fill: 'none', stroke: COAST, 'stroke-width': 0.6, 'stroke-dasharray': '1.8 1.5' };
-    entries.push({ text: 'present coast', sample: (x, y) => element('path', { d: `M${x} ${y - 1.5}h17`, ...look }) });
+    entries.push({
+      text: 'present coast',
+      sample: (x, y) => element('path', { d: `M${x} ${y - 1.5}h17`, ...look }),
+    });
   }
   return entries;
 }
@@ -198,7 +254,9 @@ function legendSvg(rows: readonly (readonly LegendEntry[])[], x: number, y: numb
     let at = x;
     return row
       .map((entry) => {
-        const svg = entry.sample(at, y + i * LEGEND_ROW) + textElement(at + 22, y + 1 + i * LEGEND_ROW, entry.text, SMALL);
+        const svg =
+          entry.sample(at, y + i * LEGEND_ROW) +
+          textElement(at + 22, y + 1 + i * LEGEND_ROW, entry.text, SMALL);
         at += entryWidth(entry);
         return svg;
       })

@@ -13,7 +13,8 @@ const RADIANS = Math.PI / 180;
 export function pathWriter(projection: GeoProjection): (area: MultiPolygon) => string {
   const cut = geoPath(projection).digits(2);
   const whole = insideTest(projection);
-  return (area) => (area.coordinates.every((rings) => rings.every(whole)) ? written(area, projection) : (cut(area) ?? ''));
+  return (area) =>
+    area.coordinates.every((rings) => rings.every(whole)) ? written(area, projection) : (cut(area) ?? '');
 }
 
 /** Whether a ring lies whole within the map, with edges short enough to be straight. */
@@ -28,9 +29,20 @@ function insideTest(projection: GeoProjection): (ring: readonly Position[]) => b
     for (const [lon, lat] of ring) {
       const turned = ((((lon! + lambda + 180) % 360) + 360) % 360) - 180;
       if (Math.abs(lat!) > 85) return false;
-      if (reach && sinCentre * Math.sin(lat! * RADIANS) + cosCentre * Math.cos(lat! * RADIANS) * Math.cos(turned * RADIANS) < least) return false;
+      if (
+        reach &&
+        sinCentre * Math.sin(lat! * RADIANS) +
+          cosCentre * Math.cos(lat! * RADIANS) * Math.cos(turned * RADIANS) <
+          least
+      )
+        return false;
       const step = Math.abs(turned - previous);
-      if (step > 180 || step * Math.cos(lat! * RADIANS) > STRAIGHT_EDGE_DEG || Math.abs(lat! - before) > STRAIGHT_EDGE_DEG) return false;
+      if (
+        step > 180 ||
+        step * Math.cos(lat! * RADIANS) > STRAIGHT_EDGE_DEG ||
+        Math.abs(lat! - before) > STRAIGHT_EDGE_DEG
+      )
+        return false;
       previous = turned;
       before = lat!;
     }

@@ -12,7 +12,9 @@ type Rings = readonly (readonly Vector3[])[];
 /** Polygons as unit vectors, outer ring first, each ring clockwise round what it holds (holes the other way). */
 export function polygonVectors(geometry: Polygon | MultiPolygon, inside: 'smaller' | 'larger'): Rings[] {
   const polygons = geometry.type === 'Polygon' ? [geometry.coordinates] : geometry.coordinates;
-  return polygons.map((rings) => rings.map((ring, i) => wound(readRing(ring), i === 0 ? inside === 'larger' : true)));
+  return polygons.map((rings) =>
+    rings.map((ring, i) => wound(readRing(ring), i === 0 ? inside === 'larger' : true)),
+  );
 }
 
 function wound(ring: Vector3[], anticlockwise: boolean): Vector3[] {
@@ -55,7 +57,10 @@ export function carryLines(lines: readonly (readonly Vector3[])[], q: Quaternion
   return { type: 'MultiLineString', coordinates: lines.map((line) => line.map((v) => position(v, q))) };
 }
 
-export const asFeature = <G extends Geometry>(geometry: G, properties: Record<string, unknown> = {}): Feature<G> => ({
+export const asFeature = <G extends Geometry>(
+  geometry: G,
+  properties: Record<string, unknown> = {},
+): Feature<G> => ({
   type: 'Feature',
   properties,
   geometry,

@@ -1,6 +1,9 @@
 /** Writing SVG as text: escaped, numbers short, nothing else. */
 export const escapeXml = (text: string): string =>
-  text.replace(/[&<>"']/g, (c) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[c]!);
+  text.replace(
+    /[&<>"']/g,
+    (c) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[c]!,
+  );
 
 /** Two decimals at most, no trailing zeros. */
 export const short = (value: number): string => String(Math.round(value * 100) / 100);

@@ -45,7 +45,8 @@ export function arrowSvg(arrow: Arrow, projection: GeoProjection): string {
   if (!from || !visible(projection, [arrow.lon, arrow.lat])) return '';
   const [x, y] = from;
   const look = { class: 'velocity', stroke: INK, 'stroke-width': 0.8, fill: 'none' };
-  if (arrow.azimuth_deg === null || arrow.speed_mm_yr < STILL_MM_YR) return element('circle', { class: 'velocity', cx: x, cy: y, r: 0.9, fill: INK });
+  if (arrow.azimuth_deg === null || arrow.speed_mm_yr < STILL_MM_YR)
+    return element('circle', { class: 'velocity', cx: x, cy: y, r: 0.9, fill: INK });
   const ahead = toLatLon(destination(toVector(arrow.lat, arrow.lon), arrow.azimuth_deg, 50));
   const to = projection([ahead.lon, ahead.lat]);
   if (!to) return '';
@@ -55,6 +56,10 @@ export function arrowSvg(arrow: Arrow, projection: GeoProjection): string {
   const [ux, uy] = [(to[0] - x) / size, (to[1] - y) / size];
   const [ex, ey] = [x + ux * length, y + uy * length];
   const head = Math.min(3.2, length * 0.5);
-  const wing = (side: number): string => `M${short(ex)} ${short(ey)}L${short(ex - head * (ux - side * 0.45 * uy))} ${short(ey - head * (uy + side * 0.45 * ux))}`;
-  return element('path', { ...look, d: `M${short(x)} ${short(y)}L${short(ex)} ${short(ey)}${wing(1)}${wing(-1)}` });
+  const wing = (side: number): string =>
+    `M${short(ex)} ${short(ey)}L${short(ex - head * (ux - side * 0.45 * uy))} ${short(ey - head * (uy + side * 0.45 * ux))}`;
+  return element('path', {
+    ...look,
+    d: `M${short(x)} ${short(y)}L${short(ex)} ${short(ey)}${wing(1)}${wing(-1)}`,
+  });
 }

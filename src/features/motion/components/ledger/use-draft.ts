@@ -195,6 +195,7 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
     [
       blocks.data,
       rotations.data,
+      motions.data,
       pending,
       saving,
       refused,

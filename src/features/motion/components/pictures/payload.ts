@@ -46,6 +46,7 @@ export function usePicture({ payload, shown = {}, share }: PictureProps): {
     const { off, ...stated } = shown;
     return sharedWorkbench(share, complete(scene, { ...stated, ...(off ? { off: new Set(off) } : {}) }));
     // Made once: a store outlives the outlines that arrive later.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
   }, [share]);
   return { scene, store, ready: !waiting && shapes.size > 0 };
 }
