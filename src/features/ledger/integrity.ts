@@ -3,6 +3,7 @@ import type { Transaction } from '~/db/client';
 import { block, rotation, source } from '~/db/schema';
 import type { FieldError } from '~/server/problem';
 import type { Table } from './contract';
+import { within } from './parse';
 import { CARRIED, DB_TABLES } from './tables';
 
 type PathOf = (id: string) => string | undefined;
@@ -49,7 +50,7 @@ async function duplicateRotations(tx: Transaction, projectId: string, pathOf: Pa
     .having(sql`count(*) > 1`);
   return found.flatMap(({ block: code, relative_to, age_ma, ids }) =>
     offenders(ids, pathOf).map((path) => ({
-      path: `${path}.age_ma`,
+      path: within(path, 'age_ma'),
       read: String(age_ma),
       problem: `${code} has a row relative to ${relative_to} at ${age_ma} Ma already`,
       hint: 'Change the row that is there, or give another age.',
@@ -66,7 +67,7 @@ async function duplicateSources(tx: Transaction, projectId: string, pathOf: Path
     .having(sql`count(*) > 1`);
   return found.flatMap(({ cite, ids }) =>
     offenders(ids, pathOf).map((path) => ({
-      path: `${path}.cite`,
+      path: within(path, 'cite'),
       read: cite,
       problem: 'the project has a source of this name',
       hint: 'Add a letter, as in 2021a.',
@@ -88,7 +89,7 @@ async function homeless(
     .where(and(eq(target.project_id, projectId), isNotNull(target.block), isNull(block.id)))
     .limit(100);
   return rows.map(({ id, code }) => ({
-    path: [pathOf(id) ?? table, 'block'].join('.'),
+    path: within(pathOf(id) ?? table, 'block'),
     read: code,
     problem: 'no block of this code in the project',
     hint: 'Add the block first, or mend its code.',

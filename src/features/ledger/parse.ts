@@ -11,10 +11,10 @@ export interface PlacedCells {
   readonly path: string;
 }
 
-const at = (path: string, error: FieldError): FieldError => ({
-  ...error,
-  path: [path, error.path].filter(Boolean).join('.'),
-});
+/** A place inside a place; a request of one row has no place of its own. */
+export const within = (path: string, inner: string | undefined): string => [path, inner].filter(Boolean).join('.');
+
+const at = (path: string, error: FieldError): FieldError => ({ ...error, path: within(path, error.path) });
 
 /** @throws Problem `InvalidRows` with every error found, up to a hundred */
 export function refuse(errors: readonly FieldError[]): void {
@@ -53,7 +53,7 @@ export async function resolveGeometries(
   for (const row of rows) {
     if (row.cells['geometry'] === undefined) continue;
     const result = parseGeometry(table, row.cells['geometry']);
-    if (Array.isArray(result)) errors.push(...result.map((error) => at(`${row.path}.geometry`, error)));
+    if (Array.isArray(result)) errors.push(...result.map((error) => at(within(row.path, 'geometry'), error)));
     else checked.set(row, result);
   }
   const given = rows.flatMap((row) =>
@@ -64,7 +64,7 @@ export async function resolveGeometries(
     const hash = row.cells['sha256'];
     if (checked.has(row) || typeof hash !== 'string' || known.has(hash)) continue;
     errors.push({
-      path: `${row.path}.sha256`,
+      path: within(row.path, 'sha256'),
       read: shown(hash),
       problem: 'the project has no such geometry',
       hint: 'Send the geometry itself.',
