@@ -280,7 +280,11 @@ export function Grid(props: Props) {
                     transform: `translateY(${item.start}px)`,
                   }}
                 >
-                  {row.mark && <span className="absolute left-0.5">{row.mark}</span>}
+                  {row.mark && (
+                    <span aria-hidden="true" className="absolute left-0.5">
+                      {row.mark}
+                    </span>
+                  )}
                   {slots.map((slot) => {
                     if (slot.shown) {
                       return (

@@ -68,10 +68,11 @@ export function RotationsLedger({ draft, readOnly }: Props) {
     if (value === null || value === undefined || value === '') return '';
     if (column.key === 'age_ma') {
       const used = row.tone === 'in use' || row.computed;
-      return used ? (
-        <span className="font-semibold">{ageValue(value as number)}</span>
-      ) : (
-        ageValue(value as number)
+      return (
+        <span className={used ? 'font-semibold' : ''}>
+          {row.ruled && <span className="sr-only">hand-over, </span>}
+          {ageValue(value as number)}
+        </span>
       );
     }
     if (column.numeric)
@@ -200,7 +201,7 @@ function useRows(draft: Draft, code: string | null): readonly GridRow[] {
 }
 
 const HandOverMark = () => (
-  <svg viewBox="0 0 8 8" className="fill-ochre mt-1.5 size-2" role="img" aria-label="hand-over">
+  <svg viewBox="0 0 8 8" className="fill-ochre mt-1.5 size-2" aria-hidden="true">
     <path d="M4 0 8 4 4 8 0 4Z" />
   </svg>
 );
