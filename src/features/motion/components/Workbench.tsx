@@ -20,20 +20,22 @@ interface Props {
   readonly store: WorkbenchStore;
   /** The ledger under the log. */
   readonly ledger: ReactNode;
+  /** Tools over the globe. */
+  readonly tools?: ReactNode;
   /** A line under the title block: loading, offline. */
   readonly notice?: ReactNode;
 }
 
-export function Workbench({ head, scene, store, ledger, notice }: Props) {
+export function Workbench({ head, scene, store, ledger, tools, notice }: Props) {
   return (
     <BenchProvider store={store} scene={scene}>
       <SvgPatterns />
-      <Panels head={head} ledger={ledger} notice={notice} />
+      <Panels head={head} ledger={ledger} tools={tools} notice={notice} />
     </BenchProvider>
   );
 }
 
-function Panels({ head, ledger, notice }: Pick<Props, 'head' | 'ledger' | 'notice'>) {
+function Panels({ head, ledger, tools, notice }: Pick<Props, 'head' | 'ledger' | 'tools' | 'notice'>) {
   useKeys();
   const phone = useMedia(PHONE);
   if (phone) return <PhoneWorkbench head={head} notice={notice} />;
@@ -49,7 +51,7 @@ function Panels({ head, ledger, notice }: Pick<Props, 'head' | 'ledger' | 'notic
           <LogPanel />
         </div>
         <div className="border-frame relative min-h-0 border-b max-xl:h-[600px]">
-          <GlobePanel importHref={head.pages.find(({ id }) => id === 'import')?.href} />
+          <GlobePanel importHref={head.pages.find(({ id }) => id === 'import')?.href} tools={tools} />
           <div className="absolute right-5 bottom-2">{notice}</div>
           <Keys />
         </div>

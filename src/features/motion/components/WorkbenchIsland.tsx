@@ -9,6 +9,7 @@ import { turnTo } from '../store/actions';
 import { type Scene } from '../scene/scene';
 import { followInAddress, fromQuery } from '../store/link';
 import { createWorkbench, type Linked } from '../store/state';
+import { OutlineDesk } from './globe/OutlineDesk';
 import { LedgerDesk } from './ledger/LedgerDesk';
 import { type Head } from './title/head';
 import { PhoneHint } from './use-media';
@@ -76,6 +77,7 @@ function Loaded({ slug, version, head, search, heldStill, readOnly }: WorkbenchI
       notice={notice}
       waiting={waiting}
       ledger={<LedgerDesk slug={slug} version={version} readOnly={readOnly} />}
+      tools={readOnly === null ? <OutlineDesk slug={slug} /> : null}
     />
   );
 }
@@ -87,6 +89,7 @@ function Ready({
   notice,
   waiting,
   ledger,
+  tools,
 }: {
   scene: Scene;
   head: Head;
@@ -94,6 +97,7 @@ function Ready({
   notice: ReactNode;
   waiting: boolean;
   ledger: ReactNode;
+  tools: ReactNode;
 }) {
   const [store] = useState(() => createWorkbench(complete(scene, stated)));
   useEffect(() => followInAddress(store, window), [store]);
@@ -104,7 +108,7 @@ function Ready({
     if (store.getState().centre === guessed.current) turnTo(store, homeCentre(scene, store.getState()));
     guessed.current = null;
   }, [waiting, scene, store]);
-  return <Workbench head={head} scene={scene} store={store} ledger={ledger} notice={notice} />;
+  return <Workbench head={head} scene={scene} store={store} ledger={ledger} tools={tools} notice={notice} />;
 }
 
 const Progress = ({ words }: { words: string }) => (

@@ -1,5 +1,5 @@
 /** The right half of the workbench: globe, map, or then and now, with the legend. */
-import { useMemo } from 'react';
+import { useMemo, type ReactNode } from 'react';
 import { Segmented } from '../../../../components/ui/Segmented';
 import { age as ageText, coordinates, count, meridian, parallel } from '../../format';
 import { frameAt, matrixOf } from '../../scene/frame';
@@ -78,12 +78,12 @@ function UnderPointer() {
 /** In place of a picture: there is nothing to draw yet, and two ways on. */
 function NoBlocks({ importHref }: { importHref: string | undefined }) {
   return (
-    <div className="bg-paper/80 absolute inset-0 flex flex-col items-center justify-center gap-2">
+    <div className="pointer-events-none absolute inset-0 flex flex-col items-center justify-center gap-2">
       <p className="t-answer">No blocks with an outline yet.</p>
       <p className="t-body text-ink-2">
         Add one in the ledger{importHref && ', or '}
         {importHref && (
-          <a className="link" href={importHref}>
+          <a className="link pointer-events-auto" href={importHref}>
             import a file
           </a>
         )}
@@ -93,7 +93,13 @@ function NoBlocks({ importHref }: { importHref: string | undefined }) {
   );
 }
 
-export function GlobePanel({ importHref }: { readonly importHref?: string | undefined }) {
+interface Props {
+  readonly importHref?: string | undefined;
+  /** What can be done on the globe itself, over it. */
+  readonly tools?: ReactNode;
+}
+
+export function GlobePanel({ importHref, tools }: Props) {
   const { store, scene } = useBench();
   const view = useWorkbench((state) => state.view);
   const frame = useFrameName();
@@ -121,6 +127,7 @@ export function GlobePanel({ importHref }: { readonly importHref?: string | unde
             />
             <UnderPointer />
             {empty && <NoBlocks importHref={importHref} />}
+            {view === 'globe' && tools}
           </div>
           <div className="overflow-auto py-4 max-md:hidden">
             <Legend />

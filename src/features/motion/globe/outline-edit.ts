@@ -1,0 +1,62 @@
+/** An outline under edit: its corners as unit vectors in the block's present coordinates, first not repeated. */
+import type { MultiPolygon, Polygon } from 'geojson';
+import { readRing, ringArea, toLatLon } from '../../../kernel/sphere';
+import { selfCrossing } from '../../interchange/rules/rings';
+import { turn, turnBack, unit, vectorOf, type Vec } from './matrix';
+
+export type Corners = readonly Vec[];
+
+/** Degrees are kept to four decimals: 11 m. */
+const rounded = (deg: number): number => Math.round(deg * 1e4) / 1e4;
+
+export const added = (corners: Corners, v: Vec): Corners => [...corners, v];
+export const moved = (corners: Corners, i: number, v: Vec): Corners =>
+  corners.map((c, k) => (k === i ? v : c));
+export const removed = (corners: Corners, i: number): Corners => corners.filter((_, k) => k !== i);
+
+/** A new corner in the middle of the edge from corner i to the next. */
+export function split(corners: Corners, i: number): Corners {
+  const next = corners[(i + 1) % corners.length];
+  const from = corners[i];
+  return from && next ? [...corners.slice(0, i + 1), middle(from, next), ...corners.slice(i + 1)] : corners;
+}
+
+export const middle = (a: Vec, b: Vec): Vec => unit([a[0] + b[0], a[1] + b[1], a[2] + b[2]]);
+
+/** A corner moved by degrees east and north, not past a pole. */
+export function nudged(v: Vec, east: number, north: number): Vec {
+  const { lat, lon } = toLatLon(v);
+  const to = Math.max(-89.9, Math.min(89.9, lat + north));
+  return vectorOf(to, lon + east / Math.max(0.02, Math.cos((to * Math.PI) / 180)));
+}
+
+/** From where a corner is seen at an age to the block's present coordinates; `pose` carries the block to that age. Inverse: {@link seen}. */
+export const present = (v: Vec, pose: ArrayLike<number> | null): Vec => (pose ? turnBack(pose, v) : v);
+export const seen = (v: Vec, pose: ArrayLike<number> | null): Vec => (pose ? turn(pose, v) : v);
+
+export const toPosition = (v: Vec): [number, number] => {
+  const { lat, lon } = toLatLon(v);
+  return [rounded(lon), rounded(lat)];
+};
+
+/** What keeps the corners from being an outline, in words; null where nothing does. */
+export function outlineFault(corners: Corners): string | null {
+  if (corners.length < 3) return 'An outline needs three corners or more.';
+  const ring = corners.map(toPosition);
+  return selfCrossing([...ring, ring[0]!]) ? 'The outline crosses itself.' : null;
+}
+
+/** The outline as GeoJSON: closed, anticlockwise. Inverse: {@link cornersOf}. */
+export function toPolygon(corners: Corners): Polygon {
+  const ring = corners.map(toPosition);
+  if (ringArea(readRing(ring)) < 0) ring.reverse();
+  return { type: 'Polygon', coordinates: [[...ring, ring[0]!]] };
+}
+
+/** Corners of an outline of one ring; null for one with holes or several parts, which is edited as a file. */
+export function cornersOf(geometry: Polygon | MultiPolygon): Corners | null {
+  const polygons = geometry.type === 'Polygon' ? [geometry.coordinates] : geometry.coordinates;
+  const [rings] = polygons;
+  if (polygons.length !== 1 || rings?.length !== 1) return null;
+  return readRing(rings[0]!).map(([x, y, z]): Vec => [x, y, z]);
+}
