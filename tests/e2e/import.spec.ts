@@ -59,3 +59,24 @@ test('two files with mistakes are previewed, mended and accepted, and the blocks
   await expect(page.getByRole('heading', { name: 'Two blocks: workbench' })).toBeAttached();
   await expect(page.getByRole('grid', { name: /Rotations/ })).toContainText('12.5');
 });
+
+test('on the real Earth one click cuts the present coast by the outlines', async ({ page }) => {
+  const slug = 'southern-continent';
+  await ownProject(page, slug);
+  const outline = block('austral', square(110, -45, 156, -10));
+  const text = collection([outline, block('axis', null)]);
+  await page
+    .getByLabel('File to import')
+    .setInputFiles({ name: 'blocks.geojson', mimeType: 'text/plain', buffer: Buffer.from(text) });
+  await page.getByRole('button', { name: 'Accept 2 rows' }).click();
+  await expect(page.getByText('2 rows written to the draft')).toBeVisible();
+  await page.getByRole('button', { name: 'Cut the present coast by the outlines' }).click();
+  await page.waitForURL(`**/projects/${slug}/workbench**`);
+  const features = (await (
+    await page.request.get(`/api/projects/${slug}/features?version=draft`)
+  ).json()) as { items: { kind: string; name: string; source: string; vertices: number }[] };
+  expect(features.items).toHaveLength(1);
+  expect(features.items[0]).toMatchObject({ kind: 'layer', name: 'austral block, present coast' });
+  expect(features.items[0]!.source).toContain('Natural Earth');
+  expect(features.items[0]!.vertices).toBeGreaterThan(500);
+});

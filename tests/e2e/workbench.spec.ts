@@ -22,7 +22,9 @@ test.describe('reading', () => {
     await expect(page.getByText('21.1° S, 36.6° E', { exact: true })).toBeVisible();
     await page.waitForTimeout(500);
     const requests: string[] = [];
-    page.on('request', (request) => requests.push(request.url()));
+    page.on('request', (request) => {
+      if (new URL(request.url()).pathname.startsWith('/api/')) requests.push(request.url());
+    });
     const box = (await slider(page).boundingBox())!;
     await page.mouse.move(box.x + box.width / 2, box.y + box.height / 2);
     await page.mouse.down();

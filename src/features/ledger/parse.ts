@@ -12,7 +12,8 @@ export interface PlacedCells {
 }
 
 /** A place inside a place; a request of one row has no place of its own. */
-export const within = (path: string, inner: string | undefined): string => [path, inner].filter(Boolean).join('.');
+export const within = (path: string, inner: string | undefined): string =>
+  [path, inner].filter(Boolean).join('.');
 
 const at = (path: string, error: FieldError): FieldError => ({ ...error, path: within(path, error.path) });
 

@@ -19,7 +19,7 @@ interface Props {
 }
 
 /** Handles nearer than this, CSS pixels, are left out until the globe is nearer. */
-const LEAST_APART = 7;
+const LEAST_APART = 12;
 const FEW = 60;
 const STEP_DEG = 0.1;
 const BIG_STEP_DEG = 1;
