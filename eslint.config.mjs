@@ -52,6 +52,8 @@ export default ts.config(
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/no-floating-promises': 'error',
       '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false } }],
+      // `import { type T }` still runs the module: a contract read for its types would bring its schemas to the browser.
+      '@typescript-eslint/no-import-type-side-effects': 'error',
       eqeqeq: ['error', 'always', { null: 'ignore' }],
       // Values from files are written out for messages, whatever they are.
       '@typescript-eslint/no-base-to-string': 'off',
@@ -92,6 +94,27 @@ export default ts.config(
     ],
     [SERVER_ONLY, DATABASE, LUCIA],
   ),
+  {
+    files: [
+      'src/features/**/{client,address}.ts',
+      'src/features/**/{components,grid,globe,store,scene,log}/**',
+    ],
+    rules: {
+      '@typescript-eslint/no-restricted-imports': [
+        'error',
+        {
+          patterns: [
+            {
+              group: ['**/contract', 'zod'],
+              allowTypeImports: true,
+              message:
+                'Schemas weigh 100 kB in the browser: import types only, and keep constants in a file of their own.',
+            },
+          ],
+        },
+      ],
+    },
+  },
   border(['src/pages/**/*.ts', 'src/features/**/server.ts'], [LUCIA]),
   {
     files: ['tests/**/*.{ts,tsx}'],

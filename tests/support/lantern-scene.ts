@@ -7,7 +7,7 @@ import {
   type Evidence,
   type RotationInput,
 } from '../../src/kernel/rotations/types';
-import { type Direction } from '../../src/features/ledger/contract';
+import type { Direction } from '../../src/features/ledger/contract';
 import { lineShape, polygonShape } from '../../src/features/motion/globe/shape';
 import { sceneOf, type Scene, type SceneLine, type ScenePoint } from '../../src/features/motion/scene/scene';
 

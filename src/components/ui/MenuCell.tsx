@@ -1,5 +1,5 @@
 /** A cell of the title block that opens its own list. */
-import { type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { Button, Header, Menu, MenuItem, MenuSection, MenuTrigger, Popover } from 'react-aria-components';
 
 export interface Choice {

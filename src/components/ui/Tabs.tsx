@@ -1,5 +1,5 @@
 /** Tabs on a hairline; the open one is underlined in ink. */
-import { type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { Tab, TabList, TabPanel, Tabs as AriaTabs } from 'react-aria-components';
 
 export interface TabItem<K extends string> {

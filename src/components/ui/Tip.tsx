@@ -1,5 +1,5 @@
 /** A few words that appear beside a control on hover or focus. */
-import { type ReactElement } from 'react';
+import type { ReactElement } from 'react';
 import { Tooltip, TooltipTrigger } from 'react-aria-components';
 
 export function Tip({ children, words }: { readonly children: ReactElement; readonly words: string }) {

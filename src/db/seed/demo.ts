@@ -5,7 +5,7 @@
 import { eq } from 'drizzle-orm';
 import { membership, project, user } from '~/db/schema';
 import { DEMO_PEOPLE } from '~/features/accounts/people';
-import type { ImportKind } from '~/features/interchange/contract';
+import type { ImportKind } from '~/features/interchange/files';
 import { importInto } from '~/features/interchange/server';
 import type { Edit, Row, Table } from '~/features/ledger/contract';
 import { editDraft } from '~/features/ledger/server';

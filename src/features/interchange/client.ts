@@ -1,5 +1,6 @@
 /** Sends a file to be read or taken; the same call previews (`dry_run`) and writes. */
-import type { Answers, ColumnMapping, ImportKind, ImportReport } from './contract';
+import type { Answers, ColumnMapping, ImportReport } from './contract';
+import type { ImportKind } from './files';
 
 export interface ImportRequest {
   readonly slug: string;

@@ -1,20 +1,6 @@
 /** Shapes of imports and exports, shared by server and client. */
 import { z } from 'zod';
-
-/** What a file can hold; the names are those of the files of the project's own formats. */
-export const IMPORT_KINDS = ['blocks', 'rotations', 'features', 'directions'] as const;
-export type ImportKind = (typeof IMPORT_KINDS)[number];
-
-export const EXPORT_NAMES = [
-  'blocks.geojson',
-  'rotations.csv',
-  'features.geojson',
-  'directions.csv',
-] as const;
-export type ExportName = (typeof EXPORT_NAMES)[number];
-
-/** The largest file that one import reads. */
-export const IMPORT_LIMIT_BYTES = 64 * 1024 * 1024;
+import { IMPORT_KINDS } from './files';
 
 /** A row that was not taken, and how to mend it. `column` is a heading, a property or `geometry`. */
 export const rejectedRow = z.object({

@@ -1,10 +1,10 @@
 /** What the workbench asks of the server, as queries: outlines once by hash, the rest by project and version. */
 import { keepPreviousData, QueryClient, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo } from 'react';
-import { type Model } from '../../kernel/rotations/types';
-import { type Block, type Direction, type Feature } from '../ledger/contract';
-import { type Project } from '../projects/contract';
-import { type MotionsAnswer } from './contract';
+import type { Model } from '../../kernel/rotations/types';
+import type { Block, Direction, Feature } from '../ledger/contract';
+import type { Project } from '../projects/contract';
+import type { MotionsAnswer } from './contract';
 import { NOT_YET } from './globe/shape';
 import { decodeShape, type Decoded } from './scene/decode';
 import { sceneOf, type Scene } from './scene/scene';

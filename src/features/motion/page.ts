@@ -1,11 +1,11 @@
 /** What the workbench's page reads before it is drawn. */
 import { loadState, type State } from '~/features/ledger/state';
-import { type Project } from '~/features/projects/contract';
+import type { Project } from '~/features/projects/contract';
 import { may } from '~/server/access';
 import { openPage } from '~/server/page';
 import { Problem } from '~/server/problem';
-import { type WorkbenchIslandProps } from './components/WorkbenchIsland';
-import { type Payload } from './components/pictures/payload';
+import type { WorkbenchIslandProps } from './components/WorkbenchIsland';
+import type { Payload } from './components/pictures/payload';
 import { modelOf } from './model';
 
 /** Larger states than this are fetched by the island, so that the page itself stays light. */

@@ -1,6 +1,6 @@
 /** The address of a slice, shared by the print page's preview, its downloads and its own link. */
 import { DEFAULT_PROJECTION, type ProjectionName } from '../../kernel/cartography/projections';
-import { USUAL_LAYERS, type Layer, type Paper } from './contract';
+import { USUAL_LAYERS, type Layer, type Paper } from './choices';
 
 /** What the print page holds; every field has a value, so that the form is never half-filled. */
 export interface SliceSettings {

@@ -6,14 +6,7 @@ import {
   type ProjectionName,
 } from '../../kernel/cartography/projections';
 import { slug } from '../ledger/contract';
-
-export const LAYERS = ['graticule', 'coasts', 'names', 'velocity', 'path', 'ellipse'] as const;
-export type Layer = (typeof LAYERS)[number];
-export const USUAL_LAYERS: readonly Layer[] = ['graticule', 'coasts', 'names', 'path', 'ellipse'];
-
-/** Paper sizes in millimetres, long side first (ISO 216). */
-export const PAPERS = { a3: [420, 297], a4: [297, 210], a5: [210, 148] } as const;
-export type Paper = keyof typeof PAPERS;
+import { LAYERS, USUAL_LAYERS, type Layer } from './choices';
 
 /** Other spellings of projection names that people try. */
 const ALIASES: Record<string, ProjectionName> = {

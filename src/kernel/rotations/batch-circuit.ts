@@ -1,6 +1,6 @@
 import { type Beyond, evaluateLeg, legAt } from './leg-at';
 import { createIndex } from './model-index';
-import { type Model } from './types';
+import type { Model } from './types';
 
 /** Why the circuit above a block ends at its top. */
 export const TOP = { root: 0, noRotations: 1, outsideRotations: 2, missingReference: 3, loop: 4 } as const;

@@ -1,6 +1,6 @@
 import { matricesAt, statusCode } from './batch';
-import { type PoseOptions } from './circuit';
-import { type Model } from './types';
+import type { PoseOptions } from './circuit';
+import type { Model } from './types';
 
 /** Interleaved x, y, z. */
 export type Coordinates = Float64Array | Float32Array;

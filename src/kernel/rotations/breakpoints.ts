@@ -1,5 +1,5 @@
 import { findBlock } from './model-index';
-import { type Model } from './types';
+import type { Model } from './types';
 
 /**
  * Ages, ascending, at which the circuit between two blocks may change its links: the ends of the legs of

@@ -3,7 +3,7 @@ import { type Beyond, evaluateLeg } from './leg-at';
 import { requireBlock } from './model-index';
 import { IDENTITY, inverse, multiply } from './quaternion';
 import { routeAt, type Step } from './route';
-import { type BlockInput, type Link, type Model, type Pose } from './types';
+import type { BlockInput, Link, Model, Pose } from './types';
 
 /** Worst error of a composed rotation, radians, for each link of the circuit. */
 export const LINK_ERROR_RAD = 4e-15;

@@ -4,14 +4,14 @@ import { stageBetween } from './interpolate';
 import { rowsToLegs } from './legs';
 import { fromPole } from './pole';
 import { angleOf, IDENTITY } from './quaternion';
-import {
-  type BlockInput,
-  type CompiledBlock,
-  type CompiledRow,
-  type Leg,
-  type Model,
-  type ModelProblem,
-  type RotationInput,
+import type {
+  BlockInput,
+  CompiledBlock,
+  CompiledRow,
+  Leg,
+  Model,
+  ModelProblem,
+  RotationInput,
 } from './types';
 
 /** A row at 0 Ma turned by more than this, degrees, is not the identity. */

@@ -1,5 +1,5 @@
 import { legAt } from './leg-at';
-import { type CompiledBlock, type ModelProblem } from './types';
+import type { CompiledBlock, ModelProblem } from './types';
 
 type Cycle = Extract<ModelProblem, { name: 'Cycle' }>;
 

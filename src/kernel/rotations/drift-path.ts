@@ -5,7 +5,7 @@ import { poseUncertainty } from '../uncertainty/pose-uncertainty';
 import { poseAt } from './circuit';
 import { rotate } from './quaternion';
 import { circuitRowAges } from './row-ages';
-import { type Model, type Status, type Vector3 } from './types';
+import type { Model, Status, Vector3 } from './types';
 import { poseVelocity, velocityAt } from './velocity';
 
 export interface DriftRequest {

@@ -4,7 +4,7 @@ import { EARTH_RADIUS_KM, toDegrees } from '../sphere/angles';
 import { circuitAt } from './circuit';
 import { evaluateLeg } from './leg-at';
 import { angleOf, between, inverse, multiply, rotate } from './quaternion';
-import { type CompiledBlock, type Leg, type Model, type Quaternion, type Vector3 } from './types';
+import type { CompiledBlock, Leg, Model, Quaternion, Vector3 } from './types';
 
 /**
  * Where a block's rotations change their reference: both placings, in the coordinates of the younger

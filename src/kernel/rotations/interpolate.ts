@@ -1,6 +1,6 @@
 import { normalizeVector, scale } from '../sphere/vector';
 import { between, exp, log, multiply } from './quaternion';
-import { type Quaternion, type Stage } from './types';
+import type { Quaternion, Stage } from './types';
 
 /**
  * Worst error of an interpolated rotation, radians, for stage angles up to 179°; beyond, it grows as 1/(π −

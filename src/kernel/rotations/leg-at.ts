@@ -1,5 +1,5 @@
 import { evaluateStage } from './interpolate';
-import { type CompiledBlock, type CompiledRow, type Leg, type Quaternion, type Stage } from './types';
+import type { CompiledBlock, CompiledRow, Leg, Quaternion, Stage } from './types';
 
 /** What to answer beyond the oldest row of a block: nothing, or the last stage going on at its rate. */
 export type Beyond = 'none' | 'hold last stage';

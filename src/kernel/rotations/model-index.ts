@@ -1,5 +1,5 @@
 import { KernelError } from '../errors';
-import { type CompiledBlock, type Model } from './types';
+import type { CompiledBlock, Model } from './types';
 
 const indexes = new WeakMap<Model, ReadonlyMap<string, number>>();
 

@@ -2,7 +2,7 @@ import { cosDegrees, normalizeLongitude, sinDegrees, toDegrees } from '../sphere
 import { angularDistance } from '../sphere/distance';
 import { toLatLon, toVector } from '../sphere/vector';
 import { angleOf, between, log } from './quaternion';
-import { type Quaternion } from './types';
+import type { Quaternion } from './types';
 
 /** An Euler pole in degrees; right-hand rule, positive anticlockwise seen from outside above the pole. */
 export interface Pole {

@@ -1,4 +1,4 @@
-import { type Matrix3, type Quaternion, type Vector3 } from './types';
+import type { Matrix3, Quaternion, Vector3 } from './types';
 
 /** No rotation. */
 export const IDENTITY: Quaternion = [1, 0, 0, 0];

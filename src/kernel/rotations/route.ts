@@ -1,6 +1,6 @@
-import { type Beyond } from './leg-at';
+import type { Beyond } from './leg-at';
 import { requireBlock } from './model-index';
-import { type CompiledBlock, type Leg, type Model, type Status } from './types';
+import type { CompiledBlock, Leg, Model, Status } from './types';
 import { type Walk, walkUp } from './walk';
 
 export interface Step {

@@ -1,6 +1,6 @@
 import { circuitBreakpoints } from './breakpoints';
 import { routeAt } from './route';
-import { type Model } from './types';
+import type { Model } from './types';
 
 /**
  * Ages, ascending, of the rows (implied ones too) of every link between a block and relative_to within a

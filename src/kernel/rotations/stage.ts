@@ -2,7 +2,7 @@ import { KernelError } from '../errors';
 import { scale } from '../sphere/vector';
 import { type PlacedPose, poseAt, type PoseOptions } from './circuit';
 import { between, exp, inverse, log, multiply } from './quaternion';
-import { type Model, type Pose, type Quaternion } from './types';
+import type { Model, Pose, Quaternion } from './types';
 
 /** Coordinates in which a stage pole is given: those of the reference, or the block's own present ones. */
 export type StageFrame = 'reference' | 'block';

@@ -3,8 +3,8 @@ import { circuitBreakpoints } from './breakpoints';
 import { circuitAt } from './circuit';
 import { requireBlock } from './model-index';
 import { between, log } from './quaternion';
-import { type Model } from './types';
-import { type AngularVelocity } from './velocity';
+import type { Model } from './types';
+import type { AngularVelocity } from './velocity';
 
 /** Step past the end of a leg, Myr, by which the older side of it is meant. */
 const JUST_OLDER_MYR = 1e-9;

@@ -5,7 +5,7 @@ import { eastNorth } from '../sphere/tangent';
 import { add, cross, dot, scale } from '../sphere/vector';
 import { type PlacedPose, poseAt } from './circuit';
 import { rotate } from './quaternion';
-import { type Link, type Model, type Status, type Vector3 } from './types';
+import type { Link, Model, Status, Vector3 } from './types';
 import { windowedVelocity } from './velocity-window';
 
 /** Worst error of a speed, mm/yr, for rates up to 10°/Myr. */

@@ -1,7 +1,7 @@
 import { KernelError } from '../errors';
 import { type Beyond, legAt } from './leg-at';
 import { findBlock } from './model-index';
-import { type CompiledBlock, type Leg, type Model } from './types';
+import type { CompiledBlock, Leg, Model } from './types';
 
 /** Why a walk up the circuit ends where it does. */
 export type WalkEnd = 'root' | 'no rotations' | 'outside rotations' | 'missing reference';

@@ -1,4 +1,4 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { angularDistance } from './distance';
 import { add, cross, dot, negate, normalizeVector, scale, subtract } from './vector';
 

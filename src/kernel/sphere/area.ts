@@ -1,4 +1,4 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { EARTH_RADIUS_KM } from './angles';
 import { eachEdge, type Inside, type Polygon, type Ring, TIE_TOLERANCE_SR } from './ring';
 import { add, cross, dot, norm, subtract } from './vector';

@@ -1,4 +1,4 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { cosDegrees, EARTH_RADIUS_KM, sinDegrees, toDegrees } from './angles';
 import { distanceKm } from './distance';
 import { eastNorth } from './tangent';

@@ -1,6 +1,6 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { halvesSphere, ringArea } from './area';
-import { type Inside, type Polygon, type Ring } from './ring';
+import type { Inside, Polygon, Ring } from './ring';
 
 /**
  * A place nearer to an edge than this, radians (6 µm on the ground), lies on the outline and counts as

@@ -1,5 +1,5 @@
 import { KernelError } from '../errors';
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { normalizeLongitude, toDegrees } from './angles';
 import { interpolateArc } from './arc';
 import { angularDistance } from './distance';

@@ -1,4 +1,4 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { toLatLon, toVector } from './vector';
 
 /** A closed ring of unit vectors, its first not repeated at the end; edges are great circles. */

@@ -1,4 +1,4 @@
-import { type Vector3 } from '../rotations/types';
+import type { Vector3 } from '../rotations/types';
 import { longitudeUndefined } from './vector';
 
 /**

@@ -1,4 +1,4 @@
-import { type Rank } from './units';
+import type { Rank } from './units';
 
 /**
  * [rank, name, base in Ma, colour]: youngest first within a rank; the top of a unit is the base of the one

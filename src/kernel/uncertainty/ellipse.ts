@@ -1,6 +1,6 @@
-import { type PlacedPose } from '../rotations/circuit';
+import type { PlacedPose } from '../rotations/circuit';
 import { rotate, unrotate } from '../rotations/quaternion';
-import { type Covariance, type Vector3 } from '../rotations/types';
+import type { Covariance, Vector3 } from '../rotations/types';
 import { EARTH_RADIUS_KM, toDegrees } from '../sphere/angles';
 import { azimuthOf } from '../sphere/azimuth';
 import { eastNorth } from '../sphere/tangent';

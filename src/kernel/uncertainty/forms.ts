@@ -1,5 +1,5 @@
 import { KernelError } from '../errors';
-import { type Covariance, type Matrix3 } from '../rotations/types';
+import type { Covariance, Matrix3 } from '../rotations/types';
 import { acos, toDegrees, toRadians } from '../sphere/angles';
 import { CHI_SQUARE_2_95 } from './f-distribution';
 import { scaleCovariance, toSymmetric, trace } from './matrix3';

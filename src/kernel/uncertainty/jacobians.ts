@@ -1,4 +1,4 @@
-import { type Matrix3, type Vector3 } from '../rotations/types';
+import type { Matrix3, Vector3 } from '../rotations/types';
 import { addMatrices, crossMatrix, IDENTITY3, multiplyMatrices, scaleMatrix } from './matrix3';
 
 /**

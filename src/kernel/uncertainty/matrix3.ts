@@ -1,4 +1,4 @@
-import { type Covariance, type Matrix3, type Vector3 } from '../rotations/types';
+import type { Covariance, Matrix3, Vector3 } from '../rotations/types';
 
 export const IDENTITY3: Matrix3 = [1, 0, 0, 0, 1, 0, 0, 0, 1];
 

@@ -1,5 +1,5 @@
-import { type PlacedPose } from '../rotations/circuit';
-import { type CompiledRow, type Covariance, type Link, type Model } from '../rotations/types';
+import type { PlacedPose } from '../rotations/circuit';
+import type { CompiledRow, Covariance, Link, Model } from '../rotations/types';
 import { addCovariances, congruence, outer, scaleCovariance, trace, ZERO_COVARIANCE } from './matrix3';
 import { poseSensitivities, type Sensitivities, type Sensitivity } from './sensitivity';
 

@@ -1,7 +1,7 @@
-import { type PlacedPose } from '../rotations/circuit';
+import type { PlacedPose } from '../rotations/circuit';
 import { isIdentityAtPresent } from '../rotations/compile';
 import { exp, inverse, log, multiply, toMatrix } from '../rotations/quaternion';
-import { type CompiledRow, type Link, type Matrix3, type Vector3 } from '../rotations/types';
+import type { CompiledRow, Link, Matrix3, Vector3 } from '../rotations/types';
 import { add, scale } from '../sphere/vector';
 import { leftJacobianInverse, rightJacobian, rightJacobianInverse } from './jacobians';
 import { addMatrices, applyMatrix, IDENTITY3, multiplyMatrices, scaleMatrix, transpose } from './matrix3';

@@ -1,7 +1,7 @@
-import { type PlacedPose } from '../rotations/circuit';
-import { type CompiledRow, type Vector3 } from '../rotations/types';
+import type { PlacedPose } from '../rotations/circuit';
+import type { CompiledRow, Vector3 } from '../rotations/types';
 import { tangentCovariance } from './ellipse';
-import { type RotationUncertainty } from './pose-uncertainty';
+import type { RotationUncertainty } from './pose-uncertainty';
 
 export interface Shares {
   /**

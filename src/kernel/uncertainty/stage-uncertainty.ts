@@ -1,5 +1,5 @@
 import { inverse, toMatrix } from '../rotations/quaternion';
-import { type StageFrame, type StageRotation } from '../rotations/stage';
+import type { StageFrame, StageRotation } from '../rotations/stage';
 import { type RotationUncertainty, uncertaintyOf } from './pose-uncertainty';
 import { composed, inverted, poseSensitivities } from './sensitivity';
 

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { Gestures, type GestureHost } from '../../../src/features/motion/globe/gesture';
-import { type Centre } from '../../../src/features/motion/globe/matrix';
+import type { Centre } from '../../../src/features/motion/globe/matrix';
 
 function bench() {
   const seen = {

@@ -1,5 +1,5 @@
 /** A path sink that flattens what it is given, and a non-zero point test over the result. */
-import { type PathSink } from '../../../src/features/motion/globe/clip';
+import type { PathSink } from '../../../src/features/motion/globe/clip';
 
 type XY = [number, number];
 

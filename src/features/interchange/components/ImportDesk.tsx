@@ -1,13 +1,8 @@
 /** Bringing files in: choose, see what would be written and what is wrong, answer what is open, accept. */
 import { useRef, useState } from 'react';
 import { guessKind, ImportRefused, sendImport } from '../client';
-import {
-  IMPORT_KINDS,
-  type Answers,
-  type ColumnMapping,
-  type ImportKind,
-  type ImportReport,
-} from '../contract';
+import type { Answers, ColumnMapping, ImportReport } from '../contract';
+import { IMPORT_KINDS, type ImportKind } from '../files';
 import { ColumnChoice } from './ColumnChoice';
 import { FilePicker } from './FilePicker';
 import { PreviewTable } from './PreviewTable';

@@ -10,7 +10,7 @@ import { LogPanel } from './log/LogPanel';
 import { Notebook, useAnswer, Within } from './notebook/Notebook';
 import { MenuCell } from '../../../components/ui/MenuCell';
 import { epochOf, FROZEN, HeldStillCell } from './title/TitleBlock';
-import { type Head } from './title/head';
+import type { Head } from './title/head';
 
 function PhoneHead({ head }: { head: Head }) {
   const account = head.account?.links ?? [{ id: 'sign-in', label: 'Sign in', href: head.signIn }];

@@ -1,5 +1,5 @@
 /** The workbench before its numbers are there: title block, axes to come, and what is being read. */
-import { type Head } from './title/head';
+import type { Head } from './title/head';
 
 export function Waiting({
   head,

@@ -1,7 +1,7 @@
 /** The workbench: title block, log beside globe, ledger beside notebook. */
-import { type ReactNode } from 'react';
-import { type Scene } from '../scene/scene';
-import { type WorkbenchStore } from '../store/state';
+import type { ReactNode } from 'react';
+import type { Scene } from '../scene/scene';
+import type { WorkbenchStore } from '../store/state';
 import { BenchProvider } from './bench';
 import { GlobePanel } from './globe/GlobePanel';
 import { Keys } from './help/Keys';
@@ -10,7 +10,7 @@ import { SvgPatterns } from './log/SvgPatterns';
 import { Notebook } from './notebook/Notebook';
 import { PhoneWorkbench } from './PhoneWorkbench';
 import { TitleBlock } from './title/TitleBlock';
-import { type Head } from './title/head';
+import type { Head } from './title/head';
 import { useKeys } from './use-keys';
 import { PHONE, useMedia } from './use-media';
 

@@ -1,17 +1,17 @@
 /** The workbench of one project, from the server's answers. */
 import { QueryClientProvider } from '@tanstack/react-query';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
-import { type MotionsAnswer } from '../contract';
+import type { MotionsAnswer } from '../contract';
 import { AnswerError, createClient, keys, useDraftEvents, useScene, type Version } from '../client';
 import { count } from '../format';
 import { complete, homeCentre } from '../scene/defaults';
 import { turnTo } from '../store/actions';
-import { type Scene } from '../scene/scene';
+import type { Scene } from '../scene/scene';
 import { followInAddress, fromQuery } from '../store/link';
 import { createWorkbench, type Linked } from '../store/state';
 import { OutlineDesk } from './globe/OutlineDesk';
 import { LedgerDesk } from './ledger/LedgerDesk';
-import { type Head } from './title/head';
+import type { Head } from './title/head';
 import { PhoneHint } from './use-media';
 import { Waiting } from './Waiting';
 import { Workbench } from './Workbench';

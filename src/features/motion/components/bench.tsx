@@ -1,14 +1,14 @@
 /** What the parts of one workbench share: its store, its scene, and what follows from both. */
 import { createContext, useContext, useEffect, useMemo, useState, type ReactNode } from 'react';
 import { useStore } from 'zustand';
-import { type Model } from '../../../kernel/rotations/types';
-import { type Centre } from '../globe/matrix';
+import type { Model } from '../../../kernel/rotations/types';
+import type { Centre } from '../globe/matrix';
 import { homeCentre } from '../scene/defaults';
 import { frameKeeper, type Frame } from '../scene/frame';
 import { selectedPoint, type NamedPoint } from '../scene/points';
-import { type Scene } from '../scene/scene';
+import type { Scene } from '../scene/scene';
 import { trackOf, type Track } from '../scene/track';
-import { type WorkbenchState, type WorkbenchStore } from '../store/state';
+import type { WorkbenchState, WorkbenchStore } from '../store/state';
 
 interface Bench {
   readonly store: WorkbenchStore;

@@ -1,5 +1,5 @@
 /** Where a block shows on the canvas: the box of its visible vertices and the mean of them. */
-import { type Ground } from './ground';
+import type { Ground } from './ground';
 import { turn } from './matrix';
 import { vertex, type Shape } from './shape';
 

@@ -8,7 +8,7 @@
  */
 import { contains } from './contains';
 import { turnBack } from './matrix';
-import { type Points, type Shape } from './shape';
+import type { Points, Shape } from './shape';
 
 /** What a path is drawn on: a canvas context, a Path2D, or a test's recorder. */
 export interface PathSink {

@@ -1,8 +1,8 @@
 /** Sliding a flat map: the grabbed place keeps to the pointer in longitude; nearer than the whole map, in latitude too. */
 import { flatProjection } from './ground-flat';
-import { type Centre } from './matrix';
-import { type XY } from './pen';
-import { type Picture } from './picture';
+import type { Centre } from './matrix';
+import type { XY } from './pen';
+import type { Picture } from './picture';
 
 /** A wider step than this, device pixels, is one degree measured again. */
 const PROBE = 1;

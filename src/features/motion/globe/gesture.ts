@@ -2,8 +2,8 @@
  * Pointer gestures over a globe or map: idle, pointing, dragging, pinching. A press becomes a drag once it has moved;
  * released before that it picks. Escape during a drag puts the view back as it was.
  */
-import { type Centre } from './matrix';
-import { type XY } from './pen';
+import type { Centre } from './matrix';
+import type { XY } from './pen';
 
 export interface GestureHost {
   /** Centre and zoom now. */

@@ -2,8 +2,8 @@
 import { geoGraticule, geoPath, type GeoProjection, type GeoStream } from 'd3-geo';
 import { geoMollweide } from 'd3-geo-projection';
 import { meridian, parallel } from '../format';
-import { type PathSink } from './clip';
-import { type Figure, type Ground, type GroundOptions } from './ground';
+import type { PathSink } from './clip';
+import type { Figure, Ground, GroundOptions } from './ground';
 import { placeOf, vectorOf } from './matrix';
 import { levelFor, type Points, type Shape } from './shape';
 

@@ -1,6 +1,6 @@
 /** The orthographic globe. */
-import { type Clipper, type Disc } from './clip';
-import { type Ground, type GroundOptions } from './ground';
+import type { Clipper, Disc } from './clip';
+import type { Ground, GroundOptions } from './ground';
 import { multiply, turn, turnBack, viewMatrix, type Mat } from './matrix';
 import { paintDisc, paintGraticule, paintLimb, paintLimbLabels, meridianFigures } from './paint-sphere';
 import { place, viewOf } from './pen';

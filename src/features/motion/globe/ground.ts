@@ -1,8 +1,8 @@
 /** What blocks and marks are drawn on: the orthographic globe or a flat map. Coordinates are device pixels. */
-import { type PathSink, type Visibility } from './clip';
-import { type Vec } from './matrix';
-import { type Pen, type XY } from './pen';
-import { type Shape } from './shape';
+import type { PathSink, Visibility } from './clip';
+import type { Vec } from './matrix';
+import type { Pen, XY } from './pen';
+import type { Shape } from './shape';
 
 export interface Ground {
   readonly width: number;

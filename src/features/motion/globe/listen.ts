@@ -1,6 +1,6 @@
 /** Pointer, wheel and leave events of an element as gestures, in its own CSS pixels. */
-import { type Gestures } from './gesture';
-import { type XY } from './pen';
+import type { Gestures } from './gesture';
+import type { XY } from './pen';
 
 const WHEEL = 0.0015;
 const PINCH_WHEEL = 0.01;

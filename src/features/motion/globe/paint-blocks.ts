@@ -1,9 +1,9 @@
 /** Fills and strokes of blocks and of the coasts they carry, in device pixels. */
-import { type Evidence } from '../../../kernel/rotations/types';
-import { type Ground } from './ground';
-import { type Palette } from './palette';
-import { type Patterns } from './patterns';
-import { type Shape } from './shape';
+import type { Evidence } from '../../../kernel/rotations/types';
+import type { Ground } from './ground';
+import type { Palette } from './palette';
+import type { Patterns } from './patterns';
+import type { Shape } from './shape';
 
 export interface DrawnBlock {
   readonly evidence: Evidence;

@@ -1,5 +1,5 @@
 /** Figures of the graticule, where no name or mark stands. */
-import { type Ground } from './ground';
+import type { Ground } from './ground';
 import { overlap, type Box } from './labels';
 import { font, haloText, type Pen } from './pen';
 

@@ -1,9 +1,9 @@
 /** Marks over the blocks: velocities, the separation line, the cursor's cross, names of seas. */
 import { kilometres } from '../format';
-import { type Arrow } from '../scene/arrows';
-import { type Separation } from '../scene/separation';
-import { type Box } from './labels';
-import { type Ground } from './ground';
+import type { Arrow } from '../scene/arrows';
+import type { Separation } from '../scene/separation';
+import type { Box } from './labels';
+import type { Ground } from './ground';
 import { unit, type Vec } from './matrix';
 import { font, haloText, type Pen, type XY } from './pen';
 

@@ -1,6 +1,6 @@
 /** Names of blocks: inside where there is room, beside where there is not, on two lines near the limb. */
-import { type Extent } from './block-extent';
-import { type Kept } from './paint-track';
+import type { Extent } from './block-extent';
+import type { Kept } from './paint-track';
 import { placeLabels, type Box, type LabelWish } from './labels';
 import { font, haloText, type Pen } from './pen';
 

@@ -2,8 +2,8 @@
 import { meridian, parallel } from '../format';
 import { equator, graticule } from './graticule';
 import { turn, vectorOf } from './matrix';
-import { type Figure } from './ground';
-import { type Look } from './ground-globe';
+import type { Figure } from './ground';
+import type { Look } from './ground-globe';
 import { font, place, type Pen } from './pen';
 
 /** Distance between the limb's two circles, CSS pixels. */

@@ -1,9 +1,9 @@
 /** The drift path: solid towards the past, dotted towards what was yet to come, ticks, ages and 95 % ellipses. */
 import { number } from '../format';
-import { type Track, type TrackPoint } from '../scene/track';
+import type { Track, TrackPoint } from '../scene/track';
 import { ELLIPSE_POINTS, ellipsePoints } from './ellipse';
-import { type Box } from './labels';
-import { type Ground } from './ground';
+import type { Box } from './labels';
+import type { Ground } from './ground';
 import { dash, font, haloText, type Pen, type XY } from './pen';
 
 /** What names must not cover, and what they should keep off. */

@@ -3,7 +3,7 @@
  * turns slides under its pattern. Cells and marks are those of src/styles/tokens.css.
  */
 import { EVIDENCE, type Evidence } from '../../../kernel/rotations/types';
-import { type Palette } from './palette';
+import type { Palette } from './palette';
 
 export type Patterns = Readonly<Record<Evidence, CanvasPattern | string>>;
 

@@ -1,7 +1,7 @@
 /** A canvas to draw on in device pixels, with what every painter needs. */
-import { type Clipper, type Disc } from './clip';
-import { type Vec } from './matrix';
-import { type Palette } from './palette';
+import type { Clipper, Disc } from './clip';
+import type { Vec } from './matrix';
+import type { Palette } from './palette';
 
 export interface Pen {
   readonly ctx: CanvasRenderingContext2D;

@@ -1,14 +1,14 @@
 /** One picture: what is drawn, where, and how. */
-import { type Frame } from '../scene/frame';
-import { type NamedPoint } from '../scene/points';
+import type { Frame } from '../scene/frame';
+import type { NamedPoint } from '../scene/points';
 import { holdsAt, outlineAt, type Scene } from '../scene/scene';
-import { type Separation } from '../scene/separation';
-import { type Track } from '../scene/track';
-import { type Layer } from '../store/state';
-import { type GroundOptions } from './ground';
-import { type Vec } from './matrix';
-import { type DrawnBlock } from './paint-blocks';
-import { type Palette } from './palette';
+import type { Separation } from '../scene/separation';
+import type { Track } from '../scene/track';
+import type { Layer } from '../store/state';
+import type { GroundOptions } from './ground';
+import type { Vec } from './matrix';
+import type { DrawnBlock } from './paint-blocks';
+import type { Palette } from './palette';
 
 export interface Picture extends GroundOptions {
   readonly scene: Scene;

@@ -1,6 +1,6 @@
 /** Two stacked canvases kept in step with what they show: at most one picture per animation frame. */
 import { readPalette, type Palette } from './palette';
-import { type Picture } from './picture';
+import type { Picture } from './picture';
 import { Studio } from './studio';
 
 /** What a stage is told; size, scale and colours it finds itself. */

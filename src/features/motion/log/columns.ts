@@ -1,6 +1,6 @@
 /** The rotations strip: a column for each link of a block's circuit, filled by evidence between its rows. */
 import { poseAt } from '../scene/tolerant';
-import { type CompiledRow, type Evidence, type Link, type Model } from '../../../kernel/rotations/types';
+import type { CompiledRow, Evidence, Link, Model } from '../../../kernel/rotations/types';
 
 export interface Fill {
   readonly younger: number;

@@ -1,5 +1,5 @@
 /** Palaeolatitudes that directions give through the geocentric axial dipole, tan I = 2 tan φ. */
-import { type Direction } from '../../ledger/contract';
+import type { Direction } from '../../ledger/contract';
 
 export interface Observed {
   readonly id: string;

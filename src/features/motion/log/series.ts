@@ -3,8 +3,8 @@ import { rotate, velocityAt } from '../../../kernel/rotations';
 import { toLatLon, toVector } from '../../../kernel/sphere';
 import { latitudeBand, poseUncertainty } from '../../../kernel/uncertainty';
 import { angularVelocity, circuitRowAges, poseAt } from '../scene/tolerant';
-import { type Model } from '../../../kernel/rotations/types';
-import { type NamedPoint } from '../scene/points';
+import type { Model } from '../../../kernel/rotations/types';
+import type { NamedPoint } from '../scene/points';
 
 export interface LatitudeSample {
   readonly age: number;

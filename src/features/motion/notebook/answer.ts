@@ -4,10 +4,10 @@ import { poseAt } from '../scene/tolerant';
 import { toLatLon, toVector } from '../../../kernel/sphere';
 import { rotate } from '../../../kernel/rotations/quaternion';
 import { pointEllipse, poseUncertainty, shares, type Ellipse } from '../../../kernel/uncertainty';
-import { type Evidence, type Link, type Model, type Pose } from '../../../kernel/rotations/types';
+import type { Evidence, Link, Model, Pose } from '../../../kernel/rotations/types';
 import { shortAge } from '../format';
 import { oldestPlaced } from '../log/columns';
-import { type NamedPoint } from '../scene/points';
+import type { NamedPoint } from '../scene/points';
 
 export interface LinkRow {
   readonly block: string;

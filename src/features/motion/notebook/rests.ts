@@ -2,11 +2,11 @@
 import { jumpKm } from '../../../kernel/rotations';
 import { handOverJumps, poseAt } from '../scene/tolerant';
 import { toVector } from '../../../kernel/sphere';
-import { type Model, type ModelProblem } from '../../../kernel/rotations/types';
+import type { Model, ModelProblem } from '../../../kernel/rotations/types';
 import { ageValue, kilometres, list, NBSP, number, shortAge } from '../format';
-import { type Observed } from '../log/observed';
+import type { Observed } from '../log/observed';
 import { latitudeAt } from '../log/series';
-import { type NamedPoint } from '../scene/points';
+import type { NamedPoint } from '../scene/points';
 
 export interface Remark {
   readonly severity: 'note' | 'check' | 'blocker';

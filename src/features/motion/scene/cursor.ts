@@ -1,6 +1,6 @@
 /** What lies under the pointer, in both pictures of then and now. */
 import { distanceKm } from '../../../kernel/sphere';
-import { type Hit } from '../globe/hit';
+import type { Hit } from '../globe/hit';
 import { placeOf, turn, vectorOf, type Vec } from '../globe/matrix';
 import { matrixOf, type Frame } from './frame';
 

@@ -1,7 +1,7 @@
 /** What a workbench shows when a link says nothing: the block with the longest record, held in the root frame. */
 import { toMatrix } from '../../../kernel/rotations';
 import { handOverJumps, poseAt } from './tolerant';
-import { type Model } from '../../../kernel/rotations/types';
+import type { Model } from '../../../kernel/rotations/types';
 import { placeOf, turn, unit, vectorOf, type Centre, type Vec } from '../globe/matrix';
 import { LINKED, type Linked } from '../store/state';
 import { ownPoint } from './points';

@@ -2,7 +2,7 @@
 import { placeOf, unit, type Vec } from '../globe/matrix';
 import { vertex, type Shape } from '../globe/shape';
 import { inText } from '../names';
-import { type Point } from '../store/state';
+import type { Point } from '../store/state';
 import { findSceneBlock, type Scene, type SceneBlock } from './scene';
 
 export interface NamedPoint extends Point {

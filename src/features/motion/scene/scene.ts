@@ -1,7 +1,7 @@
 /** Everything a workbench draws from, made once from what the server answered. */
-import { type Evidence, type Model } from '../../../kernel/rotations/types';
-import { type Direction } from '../../ledger/contract';
-import { type Shape } from '../globe/shape';
+import type { Evidence, Model } from '../../../kernel/rotations/types';
+import type { Direction } from '../../ledger/contract';
+import type { Shape } from '../globe/shape';
 import { shortName } from '../names';
 
 export interface SceneOutline {

@@ -4,8 +4,8 @@
  */
 import * as kernel from '../../../kernel/rotations';
 import { KernelError } from '../../../kernel/errors';
-import { type AngularVelocity, type DriftPoint, type HandOver } from '../../../kernel/rotations';
-import { type Model, type Pose } from '../../../kernel/rotations/types';
+import type { AngularVelocity, DriftPoint, HandOver } from '../../../kernel/rotations';
+import type { Model, Pose } from '../../../kernel/rotations/types';
 
 function orElse<T>(work: () => T, refused: T): T {
   try {

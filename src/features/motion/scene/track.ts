@@ -1,10 +1,10 @@
 /** A point's drift path as the globe draws it: unit vectors in the held-still frame, youngest first. */
-import { type DriftPoint } from '../../../kernel/rotations';
+import type { DriftPoint } from '../../../kernel/rotations';
 import { driftPath } from './tolerant';
-import { type Model } from '../../../kernel/rotations/types';
+import type { Model } from '../../../kernel/rotations/types';
 import { vectorOf, type Vec } from '../globe/matrix';
-import { type PathSpan } from '../store/state';
-import { type NamedPoint } from './points';
+import type { PathSpan } from '../store/state';
+import type { NamedPoint } from './points';
 
 export interface TrackPoint {
   readonly age: number;

@@ -1,6 +1,6 @@
 /** Every change of a workbench's state, by name. */
-import { type Model } from '../../../kernel/rotations/types';
-import { type Centre } from '../globe/matrix';
+import type { Model } from '../../../kernel/rotations/types';
+import type { Centre } from '../globe/matrix';
 import {
   ZOOM,
   type Layer,

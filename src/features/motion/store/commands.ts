@@ -1,7 +1,7 @@
 /** One object for each command, shared by its button, its key and its place in a list. */
 import { open, select, setView, stepAge, toggleTables, turnTo, zoomBy, zoomTo } from './actions';
-import { type Centre } from '../globe/matrix';
-import { type WorkbenchStore } from './state';
+import type { Centre } from '../globe/matrix';
+import type { WorkbenchStore } from './state';
 
 export interface CommandContext {
   readonly store: WorkbenchStore;

@@ -1,7 +1,7 @@
 /** What `/` understands: an age in Ma, a unit of the chart, or a block. */
 import { CHRONOSTRATIGRAPHIC_CHART } from '../../../kernel/timescale';
 import { shortAge } from '../format';
-import { type Scene } from '../scene/scene';
+import type { Scene } from '../scene/scene';
 
 export type Jump =
   | { readonly kind: 'age'; readonly age: number; readonly label: string; readonly detail: string }

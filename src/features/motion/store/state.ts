@@ -1,8 +1,8 @@
 /** What a workbench shows, and nothing that can be worked out from it. */
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import { EVIDENCE, type Evidence, type Model } from '../../../kernel/rotations/types';
-import { type Centre } from '../globe/matrix';
-import { type Cursor } from '../scene/cursor';
+import type { Centre } from '../globe/matrix';
+import type { Cursor } from '../scene/cursor';
 
 export const VIEWS = ['globe', 'map', 'then-and-now'] as const;
 export type View = (typeof VIEWS)[number];

@@ -2,7 +2,7 @@
 import type { ReactNode } from 'react';
 import { PROJECTION_NAMES, PROJECTIONS, type ProjectionName } from '../../../kernel/cartography/projections';
 import type { SliceSettings } from '../address';
-import { LAYERS, PAPERS, type Layer, type Paper } from '../contract';
+import { LAYERS, PAPERS, type Layer, type Paper } from '../choices';
 
 export interface Choice {
   readonly code: string;

@@ -1,7 +1,7 @@
 /** The map itself: sphere, graticule, blocks with their evidence, present coasts, names, a drift path. */
 import { geoPath, type GeoProjection } from 'd3-geo';
 import { shortName } from '../../motion/names';
-import type { Layer } from '../contract';
+import type { Layer } from '../choices';
 import type { Carried, CarriedBlock } from './carried';
 import { pathSvg, type DrawnPath } from './drift';
 import { graticuleLabels, graticuleSvg } from './graticule';

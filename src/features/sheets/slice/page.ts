@@ -11,7 +11,8 @@ import {
 } from '../../../kernel/cartography/projections';
 import { age, ageValue, coordinates, list, number } from '../../motion/format';
 import { inText } from '../../motion/names';
-import { PAPERS, type SliceQuery } from '../contract';
+import { PAPERS } from '../choices';
+import type { SliceQuery } from '../contract';
 import type { Carried } from './carried';
 import { breakLines, embeddedFontRules, textWidth } from './fonts';
 import { mapSvg } from './map';

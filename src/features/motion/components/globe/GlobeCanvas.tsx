@@ -2,8 +2,8 @@
 import { useCallback, useEffect, useRef, type KeyboardEvent } from 'react';
 import { COMMANDS } from '../../store/commands';
 import { turnTo, zoomBy } from '../../store/actions';
-import { type WorkbenchState } from '../../store/state';
-import { type Gestures } from '../../globe/gesture';
+import type { WorkbenchState } from '../../store/state';
+import type { Gestures } from '../../globe/gesture';
 import { listen } from '../../globe/listen';
 import { Stage, type Shown } from '../../globe/stage';
 import { nudge } from '../../globe/turning';

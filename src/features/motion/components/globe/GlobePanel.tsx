@@ -5,7 +5,7 @@ import { age as ageText, coordinates, count, meridian, parallel } from '../../fo
 import { frameAt, matrixOf } from '../../scene/frame';
 import { placeOf } from '../../globe/matrix';
 import { setView } from '../../store/actions';
-import { type View } from '../../store/state';
+import type { View } from '../../store/state';
 import { useBench, useCalmAge, useWorkbench } from '../bench';
 import { frameName } from '../../names';
 import { useNames } from '../use-names';

@@ -1,8 +1,8 @@
 /** The legend is the control: press a line to turn it off; it stays, grey. */
-import { type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { EVIDENCE } from '../../../../kernel/rotations/types';
 import { toggleLayer } from '../../store/actions';
-import { type Drawn, type Layer } from '../../store/state';
+import type { Drawn, Layer } from '../../store/state';
 import { useBench, useWorkbench } from '../bench';
 import { ARROW_PX } from '../../globe/paint-marks';
 

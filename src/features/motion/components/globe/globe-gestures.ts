@@ -4,10 +4,10 @@ import { Gestures } from '../../globe/gesture';
 import { discOf } from '../../globe/ground-globe';
 import { hitAt } from '../../globe/hit';
 import { viewOf, type XY } from '../../globe/pen';
-import { type Stage } from '../../globe/stage';
+import type { Stage } from '../../globe/stage';
 import { drag, grab } from '../../globe/turning';
 import { select, setCursor, setMoving, turnTo, zoomTo } from '../../store/actions';
-import { type WorkbenchStore } from '../../store/state';
+import type { WorkbenchStore } from '../../store/state';
 
 const hundredth = (deg: number): number => Math.round(deg * 100) / 100;
 

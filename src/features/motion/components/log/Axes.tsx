@@ -1,5 +1,5 @@
 /** The ruled ground of a strip: its heading, the grid of ages, and a value axis along the top. */
-import { type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { number } from '../../format';
 import { hundredth, yOf, type LogLayout, type Strip } from '../../log/layout';
 import { axisStep } from '../../scene/scene';

@@ -1,5 +1,5 @@
 /** One block's rotations down the ages: filled by evidence, barred at rows, hatched where there are none. */
-import { type Column } from '../../log/columns';
+import type { Column } from '../../log/columns';
 import { yOf, type LogLayout } from '../../log/layout';
 
 interface Props {

@@ -1,8 +1,8 @@
 /** Latitude: predicted curve with its 95 % band, and what directions give, with unequal errors. */
 import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
-import { type Observed } from '../../log/observed';
-import { type LatitudeSample } from '../../log/series';
+import type { Observed } from '../../log/observed';
+import type { LatitudeSample } from '../../log/series';
 import { yOf, type LogLayout, type Strip } from '../../log/layout';
 import { plotOf, StripAxes, StripNote, type ValueAxis } from './Axes';
 

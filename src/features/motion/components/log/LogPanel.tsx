@@ -2,7 +2,7 @@
 import { useState } from 'react';
 import { Tabs } from '../../../../components/ui/Tabs';
 import { toggleTables } from '../../store/actions';
-import { type StripId } from '../../log/layout';
+import type { StripId } from '../../log/layout';
 import { useBench, useWorkbench } from '../bench';
 import { Jump } from '../help/Jump';
 import { PHONE, useMedia } from '../use-media';

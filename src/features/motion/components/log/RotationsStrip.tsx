@@ -2,7 +2,7 @@
 import { memo } from 'react';
 import { StripTitle } from './Axes';
 import { EvidenceColumn } from './EvidenceColumn';
-import { type Column } from '../../log/columns';
+import type { Column } from '../../log/columns';
 import { LINK_PITCH, yOf, type LogLayout, type Strip } from '../../log/layout';
 
 interface Props {

@@ -2,7 +2,7 @@
 import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
 import { yOf, type LogLayout, type Strip } from '../../log/layout';
-import { type SpeedStep } from '../../log/series';
+import type { SpeedStep } from '../../log/series';
 import { plotOf, StripAxes, type ValueAxis } from './Axes';
 
 interface Props {

@@ -14,7 +14,7 @@ import { observedOn } from '../../log/observed';
 import { answerAt, type Answer, type LinkRow } from '../../notebook/answer';
 import { restsOn, type Remark } from '../../notebook/rests';
 import { rootFrame } from '../../scene/defaults';
-import { type NamedPoint } from '../../scene/points';
+import type { NamedPoint } from '../../scene/points';
 import { useBench, useWorkbench } from '../bench';
 import { useNames } from '../use-names';
 

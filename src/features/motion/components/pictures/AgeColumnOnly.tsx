@@ -4,7 +4,7 @@ import { useBench } from '../bench';
 import { AgeColumn } from '../log/AgeColumn';
 import { useSize } from '../use-size';
 import { PictureFrame } from './Frame';
-import { type PictureProps } from './payload';
+import type { PictureProps } from './payload';
 
 const HEAD = 64;
 const FIRST = { width: 86, height: 900 };

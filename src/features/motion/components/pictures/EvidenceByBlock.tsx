@@ -10,7 +10,7 @@ import { AgeColumn } from '../log/AgeColumn';
 import { EvidenceColumn } from '../log/EvidenceColumn';
 import { useSize } from '../use-size';
 import { PictureFrame } from './Frame';
-import { type PictureProps } from './payload';
+import type { PictureProps } from './payload';
 
 const HEAD = 128;
 const FIRST = { width: 404, height: 780 };

@@ -5,7 +5,7 @@ import { BlockList } from '../globe/BlockList';
 import { GlobeCanvas } from '../globe/GlobeCanvas';
 import { useFrameName } from '../globe/GlobePanel';
 import { PictureFrame } from './Frame';
-import { type PictureProps } from './payload';
+import type { PictureProps } from './payload';
 
 interface Props extends PictureProps {
   /** "v7". */

@@ -1,7 +1,7 @@
 /** The landing page's log: latitude and speed, with an age line that runs on to the globe. */
 import { Log } from '../log/Log';
 import { PictureFrame } from './Frame';
-import { type PictureProps } from './payload';
+import type { PictureProps } from './payload';
 
 interface Props extends PictureProps {
   /** id of the element that holds the globe; the age line reaches to its limb. */

@@ -1,7 +1,7 @@
 /** A globe to look at beside a form: no names, no gestures, a description for who doesn't see it. */
 import { GlobeCanvas } from '../globe/GlobeCanvas';
 import { PictureFrame } from './Frame';
-import { type PictureProps } from './payload';
+import type { PictureProps } from './payload';
 
 interface Props extends PictureProps {
   readonly label: string;

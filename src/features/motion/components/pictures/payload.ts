@@ -1,10 +1,10 @@
 /** What a picture island is given: plain JSON from the server. Outlines come by hash. */
 import { useMemo } from 'react';
-import { type Model } from '../../../../kernel/rotations/types';
-import { type Block, type Direction, type Feature } from '../../../ledger/contract';
+import type { Model } from '../../../../kernel/rotations/types';
+import type { Block, Direction, Feature } from '../../../ledger/contract';
 import { assemble, useShapes, wantedBy } from '../../client';
 import { complete } from '../../scene/defaults';
-import { type Scene } from '../../scene/scene';
+import type { Scene } from '../../scene/scene';
 import { sharedWorkbench, type Layer, type Linked, type WorkbenchStore } from '../../store/state';
 
 export interface Payload {

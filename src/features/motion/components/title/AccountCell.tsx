@@ -2,7 +2,7 @@
 import { MenuCell } from '../../../../components/ui/MenuCell';
 import { initials } from '../../names';
 import { otherTheme, setTheme, useTheme } from '../../theme';
-import { type Account } from './head';
+import type { Account } from './head';
 
 const ROUND =
   'flex size-7 items-center justify-center rounded-full border border-ink text-center text-[11.5px] font-medium max-md:size-11';

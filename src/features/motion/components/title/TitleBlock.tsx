@@ -1,5 +1,5 @@
 /** The head of the drawing: project, version, held still, age and selection. Each cell opens its own list. */
-import { type ReactNode } from 'react';
+import type { ReactNode } from 'react';
 import { Chevron, MenuCell, type ChoiceGroup } from '../../../../components/ui/MenuCell';
 import { unitAt } from '../../../../kernel/timescale';
 import { number } from '../../format';
@@ -9,7 +9,7 @@ import { useAnswer } from '../notebook/Notebook';
 import { AgeField } from './AgeField';
 import { Share } from './Share';
 import { AccountCell } from './AccountCell';
-import { type Head } from './head';
+import type { Head } from './head';
 
 const CELL = 'flex h-full flex-col justify-center border-r border-rule px-4';
 

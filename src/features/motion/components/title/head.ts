@@ -1,5 +1,5 @@
 /** What the title block needs besides the workbench itself; plain data, made on the server. */
-import { type Choice } from '../../../../components/ui/MenuCell';
+import type { Choice } from '../../../../components/ui/MenuCell';
 
 export interface Account {
   readonly name: string;

@@ -1,8 +1,8 @@
 /** The title block's data of one project page, made on the server. */
 import { paths } from '../../../../paths';
-import { type Project } from '../../../projects/contract';
+import type { Project } from '../../../projects/contract';
 import { count } from '../../format';
-import { type Head } from './head';
+import type { Head } from './head';
 
 interface User {
   readonly name: string;

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { EXPORT_NAMES, type ExportName } from '~/features/interchange/contract';
+import { EXPORT_NAMES, type ExportName } from '~/features/interchange/files';
 import { exportFile } from '~/features/interchange/server';
 import { loadState } from '~/features/ledger/state';
 import { attachment } from '~/server/attachment';

@@ -1,11 +1,6 @@
 import { z } from 'zod';
-import {
-  answers,
-  columnMapping,
-  IMPORT_KINDS,
-  IMPORT_LIMIT_BYTES,
-  importReport,
-} from '~/features/interchange/contract';
+import { answers, columnMapping, importReport } from '~/features/interchange/contract';
+import { IMPORT_KINDS, IMPORT_LIMIT_BYTES } from '~/features/interchange/files';
 import { importInto } from '~/features/interchange/server';
 import { fieldErrors, Problem } from '~/server/problem';
 import { projectRoute } from '~/server/route';
