@@ -22,6 +22,15 @@ export const question = z.object({
 });
 export type Question = z.infer<typeof question>;
 
+/** A choice that this reading made, by an answer or by default; another answer under its id reads the file anew. */
+export const offer = z.object({
+  id: z.string(),
+  ask: z.string(),
+  choices: z.array(z.string()).min(2),
+  chosen: z.string(),
+});
+export type Offer = z.infer<typeof offer>;
+
 /** One row that would be written, as the preview shows it. */
 export const previewRow = z.object({
   line: z.number().int().nullable(),
@@ -38,6 +47,7 @@ export const importReport = z.object({
   /** How many more were rejected than are listed. */
   rejected_beyond: z.number().int(),
   questions: z.array(question),
+  settled: z.array(offer),
   /** What was understood without changing a value: a byte-order mark, the separator, ignored columns. */
   notes: z.array(z.string()),
   preview: z.array(previewRow),

@@ -54,6 +54,7 @@ export async function importInto(access: Access, request: ImportRequest): Promis
     rejected: plan.rejected.slice(0, MOST_REJECTED).map((row) => ({ ...row, read: row.read.slice(0, 200) })),
     rejected_beyond: Math.max(0, plan.rejected.length - MOST_REJECTED),
     questions,
+    settled: reading.asking.settled(),
     notes: [...notes, ...reading.notes],
     preview: plan.preview.slice(0, MOST_PREVIEW).map((row) => ({ ...row })),
     table: reading.table

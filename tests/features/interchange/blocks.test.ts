@@ -48,6 +48,32 @@ describe('blocks.geojson', () => {
     ).toEqual([]);
   });
 
+  it('offers to follow straight lines where long edges part from great circles, and adds points only when told', () => {
+    const text = file(block('sable', square(20, 40, 110, 60)), block('dune', square(20, -1, 20.5, 1)));
+    const usual = readBlocks(text);
+    expect(ids(usual)).toEqual([]);
+    // A great circle between (40, 20) and (40, 110): its middle is at atan(tan 40° / cos 45°) = 49.8794°, 9.8794° from
+    // the parallel (spherical trigonometry, Napier's rule), which is 1,099 km; along 60° it is 7.79°.
+    expect(usual.asking.settled()).toMatchObject([{ id: 'edges', chosen: 'along great circles' }]);
+    expect(usual.asking.settled()[0]!.ask).toContain('1,099 km away (line 2)');
+    expect(usual.candidates[0]!.fields.outlines[0]!.geometry.coordinates[0]).toHaveLength(5);
+    const straight = readBlocks(text, { edges: 'straight in longitude and latitude' });
+    const ring = straight.candidates[0]!.fields.outlines[0]!.geometry.coordinates[0] as Ring;
+    expect(ring).toHaveLength(2 * 90 + 2 * 20 + 1);
+    expect(ring.filter(([, lat]) => lat === 40)).toHaveLength(91);
+    expect(ring).toEqual(expect.arrayContaining(square(20, 40, 110, 60)));
+    expect(ring.every(([lon, lat]) => lon === 20 || lon === 110 || lat === 40 || lat === 60)).toBe(true);
+  });
+
+  it('keeps an answered question open to another answer', () => {
+    const text = file(block('sable', square(20, -35, 50, -20).reverse()));
+    const answered = readBlocks(text, { ring_winding: 'the larger side' });
+    expect(ids(answered)).toEqual([]);
+    expect(answered.asking.settled()).toContainEqual(
+      expect.objectContaining({ id: 'ring_winding', chosen: 'the larger side' }),
+    );
+  });
+
   it('asks about exchanged latitude and longitude, and exchanges only when told', () => {
     const ring = square(-35, 120, -20, 150);
     expect(ids(readBlocks(file(block('x', ring))))).toContain('swapped_lat_lon');

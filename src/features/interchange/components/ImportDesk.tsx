@@ -7,6 +7,7 @@ import { ColumnChoice } from './ColumnChoice';
 import { FilePicker } from './FilePicker';
 import { PreviewTable } from './PreviewTable';
 import { Questions } from './Questions';
+import { Readings } from './Readings';
 import { RejectedTable } from './RejectedTable';
 
 interface Props {
@@ -161,6 +162,13 @@ function Report({ report, desk, busy, again, accept, slug }: ReportProps) {
       {report.questions.length > 0 && (
         <Questions
           questions={report.questions}
+          busy={busy}
+          onAnswer={(answers) => again({ answers: { ...desk.answers, ...answers } })}
+        />
+      )}
+      {report.settled.length > 0 && (
+        <Readings
+          offers={report.settled}
           busy={busy}
           onAnswer={(answers) => again({ answers: { ...desk.answers, ...answers } })}
         />

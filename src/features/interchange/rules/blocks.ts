@@ -5,9 +5,11 @@ import type { BlockFields, OutlineFields } from '../../ledger/contract';
 import type { Answers, RejectedRow } from '../contract';
 import { Asking } from './ask';
 import { readFeatureCollection, type LocatedFeature } from './geojson-text';
+import { alongStraightLines, followsStraightLines } from './long-edges';
 import { outlineFaults, readOutline } from './outline';
 import { PropertyReader } from './properties';
 import type { Candidate, FileReading } from './rotations';
+import { ringFault } from './rings';
 import { isSlug, toSlug } from './slug';
 
 export interface OutlineCandidate extends Omit<OutlineFields, 'block' | 'sha256'> {
@@ -36,7 +38,11 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
     .map((feature) => readFeature(feature, reader, asking, swapped))
     .filter((part) => part !== null);
   const all = [...rejected, ...reader.rejected];
-  const candidates = gather(parts, all);
+  const straight = followsStraightLines(
+    parts.flatMap(({ outline }) => outline ?? []),
+    asking,
+  );
+  const candidates = gather(straight ? parts.flatMap((part) => straightened(part, all)) : parts, all);
   return { candidates, rejected: all, asking, notes: notesOf(features) };
 }
 
@@ -44,6 +50,17 @@ interface Part {
   readonly line: number;
   readonly fields: BlockFields;
   readonly outline: OutlineCandidate | null;
+}
+
+/** Great circles that keep clear of one another may still cross as straight lines: rings are checked again. */
+function straightened(part: Part, rejected: RejectedRow[]): Part[] {
+  if (!part.outline) return [part];
+  const geometry = alongStraightLines(part.outline.geometry);
+  const rings = geometry.type === 'Polygon' ? geometry.coordinates : geometry.coordinates.flat();
+  const fault = rings.map(ringFault).find((found) => found !== null);
+  if (!fault) return [{ ...part, outline: { ...part.outline, geometry } }];
+  rejected.push({ line: part.line, column: 'geometry', ...fault });
+  return [];
 }
 
 function readFeature(

@@ -4,6 +4,7 @@ import { FEATURE_KINDS, type FeatureFields } from '../../ledger/contract';
 import type { Answers } from '../contract';
 import { Asking } from './ask';
 import { readFeatureCollection, type LocatedFeature } from './geojson-text';
+import { alongStraightLines, followsStraightLines } from './long-edges';
 import { PropertyReader } from './properties';
 import type { FileReading } from './rotations';
 import { isSlug, toSlug } from './slug';
@@ -25,9 +26,16 @@ export function readFeatures(
   const asking = new Asking(answers);
   const { features, rejected } = readFeatureCollection(text);
   const reader = new PropertyReader(asking);
-  const candidates = features
+  const read = features
     .map((feature) => ({ line: feature.line, fields: readOne(feature, reader, blocks) }))
     .filter((c): c is { line: number; fields: FeatureCandidate } => c.fields !== null);
+  const lines = read.map(({ line, fields }) => ({ line, geometry: fields.geometry }));
+  const candidates = followsStraightLines(lines, asking)
+    ? read.map(({ line, fields }) => ({
+        line,
+        fields: { ...fields, geometry: alongStraightLines(fields.geometry) },
+      }))
+    : read;
   return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes: [] };
 }
 
