@@ -45,7 +45,7 @@ export function followsStraightLines(features: readonly Placed[], asking: Asking
 export function alongStraightLines<T extends Geometry>(geometry: T): T {
   if (geometry.type === 'GeometryCollection' || geometry.type === 'Point' || geometry.type === 'MultiPoint')
     return geometry;
-  return { ...geometry, coordinates: mapLines(geometry.coordinates, dense) } as T;
+  return { ...geometry, coordinates: mapLines(geometry.coordinates, dense) };
 }
 
 function dense(line: readonly Position[]): Position[] {
