@@ -1,6 +1,6 @@
 /** What the workbench asks of the server, as queries: outlines once by hash, the rest by project and version. */
 import { keepPreviousData, QueryClient, useQuery, useQueryClient } from '@tanstack/react-query';
-import { useEffect, useMemo } from 'react';
+import { useMemo } from 'react';
 import type { Model } from '../../kernel/rotations/types';
 import type { Block, Direction, Feature } from '../ledger/contract';
 import type { Project } from '../projects/contract';
@@ -104,6 +104,14 @@ export const wantedBy = (blocks: readonly Block[], features: readonly Feature[])
   ...features.map(({ sha256 }) => ({ sha256, inside: 'smaller' as const })),
 ];
 
+interface Progress {
+  readonly arrived: number;
+  readonly wanted: number;
+}
+
+const UNKNOWN: Progress = { arrived: 0, wanted: 0 };
+const PROGRESS = ['geometry', 'progress'] as const;
+
 interface Shapes {
   readonly shapes: ReadonlyMap<string, Decoded>;
   /** Those that could not be fetched. */
@@ -113,7 +121,7 @@ interface Shapes {
 const NONE: Shapes = { shapes: new Map(), lost: 0 };
 
 /** Shapes by hash and inside. Each is fetched once, however the list changes; the picture is made anew once, not for each. */
-export function useShapes(wanted: readonly Wanted[]): Shapes & { waiting: boolean } {
+export function useShapes(wanted: readonly Wanted[]): Shapes & Progress & { waiting: boolean } {
   const client = useQueryClient();
   const unique = useMemo(() => [...new Map(wanted.map((want) => [nameOf(want), want])).values()], [wanted]);
   const { data = NONE, isFetching } = useQuery({
@@ -121,14 +129,22 @@ export function useShapes(wanted: readonly Wanted[]): Shapes & { waiting: boolea
     placeholderData: keepPreviousData,
     staleTime: Infinity,
     queryFn: async (): Promise<Shapes> => {
+      let arrived = 0;
+      const tell = () => client.setQueryData<Progress>(PROGRESS, { arrived, wanted: unique.length });
+      tell();
       const answers = await Promise.allSettled(
         unique.map(({ sha256, inside }) =>
-          client.fetchQuery({
-            queryKey: keys.geometry(sha256, inside),
-            queryFn: () => getShape(sha256, inside),
-            staleTime: Infinity,
-            gcTime: Infinity,
-          }),
+          client
+            .fetchQuery({
+              queryKey: keys.geometry(sha256, inside),
+              queryFn: () => getShape(sha256, inside),
+              staleTime: Infinity,
+              gcTime: Infinity,
+            })
+            .finally(() => {
+              arrived++;
+              tell();
+            }),
         ),
       );
       const shapes = new Map<string, Decoded>();
@@ -139,24 +155,20 @@ export function useShapes(wanted: readonly Wanted[]): Shapes & { waiting: boolea
       return { shapes, lost: unique.length - shapes.size };
     },
   });
-  return { ...data, waiting: isFetching };
-}
-
-/** Reads the draft again whenever someone changes it. */
-export function useDraftEvents(slug: string, version: Version): void {
-  const client = useQueryClient();
-  useEffect(() => {
-    if (version !== 'draft') return undefined;
-    const events = new EventSource(`/api/projects/${encodeURIComponent(slug)}/events`);
-    events.addEventListener('change', () => void client.invalidateQueries({ queryKey: keys.project(slug) }));
-    return () => events.close();
-  }, [client, slug, version]);
+  const { data: progress = UNKNOWN } = useQuery<Progress>({
+    queryKey: PROGRESS,
+    queryFn: () => UNKNOWN,
+    enabled: false,
+  });
+  return { ...data, ...progress, waiting: isFetching };
 }
 
 export interface SceneAnswer {
   readonly scene: Scene | null;
   /** True while outlines are on their way. */
   readonly waiting: boolean;
+  readonly arrived: number;
+  readonly wanted: number;
   /** Outlines that could not be fetched. */
   readonly lost: number;
   readonly error: Error | null;
@@ -173,7 +185,7 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
     () => wantedBy(blocks.data ?? [], features.data ?? []),
     [blocks.data, features.data],
   );
-  const { shapes, waiting, lost } = useShapes(wanted);
+  const { shapes, lost, ...progress } = useShapes(wanted);
   const scene = useMemo(() => {
     if (!motions.data || !blocks.data || !features.data || !directions.data) return null;
     return assemble(title, motions.data, blocks.data, features.data, directions.data, shapes);
@@ -181,7 +193,7 @@ export function useScene(slug: string, version: Version, title: string): SceneAn
   const failed = [motions, blocks, features, directions].filter((query) => query.error);
   return {
     scene,
-    waiting,
+    ...progress,
     lost,
     error: failed[0]?.error ?? null,
     retry: () => failed.forEach((query) => void query.refetch()),

@@ -56,8 +56,10 @@ function joinedAtPresent(from: Walk, to: Walk): boolean {
   return ends.includes('no rotations') && ends.every((end) => end === 'no rotations' || end === 'root');
 }
 
+/** Named is the block whose rotations end, before one that has none or whose reference is missing. */
 function noRoute(from: Walk, to: Walk): Route {
-  const stopped = [from, to].find(({ end }) => end === 'outside rotations' || end === 'no rotations');
-  const broken = stopped ?? [from, to].find(({ end }) => end === 'missing reference') ?? from;
+  const ending = (end: Walk['end']): Walk | undefined => [from, to].find((walk) => walk.end === end);
+  const stopped = ending('outside rotations') ?? ending('no rotations');
+  const broken = stopped ?? ending('missing reference') ?? from;
   return { status: stopped ? 'outside rotations' : 'not connected', at: broken.blocks.at(-1)?.code ?? '' };
 }

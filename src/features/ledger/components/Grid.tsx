@@ -3,92 +3,17 @@
  * Shift with arrows takes a block of cells, copy and paste work as in a spreadsheet. Only the rows in sight are drawn.
  */
 import { useVirtualizer } from '@tanstack/react-virtual';
-import {
-  useCallback,
-  useEffect,
-  useId,
-  useLayoutEffect,
-  useMemo,
-  useRef,
-  useState,
-  type ClipboardEvent,
-  type KeyboardEvent,
-  type ReactNode,
-} from 'react';
-import { readCells, writeCells } from '../grid/clipboard';
-import type { Column } from '../grid/column';
-import { pasteAt, type CellChange, type Pending } from '../grid/pending';
-import { cellAt, move, START, within, type Place, type Selection } from '../grid/selection';
+import { useCallback, useId, useLayoutEffect, useMemo, useRef } from 'react';
+import { cellAt, within } from '../grid/selection';
+import type { GridProps, GridRow } from './grid-props';
 import { GridCell } from './GridCell';
-
-export interface GridRow {
-  readonly id: string;
-  readonly fields: Readonly<Record<string, unknown>>;
-  /** A row that is worked out rather than entered: shown between its neighbours, never edited. */
-  readonly computed?: boolean;
-  readonly tone?: 'in use' | 'conflict';
-  /** Drawn before the first cell, as a mark of a finding. */
-  readonly mark?: ReactNode;
-  /** A heavier line above: a hand-over. */
-  readonly ruled?: boolean;
-}
-
-/** A column that is shown and not edited. */
-export interface ShownColumn {
-  readonly key: string;
-  readonly heading: string;
-  readonly unit?: string;
-  readonly width: string;
-  /** Key of the column that it stands behind; at the end where there is none. */
-  readonly after?: string;
-  readonly show: (row: GridRow) => ReactNode;
-}
-
-export interface Editing extends CellChange {
-  readonly column: Column;
-}
-
-interface Props {
-  readonly label: string;
-  readonly columns: readonly Column[];
-  readonly shown?: readonly ShownColumn[];
-  readonly rows: readonly GridRow[];
-  readonly pending: Pending;
-  readonly readOnly: boolean;
-  readonly empty: ReactNode;
-  readonly display: (column: Column, value: unknown, row: GridRow) => ReactNode;
-  readonly onChanges: (changes: readonly CellChange[], newRows: readonly string[]) => void;
-  readonly onEditing: (editing: Editing | null) => void;
-  readonly onDelete: (rows: readonly string[]) => void;
-  readonly onAdd: (after: string | null) => void;
-  readonly onRow: (row: string) => void;
-  /** Puts the focus into this row's first empty cell, and edits it, when it changes. */
-  readonly start?: string | null;
-  /** A row to bring into sight when it changes, while the grid is not being worked in. */
-  readonly inSight?: string | null;
-}
+import { GridHeading, slotsOf } from './GridHeading';
+import { useGrid } from './use-grid';
 
 const ROW = 21;
 
-export function Grid(props: Props) {
-  const {
-    label,
-    columns,
-    shown = [],
-    rows,
-    pending,
-    readOnly,
-    onChanges,
-    onEditing,
-    onDelete,
-    onAdd,
-    onRow,
-    start = null,
-  } = props;
-  const [selection, setSelection] = useState<Selection>(START);
-  const [edit, setEdit] = useState<{ place: Place; text: string } | null>(null);
-  // Moving the focus away blurs the field, which keeps the cell: this says that it has been dealt with.
-  const open = useRef(false);
+export function Grid(props: GridProps) {
+  const { label, columns, shown = NO_COLUMNS, rows, pending, readOnly } = props;
   const scroller = useRef<HTMLDivElement>(null);
   const grid = useRef<HTMLDivElement>(null);
   const id = useId();
@@ -106,142 +31,12 @@ export function Grid(props: Props) {
     grid.current?.style.setProperty('--columns', template);
     grid.current?.style.setProperty('--rows', `${height}px`);
   }, [template, height]);
-  const size = { rows: rows.length, columns: columns.length };
-  const ids = useMemo(() => rows.filter((row) => !row.computed).map((row) => row.id), [rows]);
-
-  const goTo = useCallback(
-    (next: Selection) => {
-      setSelection(next);
-      virtual.scrollToIndex(next.at.row);
-      const row = rows[next.at.row];
-      if (row && !row.computed) onRow(row.id);
-    },
-    [rows, virtual, onRow],
+  const scrollTo = useCallback(
+    (row: number, align?: 'center') => virtual.scrollToIndex(row, align ? { align } : {}),
+    [virtual],
   );
-  const textAt = (place: Place): string => {
-    const row = rows[place.row];
-    const column = columns[place.column];
-    if (!row || !column) return '';
-    return pending.get(row.id)?.cells[column.key]?.text ?? column.write(row.fields[column.key]);
-  };
-  const begin = (place: Place, text = textAt(place)): void => {
-    const row = rows[place.row];
-    const column = columns[place.column];
-    if (readOnly || !row || row.computed || !column) return;
-    open.current = true;
-    setEdit({ place, text });
-    onEditing({ row: row.id, key: column.key, text, column });
-  };
-  const type = (text: string): void => {
-    if (!edit) return;
-    setEdit({ ...edit, text });
-    const column = columns[edit.place.column]!;
-    onEditing({ row: rows[edit.place.row]!.id, key: column.key, text, column });
-  };
-  const putBack = (): void => {
-    open.current = false;
-    setEdit(null);
-    onEditing(null);
-    grid.current?.focus();
-  };
-  const keep = (then: (from: Place) => Place = (from) => from): void => {
-    if (!edit || !open.current) return;
-    open.current = false;
-    const { place, text } = edit;
-    const changed = text !== textAt(place);
-    setEdit(null);
-    onEditing(null);
-    if (changed) onChanges([{ row: rows[place.row]!.id, key: columns[place.column]!.key, text }], []);
-    const at = then(place);
-    goTo({ at, from: at });
-    grid.current?.focus();
-  };
-
-  const { inSight = null } = props;
-  useEffect(() => {
-    if (inSight === null || grid.current?.contains(document.activeElement)) return;
-    const index = rows.findIndex((row) => row.id === inSight);
-    if (index >= 0) virtual.scrollToIndex(index, { align: 'center' });
-    // Only where the row changes its place: scrolling by hand stays as it is.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
-  }, [inSight, rows.findIndex((row) => row.id === inSight)]);
-
-  // A new row is edited at once, in its first cell without a value.
-  const started = useRef<string | null>(null);
-  useEffect(() => {
-    if (start === null || started.current === start) return;
-    const index = rows.findIndex((row) => row.id === start);
-    if (index < 0) return;
-    started.current = start;
-    const first = columns.findIndex((c) => !c.read(c.write(rows[index]!.fields[c.key])).ok);
-    const at = { row: index, column: Math.max(0, first) };
-    goTo({ at, from: at });
-    begin(at);
-  });
-
-  const chosenRows = (): string[] =>
-    rows
-      .filter((row, i) => !row.computed && within(selection, { row: i, column: selection.at.column }))
-      .map((row) => row.id);
-
-  function onKey(event: KeyboardEvent): void {
-    if (edit) return;
-    const { key, shiftKey, ctrlKey, metaKey, altKey } = event;
-    const command = ctrlKey || metaKey;
-    const done = (): void => event.preventDefault();
-    const next = move(selection, { key, shiftKey, command }, size);
-    if (next && !altKey) {
-      done();
-      goTo(next);
-    } else if ((key === 'Enter' || key === 'F2') && !command) {
-      done();
-      begin(selection.at);
-    } else if (key === 'Enter' && command) {
-      done();
-      if (!readOnly) onAdd(rows[selection.at.row]?.id ?? null);
-    } else if ((key === 'Delete' || key === 'Backspace') && !readOnly) {
-      done();
-      if (command) onDelete(chosenRows());
-      else clear();
-    } else if (key.length === 1 && !command && !altKey) {
-      done();
-      begin(selection.at, key);
-    }
-  }
-
-  function clear(): void {
-    const changes = rows.flatMap((row, i) =>
-      row.computed
-        ? []
-        : columns.flatMap((c, j) =>
-            within(selection, { row: i, column: j }) ? [{ row: row.id, key: c.key, text: '' }] : [],
-          ),
-    );
-    onChanges(changes, []);
-  }
-
-  function onCopy(event: ClipboardEvent): void {
-    if (edit) return;
-    const cells = rows.flatMap((_, i) => {
-      const line = columns.flatMap((_column, j) =>
-        within(selection, { row: i, column: j }) ? [textAt({ row: i, column: j })] : [],
-      );
-      return line.length > 0 ? [line] : [];
-    });
-    event.clipboardData.setData('text/plain', writeCells(cells));
-    event.preventDefault();
-  }
-
-  function onPaste(event: ClipboardEvent): void {
-    if (edit || readOnly) return;
-    event.preventDefault();
-    const cells = readCells(event.clipboardData.getData('text/plain'));
-    const top = Math.min(selection.at.row, selection.from.row);
-    const row = rows.slice(0, top).filter((r) => !r.computed).length;
-    const anchor = { row, column: Math.min(selection.at.column, selection.from.column) };
-    const { changes, newRows } = pasteAt(cells, anchor, ids, columns, () => crypto.randomUUID());
-    onChanges(changes, newRows);
-  }
+  const work = useGrid(props, { grid, scrollTo });
+  const { selection, edit, textAt, goTo, begin, type, keep, putBack } = work;
 
   const items = virtual.getVirtualItems();
   const active = `${id}-${selection.at.row}-${selection.at.column}`;
@@ -258,11 +53,11 @@ export function Grid(props: Props) {
         aria-activedescendant={rows.length > 0 ? active : undefined}
         tabIndex={0}
         className="t-table group relative min-w-max outline-offset-[-2px]"
-        onKeyDown={onKey}
-        onCopy={onCopy}
-        onPaste={onPaste}
+        onKeyDown={work.onKey}
+        onCopy={work.onCopy}
+        onPaste={work.onPaste}
       >
-        <Heading slots={slots} />
+        <GridHeading slots={slots} />
         {rows.length === 0 ? (
           <div className="t-body text-ink-2 px-3.5 py-3">{props.empty}</div>
         ) : (
@@ -343,36 +138,4 @@ function rowClass(row: GridRow): string {
   return `${base}${tone}${row.ruled ? ' border-t border-t-frame' : ''}`;
 }
 
-type Slot =
-  | { readonly of: Column; readonly column: Column; readonly index: number; readonly shown: null }
-  | { readonly of: ShownColumn; readonly column: null; readonly index: -1; readonly shown: ShownColumn };
-
-/** Edited and shown columns in the order in which they stand. */
-function slotsOf(columns: readonly Column[], shown: readonly ShownColumn[]): readonly Slot[] {
-  const behind = (key: string | undefined): Slot[] =>
-    shown.filter((c) => c.after === key).map((c) => ({ of: c, column: null, index: -1, shown: c }));
-  return [
-    ...columns.flatMap((c, index): Slot[] => [{ of: c, column: c, index, shown: null }, ...behind(c.key)]),
-    ...behind(undefined),
-  ];
-}
-
-function Heading({ slots }: { readonly slots: readonly Slot[] }) {
-  return (
-    <div role="rowgroup" className="bg-paper sticky top-0 z-10">
-      <div role="row" aria-rowindex={1} className="border-frame grid grid-cols-(--columns) border-b">
-        {slots.map(({ of, column }, i) => (
-          <div
-            key={of.key}
-            role="columnheader"
-            aria-colindex={i + 1}
-            className={`px-2 py-1 font-medium ${!column || column.numeric ? 'text-right' : ''}`}
-          >
-            {of.heading}
-            <span className="text-ink-2 block font-normal">{of.unit ?? '\u00a0'}</span>
-          </div>
-        ))}
-      </div>
-    </div>
-  );
-}
+const NO_COLUMNS: NonNullable<GridProps['shown']> = [];

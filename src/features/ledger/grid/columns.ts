@@ -12,21 +12,21 @@ import {
 
 export const rotationColumns = (codes: readonly string[]): readonly Column[] => [
   codeColumn('block', 'Block', '84px', codes),
-  ageColumn('age_ma', 'Age', '54px', false),
-  codeColumn('relative_to', 'Relative to', '92px', codes),
-  numberColumn('pole_lat', 'Pole lat', '°N', '62px', {
+  ageColumn('age_ma', 'Age', '50px', false),
+  codeColumn('relative_to', 'Relative to', '84px', codes),
+  numberColumn('pole_lat', 'Pole lat', '°N', '60px', {
     least: -90,
     most: 90,
     beyond: 'latitude beyond 90°: moved decimal point?',
   }),
-  numberColumn('pole_lon', 'Pole lon', '°E', '70px', {
+  numberColumn('pole_lon', 'Pole lon', '°E', '66px', {
     least: -360,
     most: 360,
     beyond: 'longitude beyond 360°',
   }),
-  numberColumn('angle_deg', 'Angle', '°', '58px', { least: -720, most: 720, beyond: 'more than two turns' }),
-  evidenceColumn('112px'),
-  textColumn('source', 'Source', 'minmax(140px, 1.4fr)'),
+  numberColumn('angle_deg', 'Angle', '°', '54px', { least: -720, most: 720, beyond: 'more than two turns' }),
+  evidenceColumn('106px'),
+  textColumn('source', 'Source', 'minmax(136px, 1.4fr)'),
   textColumn('chron', 'Chron', '64px', 40),
   numberColumn('age_two_sigma_ma', 'Age ± 2σ', 'Myr', '70px', {
     least: 0,

@@ -52,7 +52,7 @@ function Panels({ head, ledger, tools, notice }: Pick<Props, 'head' | 'ledger' |
         </div>
         <div className="border-frame relative min-h-0 border-b max-xl:h-[600px]">
           <GlobePanel importHref={head.pages.find(({ id }) => id === 'import')?.href} tools={tools} />
-          <div className="absolute right-5 bottom-2">{notice}</div>
+          <div className="absolute bottom-2 left-5 max-w-[280px]">{notice}</div>
           <Keys />
         </div>
         <div className="border-frame min-h-0 min-w-0 overflow-hidden max-xl:max-h-[420px] max-xl:border-b xl:border-r">

@@ -2,7 +2,8 @@
 import { QueryClientProvider } from '@tanstack/react-query';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import type { MotionsAnswer } from '../contract';
-import { AnswerError, createClient, keys, useDraftEvents, useScene, type Version } from '../client';
+import { AnswerError, createClient, keys, useScene, type Version } from '../client';
+import { useDraftEvents } from '../draft-events';
 import { count } from '../format';
 import { complete, homeCentre } from '../scene/defaults';
 import { turnTo } from '../store/actions';
@@ -12,6 +13,7 @@ import { createWorkbench, type Linked } from '../store/state';
 import { OutlineDesk } from './globe/OutlineDesk';
 import { LedgerDesk } from './ledger/LedgerDesk';
 import type { Head } from './title/head';
+import { Stale, staleWords } from './stale';
 import { PhoneHint } from './use-media';
 import { Waiting } from './Waiting';
 import { Workbench } from './Workbench';
@@ -56,29 +58,34 @@ export default function WorkbenchIsland(props: WorkbenchIslandProps) {
 }
 
 function Loaded({ slug, version, head, search, heldStill, readOnly }: WorkbenchIslandProps) {
-  const { scene, waiting, lost, error, retry } = useScene(slug, version, head.title);
-  useDraftEvents(slug, version);
+  const { scene, waiting, arrived, wanted, lost, error, retry } = useScene(slug, version, head.title);
+  const link = useDraftEvents(slug, version);
   if (error && !scene) {
     const detail = error instanceof AnswerError ? error.detail : 'Look at the connection, then try again.';
     return <Waiting head={head} words={`${error.message}. ${detail}`} retry={retry} />;
   }
   if (!scene) return <Waiting head={head} words="Reading blocks, rotations and directions" />;
-  const notice = waiting ? (
-    <Progress words="Reading outlines" />
+  const stale = link.heard ? null : staleWords(link.heardAt, readOnly === null);
+  const notice = stale ? (
+    <Progress words={stale} />
+  ) : waiting ? (
+    <Progress words={`Reading outlines, ${arrived} of ${wanted}`} share={wanted > 0 ? arrived / wanted : 0} />
   ) : lost > 0 ? (
     <Progress words={`${count(lost, 'outline')} could not be read. Reload to try again.`} />
   ) : null;
   const own = { ...(heldStill ? { heldStill } : {}), ...fromQuery(search) };
   return (
-    <Ready
-      scene={scene}
-      head={head}
-      stated={own}
-      notice={notice}
-      waiting={waiting}
-      ledger={<LedgerDesk slug={slug} version={version} readOnly={readOnly} />}
-      tools={readOnly === null ? <OutlineDesk slug={slug} /> : null}
-    />
+    <Stale value={stale}>
+      <Ready
+        scene={scene}
+        head={head}
+        stated={own}
+        notice={notice}
+        waiting={waiting}
+        ledger={<LedgerDesk slug={slug} version={version} readOnly={readOnly} />}
+        tools={readOnly === null ? <OutlineDesk slug={slug} /> : null}
+      />
+    </Stale>
   );
 }
 
@@ -111,8 +118,13 @@ function Ready({
   return <Workbench head={head} scene={scene} store={store} ledger={ledger} tools={tools} notice={notice} />;
 }
 
-const Progress = ({ words }: { words: string }) => (
-  <p role="status" className="t-label border-ochre bg-paper text-ink-2 border-b-2 px-5 py-1">
-    {words}
-  </p>
+const Progress = ({ words, share }: { words: string; share?: number }) => (
+  <div className="t-label bg-paper text-ink-2">
+    <p role="status" className="px-3 py-1">
+      {words}
+    </p>
+    {share !== undefined && (
+      <progress className="progress block h-0.5 w-full" value={share} max={1} aria-label={words} />
+    )}
+  </div>
 );

@@ -208,12 +208,16 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
             !work && (
               <>
                 {outline && (
-                  <button className="button bg-paper" onClick={() => void begin()}>
-                    Move corners of {block!.name}
+                  <button
+                    className="button bg-paper whitespace-nowrap"
+                    aria-label={`Move corners of ${block!.name}`}
+                    onClick={() => void begin()}
+                  >
+                    Move corners
                   </button>
                 )}
                 <button
-                  className="button bg-paper"
+                  className="button bg-paper whitespace-nowrap"
                   onClick={() => {
                     const carried = needsOutline ? block.code : null;
                     setWords('');

@@ -1,6 +1,7 @@
 /** All blocks and frames; the row under the cursor is the selected block. */
 import { useState, type ReactNode } from 'react';
-import { Grid, type GridRow, type ShownColumn } from '../../../ledger/components/Grid';
+import { Grid } from '../../../ledger/components/Grid';
+import type { GridRow, ShownColumn } from '../../../ledger/components/grid-props';
 import type { Column } from '../../../ledger/grid/column';
 import { BLANK_BLOCK, BLOCK_COLUMNS } from '../../../ledger/grid/columns';
 import { number } from '../../format';

@@ -4,7 +4,8 @@ import { poseAt, toPole } from '../../../../kernel/rotations';
 import type { CompiledRow, Link, Model } from '../../../../kernel/rotations/types';
 import { toVector } from '../../../../kernel/sphere';
 import { pointEllipse, poseUncertainty } from '../../../../kernel/uncertainty';
-import { Grid, type Editing, type GridRow, type ShownColumn } from '../../../ledger/components/Grid';
+import { Grid } from '../../../ledger/components/Grid';
+import type { Editing, GridRow, ShownColumn } from '../../../ledger/components/grid-props';
 import type { Column } from '../../../ledger/grid/column';
 import { BLANK_ROTATION, rotationColumns } from '../../../ledger/grid/columns';
 import { ageValue, number } from '../../format';
@@ -256,7 +257,7 @@ function useUncertaintyColumn(code: string | null): readonly ShownColumn[] {
         </span>
       );
     };
-    return [{ key: 'reach', heading: '95 %', unit: 'km', width: '50px', after: 'angle_deg', show }];
+    return [{ key: 'reach', heading: '95 %', unit: 'km', width: '48px', after: 'angle_deg', show }];
   }, [scene, model, code]);
 }
 

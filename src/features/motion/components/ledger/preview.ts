@@ -3,7 +3,7 @@ import { compileModel, poseAt, rotate } from '../../../../kernel/rotations';
 import type { Model } from '../../../../kernel/rotations/types';
 import { distanceKm, toVector } from '../../../../kernel/sphere';
 import type { Block, Rotation } from '../../../ledger/contract';
-import type { Editing } from '../../../ledger/components/Grid';
+import type { Editing } from '../../../ledger/components/grid-props';
 import type { NamedPoint } from '../../scene/points';
 
 const MOVES = new Set(['relative_to', 'age_ma', 'pole_lat', 'pole_lon', 'angle_deg']);

@@ -3,7 +3,7 @@
  * at once on the globe, and never lost where the server refuses.
  */
 import { useQueryClient } from '@tanstack/react-query';
-import { useCallback, useMemo, useState } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { compileModel } from '../../../../kernel/rotations';
 import type { Model } from '../../../../kernel/rotations/types';
 import { EditRefused, overlap, sendEdits, sendUndo } from '../../../ledger/client';
@@ -19,6 +19,7 @@ import {
 } from '../../../ledger/grid/pending';
 import type { MotionsAnswer } from '../../contract';
 import { keys, useMotions, useTable } from '../../client';
+import { useUnsent } from './use-unsent';
 
 export interface Conflict {
   /** Rows that someone else changed meanwhile, with who it was. */
@@ -65,7 +66,17 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
   const [refused, setRefused] = useState<string | null>(null);
   const [conflict, setConflict] = useState<(Conflict & { readonly edits: readonly Edit[] }) | null>(null);
 
-  const revision = motions.data?.revision ?? 0;
+  const latest = useRef(pending);
+  useEffect(() => {
+    latest.current = pending;
+  }, [pending]);
+  const unsent = useUnsent(pending.size > 0);
+
+  /** Of what the page holds at the moment of sending, which may be later than when the cell was typed. */
+  const revisionNow = useCallback(
+    () => client.getQueryData<MotionsAnswer>(keys.table(slug, version, 'motions'))?.revision ?? 0,
+    [client, slug, version],
+  );
 
   /** Puts an answer into what every part of the page reads, and compiles the model anew. */
   const adopt = useCallback(
@@ -89,33 +100,29 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
   );
 
   const send = useCallback(
-    async (
-      work: () => Promise<BatchAnswer>,
-      edits: readonly Edit[],
-      onRefused?: (error: EditRefused) => void,
-    ): Promise<boolean> => {
+    async ({ edits, work, again, onRefused }: Sending): Promise<boolean> => {
       setSaving(true);
       try {
         adopt(await work());
         setRefused(null);
         setConflict(null);
+        if (again) unsent.forget(again.key);
         return true;
       } catch (error) {
-        if (!(error instanceof EditRefused))
-          setRefused('The server did not answer. What you typed is kept here; try again.');
-        else if (error.revision !== null) {
-          const rows = new Set(overlap(edits, error.changes));
-          const [last] = error.changes
-            .filter((entry) => entry.changes?.some(({ entity_id }) => rows.has(entity_id)))
-            .reverse();
-          const at = last
-            ? new Date(last.at).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })
-            : '';
-          const words = last
-            ? `Changed by ${last.actor?.name ?? 'someone'} at ${at}. Yours is kept beside it.`
-            : 'The draft has moved on. Yours is kept beside it.';
-          setConflict({ rows, words, revision: error.revision, edits });
-          await client.invalidateQueries({ queryKey: ['project', slug] });
+        if (!(error instanceof EditRefused)) {
+          setRefused(
+            again
+              ? 'The server did not answer. What you typed is kept here and sent again.'
+              : 'The server did not answer. Try again.',
+          );
+          if (again) unsent.keep(again.key, again.send);
+          return false;
+        }
+        if (again) unsent.forget(again.key);
+        if (error.revision !== null) {
+          const found = conflictOf(error, edits);
+          setConflict({ ...found, revision: error.revision, edits });
+          await client.invalidateQueries({ queryKey: keys.project(slug) });
         } else {
           setRefused(error.message);
           onRefused?.(error);
@@ -125,22 +132,28 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
         setSaving(false);
       }
     },
-    [adopt, client, slug],
+    [adopt, client, slug, unsent],
   );
 
   const save = useCallback(
-    async (next: Pending, table: Table, columns: readonly Column[]) => {
+    (next: Pending, table: Table, columns: readonly Column[]): Promise<boolean> => {
+      const attempt = async (now: Pending): Promise<boolean> => {
+        const { edits, rows } = readyEdits(now, table, columns);
+        if (edits.length === 0) return true;
+        const done = await send({
+          edits,
+          work: () => sendEdits(slug, revisionNow(), edits),
+          again: { key: table, send: () => attempt(latest.current) },
+          onRefused: (error) => setPending((map) => marked(map, rows, error)),
+        });
+        if (done) setPending((map) => without(map, rows));
+        return done;
+      };
       setPending(next);
-      const { edits, rows } = readyEdits(next, table, columns);
-      if (edits.length === 0) return;
-      const done = await send(
-        () => sendEdits(slug, revision, edits),
-        edits,
-        (error) => setPending((now) => marked(now, rows, error)),
-      );
-      if (done) setPending((now) => without(now, rows));
+      latest.current = next;
+      return attempt(next);
     },
-    [send, slug, revision],
+    [send, slug, revisionNow],
   );
 
   const change = useCallback<Draft['change']>(
@@ -152,8 +165,17 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
   );
 
   const run = useCallback(
-    (edits: readonly Edit[], label?: string) => send(() => sendEdits(slug, revision, edits, label), edits),
-    [send, slug, revision],
+    (edits: readonly Edit[], label?: string): Promise<boolean> => {
+      const key = crypto.randomUUID();
+      const attempt = (): Promise<boolean> =>
+        send({
+          edits,
+          work: () => sendEdits(slug, revisionNow(), edits, label),
+          again: { key, send: attempt },
+        });
+      return attempt();
+    },
+    [send, slug, revisionNow],
   );
 
   const remove = useCallback<Draft['remove']>(
@@ -177,9 +199,10 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       change,
       remove,
       run,
-      undo: (which) => void send(() => sendUndo(slug, which, revision), []),
+      undo: (which) => void send({ edits: [], work: () => sendUndo(slug, which, revisionNow()) }),
       putBack: () => {
         setPending(new Map());
+        unsent.clear();
         setRefused(null);
         setConflict(null);
       },
@@ -187,7 +210,7 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
         if (!conflict) return;
         const { edits, revision: now } = conflict;
         const rows = edits.flatMap((edit) => edit.id ?? []);
-        void send(() => sendEdits(slug, now, edits), edits).then((done) => {
+        void send({ edits, work: () => sendEdits(slug, now, edits) }).then((done) => {
           if (done) setPending((map) => without(map, rows));
         });
       },
@@ -205,9 +228,26 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       run,
       send,
       slug,
-      revision,
+      revisionNow,
+      unsent,
     ],
   );
+}
+
+interface Sending {
+  readonly edits: readonly Edit[];
+  readonly work: () => Promise<BatchAnswer>;
+  /** How to send the same once more when no answer came; without it the sender has to ask again. */
+  readonly again?: { readonly key: string; readonly send: () => Promise<boolean> };
+  readonly onRefused?: (error: EditRefused) => void;
+}
+
+function conflictOf(error: EditRefused, edits: readonly Edit[]): Pick<Conflict, 'rows' | 'words'> {
+  const rows = new Set(overlap(edits, error.changes));
+  const last = error.changes.findLast((entry) => entry.changes?.some(({ entity_id }) => rows.has(entity_id)));
+  if (!last) return { rows, words: 'The draft has moved on. Yours is kept beside it.' };
+  const at = new Date(last.at).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+  return { rows, words: `Changed by ${last.actor?.name ?? 'someone'} at ${at}. Yours is kept beside it.` };
 }
 
 function merged(rows: readonly { id: string }[], answer: BatchAnswer, table: string): { id: string }[] {

@@ -91,18 +91,8 @@ export function StripAxes({ layout, strip, title, unit, axis, children }: Props)
   );
 }
 
-/** Words in place of a curve, over the grid, on lines that fit the strip. */
-export function StripNote({
-  layout,
-  strip,
-  age,
-  words,
-}: {
-  layout: LogLayout;
-  strip: Strip;
-  age: number;
-  words: string;
-}) {
+/** Words broken into lines that fit a strip. */
+export function linesOf(words: string, strip: Strip): string[] {
   const most = Math.max(8, Math.floor((strip.width - 14) / 5.6));
   const lines: string[] = [];
   for (const word of words.split(' ')) {
@@ -110,7 +100,26 @@ export function StripNote({
     if (last !== undefined && last.length + word.length < most) lines[lines.length - 1] = `${last} ${word}`;
     else lines.push(word);
   }
-  const y = Math.min(yOf(layout, age), layout.bottom - lines.length * 14);
+  return lines;
+}
+
+/** Words in place of a curve, over the grid, on lines that fit the strip. */
+export function StripNote({
+  layout,
+  strip,
+  age,
+  words,
+  more = 0,
+}: {
+  layout: LogLayout;
+  strip: Strip;
+  age: number;
+  words: string;
+  /** Lines that will stand below. */
+  more?: number;
+}) {
+  const lines = linesOf(words, strip);
+  const y = Math.min(yOf(layout, age), layout.bottom - (lines.length + more) * 14);
   return (
     <text x={9} y={y} className="t-label halo fill-ink-2">
       {lines.map((line, i) => (

@@ -1,10 +1,12 @@
 /** Latitude: predicted curve with its 95 % band, and what directions give, with unequal errors. */
 import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
+import type { Gap } from '../../log/gaps';
 import type { Observed } from '../../log/observed';
 import type { LatitudeSample } from '../../log/series';
 import { yOf, type LogLayout, type Strip } from '../../log/layout';
 import { plotOf, StripAxes, StripNote, type ValueAxis } from './Axes';
+import { GapMarks } from './GapMarks';
 
 interface Props {
   readonly layout: LogLayout;
@@ -14,6 +16,9 @@ interface Props {
   readonly subject: string;
   /** Oldest placed age and the words for what is beyond. */
   readonly beyond: { readonly age: number; readonly words: string } | null;
+  readonly gaps: readonly Gap[];
+  /** What to say while the numbers may be out of date; null while they are not. */
+  readonly stale: string | null;
 }
 
 const PADDING_DEG = 6;
@@ -36,6 +41,8 @@ export const LatitudeStrip = memo(function LatitudeStrip({
   observed,
   subject,
   beyond,
+  gaps,
+  stale,
 }: Props) {
   const axis = latitudeAxis(curve, observed);
   const { x } = plotOf(strip, axis);
@@ -48,7 +55,7 @@ export const LatitudeStrip = memo(function LatitudeStrip({
         </g>
       )}
       {curve.map((run, i) => (
-        <g key={i}>
+        <g key={i} className={stale ? 'opacity-50' : undefined}>
           <path d={band(run, x, y)} className="fill-ochre-band" />
           {edges(run, x, y).map(({ d, atLeast }, k) => (
             <path
@@ -69,6 +76,8 @@ export const LatitudeStrip = memo(function LatitudeStrip({
       {observed.map((datum) => (
         <Datum key={datum.id} datum={datum} x={x} y={y} />
       ))}
+      <GapMarks layout={layout} strip={strip} gaps={gaps} explain />
+      {stale && <StripNote layout={layout} strip={strip} age={layout.oldest / 2} words={stale} />}
       {beyond && beyond.age < layout.oldest && (
         <StripNote layout={layout} strip={strip} age={beyond.age} words={beyond.words} />
       )}

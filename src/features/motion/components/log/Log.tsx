@@ -2,6 +2,7 @@
 import { useCallback, useMemo, useRef, type PointerEvent } from 'react';
 import { coordinates, shortAge } from '../../format';
 import { columnsOf, oldestPlaced, usedLinks, type UsedLink } from '../../log/columns';
+import { gapsOf } from '../../log/gaps';
 import { ageAt, layoutOf, type Heading, type StripId } from '../../log/layout';
 import { observedOn } from '../../log/observed';
 import { latitudeCurve, speedSteps } from '../../log/series';
@@ -10,6 +11,7 @@ import { findSceneBlock } from '../../scene/scene';
 import { setAge, setMoving } from '../../store/actions';
 import { useBench, useWorkbench } from '../bench';
 import { useSize } from '../use-size';
+import { useStale } from '../stale';
 import { AgeColumn } from './AgeColumn';
 import { AgeLine } from './AgeLine';
 import { latitudeAxis, LatitudeStrip } from './LatitudeStrip';
@@ -69,6 +71,12 @@ export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hi
         : { age: oldestHere, words: `no rotations older than ${shortAge(oldestHere)} Ma` },
     [oldestHere, isOutside],
   );
+
+  const gaps = useMemo(
+    () => (code ? gapsOf(model, code, heldStill, oldestHere, nameOf) : []),
+    [model, code, heldStill, oldestHere, nameOf],
+  );
+  const stale = useStale();
 
   const links = columns.length;
   const layout = useMemo(
@@ -137,10 +145,19 @@ export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hi
             observed={observed}
             subject={subject}
             beyond={beyond}
+            gaps={gaps}
+            stale={stale}
           />
         )}
         {speed && (
-          <SpeedStrip layout={layout} strip={speed} steps={steps} frame={`in ${nameOf(heldStill)}`} />
+          <SpeedStrip
+            layout={layout}
+            strip={speed}
+            steps={steps}
+            frame={`in ${nameOf(heldStill)}`}
+            gaps={gaps}
+            stale={stale !== null}
+          />
         )}
         <AgeLine
           layout={layout}

@@ -1,9 +1,11 @@
 /** Speed in a frame: steps between rows, never smoothed. */
 import { memo } from 'react';
 import { ticks as niceTicks } from 'd3-array';
+import type { Gap } from '../../log/gaps';
 import { yOf, type LogLayout, type Strip } from '../../log/layout';
 import type { SpeedStep } from '../../log/series';
 import { plotOf, StripAxes, type ValueAxis } from './Axes';
+import { GapMarks } from './GapMarks';
 
 interface Props {
   readonly layout: LogLayout;
@@ -11,6 +13,8 @@ interface Props {
   readonly steps: readonly SpeedStep[];
   /** "in spin axis". */
   readonly frame: string;
+  readonly gaps: readonly Gap[];
+  readonly stale: boolean;
 }
 
 export function speedAxis(steps: readonly SpeedStep[]): ValueAxis {
@@ -18,7 +22,7 @@ export function speedAxis(steps: readonly SpeedStep[]): ValueAxis {
   return { from: 0, to: most, ticks: niceTicks(0, most, 3) };
 }
 
-export const SpeedStrip = memo(function SpeedStrip({ layout, strip, steps, frame }: Props) {
+export const SpeedStrip = memo(function SpeedStrip({ layout, strip, steps, frame, gaps, stale }: Props) {
   const axis = speedAxis(steps);
   const { x } = plotOf(strip, axis);
   const y = (age: number) => yOf(layout, age);
@@ -36,7 +40,7 @@ export const SpeedStrip = memo(function SpeedStrip({ layout, strip, steps, frame
         );
         const start = `M${x(0)} ${y(run[0]?.younger ?? 0).toFixed(2)}`;
         return (
-          <g key={start}>
+          <g key={start} className={stale ? 'opacity-50' : undefined}>
             <path d={`${start}${edge.join('')}H${x(0)}Z`} className="fill-ochre-band" />
             <path
               d={`${start}${edge.join('')}`}
@@ -47,6 +51,7 @@ export const SpeedStrip = memo(function SpeedStrip({ layout, strip, steps, frame
           </g>
         );
       })}
+      <GapMarks layout={layout} strip={strip} gaps={gaps} />
     </StripAxes>
   );
 });
