@@ -2,6 +2,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { keys, type Version } from './client';
+import type { MotionsAnswer } from './contract';
 
 export interface Hearing {
   /** False from the moment the connection is lost until it is there again. */
@@ -20,8 +21,11 @@ export function useDraftEvents(slug: string, version: Version): Hearing {
   const [hearing, setHearing] = useState<Hearing>(() => ({ heard: true, heardAt: Date.now() }));
   useEffect(() => {
     let missed = false;
-    const hear = (): void => {
-      if (missed) void client.invalidateQueries({ queryKey: keys.project(slug) });
+    /** @param revision what the draft is at, where the stream begins by saying so. */
+    const hear = (revision: number | null = null): void => {
+      const held = client.getQueryData<MotionsAnswer>(keys.table(slug, version, 'motions'))?.revision;
+      const behind = revision !== null && held !== undefined && revision > held;
+      if (missed || behind) void client.invalidateQueries({ queryKey: keys.project(slug) });
       missed = false;
       setHearing({ heard: true, heardAt: Date.now() });
     };
@@ -31,7 +35,7 @@ export function useDraftEvents(slug: string, version: Version): Hearing {
       missed = true;
     };
     const stop = version === 'draft' ? listen(slug, client, hear, lose) : () => undefined;
-    const online = version === 'draft' ? () => undefined : hear;
+    const online = version === 'draft' ? () => undefined : () => hear();
     window.addEventListener('offline', lose);
     window.addEventListener('online', online);
     return () => {
@@ -43,10 +47,15 @@ export function useDraftEvents(slug: string, version: Version): Hearing {
   return hearing;
 }
 
+function revisionOf({ data }: MessageEvent): number | null {
+  const { revision } = JSON.parse(String(data)) as { revision?: unknown };
+  return typeof revision === 'number' ? revision : null;
+}
+
 function listen(
   slug: string,
   client: ReturnType<typeof useQueryClient>,
-  hear: () => void,
+  hear: (revision: number | null) => void,
   lose: () => void,
 ): () => void {
   let events: EventSource | null = null;
@@ -56,9 +65,10 @@ function listen(
     window.clearTimeout(timer);
     events?.close();
     events = new EventSource(`/api/projects/${encodeURIComponent(slug)}/events`);
-    events.addEventListener('open', () => {
+    // Twice: the connection itself, and the server's first event, which carries the revision.
+    events.addEventListener('open', (event: Event) => {
       wait = FIRST_RETRY_MS;
-      hear();
+      hear(event instanceof MessageEvent ? revisionOf(event) : null);
     });
     events.addEventListener('change', () => void client.invalidateQueries({ queryKey: keys.project(slug) }));
     events.addEventListener('error', () => {

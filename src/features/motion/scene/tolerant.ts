@@ -30,16 +30,35 @@ export const angularVelocity = (model: Model, block: string, age: number, frame:
     at: block,
   });
 
-/** A path that a loop cuts has no points. */
-export const driftPath = (model: Model, request: kernel.DriftRequest): DriftPoint[] =>
-  orElse(() => kernel.driftPath(model, request), []);
+/** Where a loop cuts the circuit the path has points at the ages outside the loop only. */
+export function driftPath(model: Model, request: kernel.DriftRequest): DriftPoint[] {
+  const whole = orElse(() => kernel.driftPath(model, request), null);
+  if (whole) return whole;
+  const { block, older_ma, younger_ma, step_ma, relative_to } = request;
+  const steps = Math.min(kernel.MOST_AGES, Math.max(0, Math.floor((older_ma - younger_ma) / step_ma)) || 0);
+  const ages = new Set(circuitRowAges(model, block, older_ma, younger_ma, relative_to));
+  for (let i = 0; i <= steps; i++) ages.add(younger_ma + i * step_ma);
+  return [...ages]
+    .sort((a, b) => a - b)
+    .flatMap((age) =>
+      orElse(() => kernel.driftPath(model, { ...request, older_ma: age, younger_ma: age }), []),
+    );
+}
 
+/** Where a loop cuts the circuit, the ages of every row: more of them than the circuit has, and none missing. */
 export const circuitRowAges = (
   model: Model,
   block: string,
   older: number,
   younger: number,
   frame: string,
-): number[] => orElse(() => kernel.circuitRowAges(model, block, older, younger, frame), []);
+): number[] =>
+  orElse(() => kernel.circuitRowAges(model, block, older, younger, frame), null) ??
+  [...new Set([younger, older, ...model.blocks.flatMap(rowAges)])]
+    .filter((age) => age >= younger && age <= older)
+    .sort((a, b) => a - b);
+
+const rowAges = ({ legs }: Model['blocks'][number]): number[] =>
+  legs.flatMap(({ rows }) => rows.map(({ age_ma }) => age_ma));
 
 export const handOverJumps = (model: Model): HandOver[] => orElse(() => kernel.handOverJumps(model), []);

@@ -21,12 +21,14 @@ export interface Track {
 /** Myr between the computed positions; ticks fall on them. */
 const FINE = 1;
 
-export function trackOf(model: Model, point: NamedPoint, heldStill: string, span: PathSpan): Track {
+/** null where the point has no place at any age of the span. */
+export function trackOf(model: Model, point: NamedPoint, heldStill: string, span: PathSpan): Track | null {
   const older_ma = span.older_ma ?? model.oldest_ma;
   const younger_ma = Math.min(span.younger_ma ?? 0, older_ma);
   const step_ma = span.step_ma % FINE === 0 ? FINE : span.step_ma;
   const path = driftPath(model, { ...point, older_ma, younger_ma, step_ma, relative_to: heldStill });
-  return { points: path.flatMap(placed), tick: span.step_ma };
+  const points = path.flatMap(placed);
+  return points.length > 0 ? { points, tick: span.step_ma } : null;
 }
 
 function placed({ age_ma, lat, lon, ellipse_95 }: DriftPoint): TrackPoint[] {

@@ -124,7 +124,7 @@ export function StripNote({
     <text x={9} y={y} className="t-label halo fill-ink-2">
       {lines.map((line, i) => (
         <tspan key={line} x={9} dy={i === 0 ? 14 : 13}>
-          {line}
+          {`${line} `}
         </tspan>
       ))}
     </text>
