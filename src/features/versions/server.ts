@@ -66,6 +66,10 @@ export async function release(access: Access, body: z.output<typeof releaseVersi
       .where(eq(project.id, project_id))
       .for('update');
     const ledger = await readDraft(tx, project_id);
+    if (ledger.blocks.length === 0)
+      throw new Problem('NothingChanged', {
+        detail: 'The draft holds no block yet: there is nothing to freeze.',
+      });
     refuseBlockers(blockersOf(modelOf(ledger)));
     const { text: manifest, sha256 } = manifestOf(ledger);
     const [last] = await tx

@@ -67,9 +67,13 @@ export function axisStep(oldest: number): number {
   return 500;
 }
 
+/** How far the column reaches before anything is dated, Ma: about the oldest sea floor. Common practice, no source. */
+const EMPTY_REACH_MA = 200;
+
 export function sceneOf(input: SceneInput): Scene {
   const ages = input.directions.map(({ age_max_ma, age_ma }) => age_max_ma ?? age_ma ?? 0);
-  const reach = Math.max(input.model.oldest_ma, ...ages, 1);
+  const known = Math.max(input.model.oldest_ma, ...ages);
+  const reach = known > 0 ? known : EMPTY_REACH_MA;
   const step = axisStep(reach);
   return {
     ...input,

@@ -25,7 +25,9 @@ export function useFrameName(within = false): string {
   const { scene } = useBench();
   const heldStill = useWorkbench((state) => state.heldStill);
   const block = scene.blocks.find(({ code }) => code === heldStill);
-  return block ? frameName(block, within) : heldStill;
+  return block
+    ? frameName(block, within)
+    : heldStill || (within ? 'present coordinates' : 'Present coordinates');
 }
 
 function Heading({ view }: { view: View }) {
@@ -79,16 +81,16 @@ function UnderPointer() {
 function NoBlocks({ importHref }: { importHref: string | undefined }) {
   return (
     <div className="pointer-events-none absolute inset-0 flex flex-col items-center justify-center gap-2">
-      <p className="t-answer">No blocks with an outline yet.</p>
-      <p className="t-body text-ink-2">
-        Add one in the ledger{importHref && ', or '}
-        {importHref && (
+      <p className="t-answer bg-sheet px-2">No blocks with an outline yet.</p>
+      {importHref && (
+        <p className="t-body text-ink-2 bg-sheet px-2">
+          Draw one here, or{' '}
           <a className="link pointer-events-auto" href={importHref}>
             import a file
           </a>
-        )}
-        .
-      </p>
+          .
+        </p>
+      )}
     </div>
   );
 }

@@ -154,7 +154,7 @@ export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hi
             layout={layout}
             strip={speed}
             steps={steps}
-            frame={`in ${nameOf(heldStill)}`}
+            frame={heldStill ? `in ${nameOf(heldStill)}` : ''}
             gaps={gaps}
             stale={stale !== null}
           />

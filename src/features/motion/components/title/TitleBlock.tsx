@@ -38,10 +38,11 @@ export function HeldStillCell({ compact = false }: { compact?: boolean }) {
     { title: 'Frames', choices: scene.blocks.filter(({ kind }) => kind === 'frame').map(choice) },
     { title: 'Blocks', choices: scene.blocks.filter(({ kind }) => kind !== 'frame').map(choice) },
   ];
-  const kind = block?.kind === 'frame' ? 'frame' : 'block';
+  const kind = block ? (block.kind === 'frame' ? 'frame' : 'block') : '';
+  const unknown = heldStill || 'nothing yet';
   return (
     <MenuCell
-      label={`Held still: ${block?.name ?? heldStill}`}
+      label={`Held still: ${block?.name ?? unknown}`}
       groups={groups}
       current={heldStill}
       onChoose={(code) => holdStill(store, code)}
@@ -51,12 +52,12 @@ export function HeldStillCell({ compact = false }: { compact?: boolean }) {
         <>
           <span className="t-body text-ink-2">Held still</span>
           <span className="t-value">
-            {block ? (block.kind === 'frame' ? block.name : block.short) : heldStill}
+            {block ? (block.kind === 'frame' ? block.name : block.short) : unknown}
           </span>
         </>
       ) : (
         <Value label="Held still" list>
-          {block?.kind === 'frame' ? block.name : (block?.short ?? heldStill)} <Detail>{kind}</Detail>
+          {block?.kind === 'frame' ? block.name : (block?.short ?? unknown)} <Detail>{kind}</Detail>
         </Value>
       )}
     </MenuCell>
