@@ -67,7 +67,7 @@ function trustOneProxy({ headers }) {
 
 function serve(request, response) {
   trustOneProxy(request);
-  files(request, response, () => {
+  const dynamic = () => {
     compress(request, response, () => {
       void Promise.resolve(handler(request, response)).catch((error) => {
         console.error(error);
@@ -75,7 +75,9 @@ function serve(request, response) {
         else response.destroy();
       });
     });
-  });
+  };
+  if (request.method === 'GET' || request.method === 'HEAD') files(request, response, dynamic);
+  else dynamic();
 }
 
 const server = http.createServer({ maxHeaderSize: 16_384 }, serve);
@@ -102,13 +104,18 @@ server.listen(port, host, async () => {
   );
 });
 
+/** What an answer under way is given to end; streams of events do not end by themselves. */
+const GRACE_MS = 2000;
+
 let ending = false;
 async function end() {
   if (ending) return;
   ending = true;
-  server.close();
+  // Answers under way may still need the database: it closes after the last connection.
+  const closed = new Promise((done) => server.close(done));
   server.closeIdleConnections();
-  setTimeout(() => server.closeAllConnections(), 2000).unref();
+  setTimeout(() => server.closeAllConnections(), GRACE_MS).unref();
+  await closed;
   await runtime()?.close?.();
   process.exit(0);
 }

@@ -1,10 +1,29 @@
-import type { MiddlewareHandler } from 'astro';
+import type { APIContext, MiddlewareHandler } from 'astro';
 import { identify } from '~/features/accounts/session';
 import { settings } from '~/server/env';
 import { secured } from '~/server/headers';
-import { isSecure, requireOwnOrigin } from '~/server/origin';
+import { methodsOf } from '~/server/methods';
+import { isSecure, requireKnownHost, requireOwnOrigin } from '~/server/origin';
 import { Problem, problemResponse, toProblem } from '~/server/problem';
 import { ready } from '~/server/start';
+
+/** What no endpoint answers below /api gets a problem document, not a page. */
+async function answered(context: APIContext, response: Response): Promise<Response> {
+  const { routePattern, request, url } = context;
+  const type = response.headers.get('content-type') ?? '';
+  if (!url.pathname.startsWith('/api/') || response.status !== 404 || type.includes('json')) return response;
+  const methods = await methodsOf(routePattern);
+  if (methods.length === 0)
+    return problemResponse(new Problem('NotFound', { detail: 'No such address. See /docs/api.' }));
+  const Allow = methods.join(', ');
+  if (request.method === 'OPTIONS') return new Response(null, { status: 204, headers: { Allow } });
+  return problemResponse(
+    new Problem('MethodNotAllowed', {
+      detail: `${request.method} is not among ${Allow}.`,
+      headers: { Allow },
+    }),
+  );
+}
 
 /** Every request: start if need be, refuse what another site sent, say who asks, add the headers. */
 export const onRequest: MiddlewareHandler = async (context, next) => {
@@ -17,6 +36,7 @@ export const onRequest: MiddlewareHandler = async (context, next) => {
   const { request, locals, cookies } = context;
   const secure = isSecure(request, settings());
   try {
+    requireKnownHost(request, settings());
     const theme = cookies.get('theme')?.value;
     locals.theme = theme === 'light' || theme === 'dark' ? theme : null;
     const { actor, session } = await identify(context);
@@ -24,7 +44,7 @@ export const onRequest: MiddlewareHandler = async (context, next) => {
     locals.user = actor.user;
     locals.session = session;
     if (actor.via !== 'token') requireOwnOrigin(request, settings());
-    return secured(await next(), secure);
+    return secured(await answered(context, await next()), secure);
   } catch (error) {
     return secured(problemResponse(toProblem(error)), secure);
   }

@@ -1,3 +1,4 @@
+import { requirePlain } from './plain-text';
 import { Problem } from './problem';
 
 export const DEFAULT_LIMIT_BYTES = 1024 * 1024;
@@ -28,7 +29,7 @@ export async function readBytes(request: Request, limit = DEFAULT_LIMIT_BYTES): 
 
 const isJson = (type: string) => type === 'application/json' || type.endsWith('+json');
 
-/** @throws Problem `UnsupportedMediaType`, `BodyTooLarge` or `InvalidRequest` */
+/** @throws Problem `UnsupportedMediaType`, `BodyTooLarge`, `InvalidRequest`, or `InvalidRows` for text that is not plain */
 export async function readJson(request: Request, limit?: number): Promise<unknown> {
   const type = mediaType(request);
   if (!isJson(type))
@@ -36,11 +37,14 @@ export async function readJson(request: Request, limit?: number): Promise<unknow
       detail: `Send application/json; this is ${type || 'of no stated type'}.`,
     });
   const text = decode(await readBytes(request, limit));
+  let body: unknown;
   try {
-    return JSON.parse(text);
+    body = JSON.parse(text);
   } catch {
     throw new Problem('InvalidRequest', { detail: 'The body is not JSON.' });
   }
+  requirePlain(body);
+  return body;
 }
 
 export const isForm = (request: Request): boolean =>
@@ -48,7 +52,9 @@ export const isForm = (request: Request): boolean =>
 
 /** Fields of a posted form; a repeated field keeps its last value. */
 export async function readForm(request: Request, limit?: number): Promise<Record<string, string>> {
-  return Object.fromEntries(new URLSearchParams(decode(await readBytes(request, limit))));
+  const fields = Object.fromEntries(new URLSearchParams(decode(await readBytes(request, limit))));
+  requirePlain(fields);
+  return fields;
 }
 
 function decode(bytes: Uint8Array): string {

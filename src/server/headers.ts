@@ -15,6 +15,7 @@ const DATA_CSP = "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; f
 export function secured(response: Response, secure: boolean): Response {
   const headers = new Headers(response.headers);
   for (const [name, value] of Object.entries(SECURITY_HEADERS)) headers.set(name, value);
+  if (!headers.has('Cache-Control')) headers.set('Cache-Control', 'private, no-cache');
   if (secure) headers.set('Strict-Transport-Security', HSTS);
   const isPage = headers.get('content-type')?.startsWith('text/html') ?? false;
   if (!isPage && !headers.has('Content-Security-Policy')) headers.set('Content-Security-Policy', DATA_CSP);

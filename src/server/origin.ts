@@ -1,4 +1,4 @@
-import type { Settings } from './env';
+import { isLoopback, type Settings } from './env';
 import { Problem } from './problem';
 
 const SAFE = new Set(['GET', 'HEAD', 'OPTIONS']);
@@ -14,6 +14,19 @@ export const publicOrigin = (settings: Settings): string =>
   settings.PUBLIC_URL
     ? new URL(settings.PUBLIC_URL).origin
     : `http://${settings.HOST.includes(':') ? `[${settings.HOST}]` : settings.HOST}:${settings.PORT}`;
+
+/**
+ * Refuses a name that is not ours: a foreign one that points at this machine would make another site's pages our own
+ * origin (DNS rebinding). On a public interface without PUBLIC_URL any name is taken, since none is known.
+ * @throws Problem `UnknownHost`
+ */
+export function requireKnownHost(request: Request, settings: Settings): void {
+  const host = new URL(`http://${request.headers.get('host') ?? new URL(request.url).host}`).hostname;
+  const publicName = settings.PUBLIC_URL ? new URL(settings.PUBLIC_URL).hostname : null;
+  if (isLoopback(host) || host === publicName || host === settings.HOST) return;
+  if (publicName === null && !isLoopback(settings.HOST)) return;
+  throw new Problem('UnknownHost', { detail: `This is ${publicOrigin(settings)}, not ${host}.` });
+}
 
 /**
  * Refuses what another site makes a browser send: any unsafe method, whatever the content type. Origin must be

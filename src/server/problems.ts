@@ -12,6 +12,7 @@ export const PROBLEMS = {
   Forbidden: { status: 403, title: 'Your role does not allow this' },
   ReadOnlyToken: { status: 403, title: 'The token is for reading only' },
   WrongPassword: { status: 403, title: 'The current password is not right' },
+  UnknownHost: { status: 421, title: 'This server does not go by that name' },
   ForeignOrigin: { status: 403, title: 'The request comes from another site' },
   DemoOff: { status: 404, title: 'The demo is off' },
   NotFound: { status: 404, title: 'Not found' },

@@ -2,10 +2,14 @@ import { RateLimiterMemory, type RateLimiterRes } from 'rate-limiter-flexible';
 import { Problem } from './problem';
 import { sha256 } from './secrets';
 
-/** Tries and seconds. An address may be a whole institute, an account is one person. "common practice, no source" */
+/**
+ * Tries and seconds. An address may be a whole institute, an account is one person; few tries at an account from one
+ * address, more from all, so that nobody can lock its owner out by guessing. Common practice, no source.
+ */
 const LIMITS = {
   'sign-in by address': [100, 15 * 60],
-  'sign-in by account': [10, 15 * 60],
+  'sign-in by account and address': [10, 15 * 60],
+  'sign-in by account': [100, 15 * 60],
   'sign-up by address': [30, 60 * 60],
   'reset by address': [30, 60 * 60],
   'reset by account': [5, 60 * 60],

@@ -1,6 +1,7 @@
 import type { APIContext, APIRoute } from 'astro';
 import type { z } from 'zod';
 import { localPath } from '~/paths';
+import { isPlain, plain } from '~/plain';
 import { openProject, type Access } from './access';
 import type { Actor } from './actor';
 import { isForm, readForm, readJson } from './body';
@@ -77,6 +78,8 @@ function describe(
   const answer: APIRoute = async (context) => {
     const fields: Fields = {};
     try {
+      if (!Object.values(context.params).every((value) => isPlain(value ?? '')))
+        throw new Problem('NotFound');
       const result = await run(context, fields);
       if (result instanceof Response) return result;
       if (result === undefined) return new Response(null, { status: 204 });
@@ -97,6 +100,9 @@ async function read<Q extends Shape, B extends Shape>(
 ): Promise<Call<Q, B>> {
   const { request, params, url, locals } = context;
   const query = Object.fromEntries(url.searchParams);
+  for (const [name, value] of Object.entries(query))
+    if (!isPlain(value))
+      throw new Problem('InvalidQuery', { detail: `${plain(name)} holds control characters.` });
   const posted = spec.form !== undefined && isForm(request);
   let raw: unknown;
   if (posted) raw = Object.assign(fields, await readForm(request, spec.limitBytes));

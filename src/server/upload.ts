@@ -1,6 +1,7 @@
 import busboy from 'busboy';
 import { Readable } from 'node:stream';
 import type { ReadableStream as NodeStream } from 'node:stream/web';
+import { isPlain, plain } from '~/plain';
 import { Problem } from './problem';
 
 export interface Upload {
@@ -42,7 +43,9 @@ function collect(body: Readable, type: string, limitBytes: number): Promise<Uplo
     });
     parser.on('field', (name, value, info) => {
       if (info.valueTruncated) fail(tooLarge(FIELD_BYTES));
-      else fields[name] = value;
+      else if (isPlain(value)) fields[name] = value;
+      else
+        fail(new Problem('InvalidRequest', { detail: `The field ${plain(name)} holds control characters.` }));
     });
     parser.on('file', (name, stream, info) => {
       const chunks: Buffer[] = [];
@@ -50,7 +53,7 @@ function collect(body: Readable, type: string, limitBytes: number): Promise<Uplo
       stream.on('limit', () => fail(tooLarge(limitBytes)));
       stream.on('end', () => {
         if (name === 'file')
-          file = { name: info.filename || 'file', bytes: new Uint8Array(Buffer.concat(chunks)) };
+          file = { name: plain(info.filename || 'file'), bytes: new Uint8Array(Buffer.concat(chunks)) };
       });
     });
     parser.on('close', () => resolve({ fields, file }));

@@ -86,6 +86,41 @@ describe('a file with mistakes', () => {
   });
 });
 
+describe('values that the ledger would refuse', () => {
+  it('are rejected with their lines, and the rest is taken', async () => {
+    await withBlocks();
+    const header =
+      'block,relative_to,age_ma,pole_lat,pole_lon,angle_deg,chron,cov_xx,cov_xy,cov_xz,cov_yy,cov_yz,cov_zz\n';
+    const long = 'C'.repeat(41);
+    const text =
+      `${header}sable,tarn,10,2.5,-27,4,C5,,,,,,\nsable,tarn,20,2.5,-27,8,${long},,,,,,\n` +
+      `sable,tarn,30,2.5,-27,9,C7,1e9,0,0,1,0,1\nsable,tarn,40,2.5,-27,9,C\u0001,,,,,,\n`;
+    const { json } = await send({ kind: 'rotations', text, fields: { skip_rejected: 'true' } });
+    expect(json.written).toBe(true);
+    expect(json.accepted).toBe(1);
+    const found = json.rejected.map((r: { line: number; column: string | null; problem: string }) => [
+      ...[r.line, r.column, r.problem],
+    ]);
+    expect(found).toEqual(
+      expect.arrayContaining([
+        [3, 'chron', 'more than 40 characters'],
+        [4, 'covariance', 'beyond ±40 rad²'],
+        [5, null, 'holds control characters or half a character'],
+      ]),
+    );
+  });
+
+  it('are never cut to fit', async () => {
+    const name = 'N'.repeat(121);
+    const feature = { type: 'Feature', properties: { code: 'n', name, kind: 'frame' }, geometry: null };
+    const { json } = await send({
+      kind: 'blocks',
+      text: JSON.stringify({ type: 'FeatureCollection', features: [feature] }),
+    });
+    expect(json.rejected[0]).toMatchObject({ line: 1, column: 'name', problem: 'more than 120 characters' });
+  });
+});
+
 describe('open questions', () => {
   it('hold the writing back until they are answered', async () => {
     await withBlocks();

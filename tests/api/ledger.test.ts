@@ -494,6 +494,29 @@ describe('events', () => {
     expect(text).toContain(`"label":"Added block sable","actor":{"id":"${team.researcher.id}"`);
     await reader.cancel();
   });
+
+  it('end for who has left the team, at the next change', async () => {
+    const response = await app.respond('GET', team.at('events'), { as: team.reviewer });
+    const reader = response.body!.pipeThrough(new TextDecoderStream()).getReader();
+    await reader.read();
+    const { status } = await app.call('DELETE', team.at(`members/${team.reviewer.id}`), { as: team.lead });
+    expect(status).toBe(204);
+    await add(app, team, 'blocks', terrane('sable'));
+    let text = '';
+    for (let part = await reader.read(); !part.done; part = await reader.read()) text += part.value;
+    expect(text).not.toContain('event: change');
+  });
+
+  it('end for who has signed out', async () => {
+    const response = await app.respond('GET', team.at('events'), { as: team.reviewer });
+    const reader = response.body!.pipeThrough(new TextDecoderStream()).getReader();
+    await reader.read();
+    await app.call('POST', '/api/auth/sign-out', { as: team.reviewer });
+    await add(app, team, 'blocks', terrane('sable'));
+    let text = '';
+    for (let part = await reader.read(); !part.done; part = await reader.read()) text += part.value;
+    expect(text).not.toContain('event: change');
+  });
 });
 
 describe('versions', () => {

@@ -51,6 +51,48 @@ describe('another site', () => {
   });
 });
 
+describe('text that no database, page or map can hold', () => {
+  it.each([
+    ['a NUL', 'a\u0000b'],
+    ['a bell', 'a\u0007b'],
+    ['half a character', 'a\ud800b'],
+  ])('is refused by the field it stands in: %s', async (_, title) => {
+    const answer = await app.call('POST', '/api/projects', { as: team.lead, body: { title, slug: 'odd' } });
+    expect([answer.status, answer.json.name, answer.json.errors[0].path]).toEqual([
+      422,
+      'InvalidRows',
+      'title',
+    ]);
+  });
+
+  it.each(['imports/%00/file', 'members/%00', 'slice.svg?age_ma=0&title=%00', 'versions/99999999999'])(
+    'is no server error in an address: %s',
+    async (path) => {
+      const answer = await app.call('GET', team.at(path), { as: team.lead });
+      expect([400, 404, 405]).toContain(answer.status);
+    },
+  );
+
+  it('nested a hundred thousand levels deep is refused', async () => {
+    const answer = await app.call('POST', team.at('edits'), {
+      as: team.lead,
+      raw: `{"edits":${'['.repeat(100_000)}${']'.repeat(100_000)}}`,
+      headers: { 'Content-Type': 'application/json' },
+      revision: '*',
+    });
+    expect([answer.status, answer.json.name]).toEqual([400, 'InvalidRequest']);
+  });
+});
+
+describe('names of this server', () => {
+  it('are its own only: another name that points here is refused (DNS rebinding)', async () => {
+    const answer = await app.call('GET', '/api/me', { as: team.lead, headers: { Host: 'rebound.example' } });
+    expect([answer.status, answer.json.name]).toEqual([421, 'UnknownHost']);
+    for (const Host of ['127.0.0.1:4321', 'localhost:4321', '[::1]:4321'])
+      expect((await app.call('GET', '/api/me', { as: team.lead, headers: { Host } })).status).toBe(200);
+  });
+});
+
 describe('bodies', () => {
   it('over the limit are refused whatever length they state', async () => {
     const big = JSON.stringify({ title: 'x'.repeat(2_000_000), slug: 'big' });

@@ -37,13 +37,17 @@ export async function createAccount(context: APIContext, body: z.output<typeof s
 export async function signInByPassword(context: APIContext, body: z.output<typeof signIn>): Promise<Me> {
   const address = context.clientAddress;
   const account = body.email.toLowerCase();
-  await countTry('sign-in by address', address);
-  await countTry('sign-in by account', account);
+  const tries = [
+    ['sign-in by address', address],
+    ['sign-in by account and address', `${account} ${address}`],
+    ['sign-in by account', account],
+  ] as const;
+  for (const [limit, key] of tries) await countTry(limit, key);
   const [found] = await database().select().from(user).where(byEmail(account));
   if (!(await passwordMatches(found?.password_hash, body.password)) || !found) {
     throw new Problem('WrongCredentials', { detail: 'Try again, or set a new password.' });
   }
-  await Promise.all([giveBack('sign-in by address', address), giveBack('sign-in by account', account)]);
+  await Promise.all(tries.map(([limit, key]) => giveBack(limit, key)));
   await startSession(context, found.id);
   return asMe(found);
 }

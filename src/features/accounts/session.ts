@@ -131,6 +131,16 @@ export async function listSessions(actor: Actor, current: string | null): Promis
   }));
 }
 
+/** Whether a session that a long answer began with still stands; a visitor or a token has none to lose. */
+export async function stillSignedIn(id: string | null): Promise<boolean> {
+  if (id === null) return true;
+  const [found] = await database()
+    .select({ id: session.id })
+    .from(session)
+    .where(and(eq(session.id, id), gt(session.expiresAt, new Date())));
+  return found !== undefined;
+}
+
 /** @throws Problem `NotFound` for a session of someone else */
 export async function revokeSession(actor: Actor, id: string): Promise<void> {
   const gone = await database()

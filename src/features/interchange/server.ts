@@ -21,6 +21,7 @@ import { planDirections, planFeatures } from './rules/plan-evidence';
 import { planRotations } from './rules/plan-rotations';
 import { rejectedCsv } from './rules/rejected-csv';
 import { readRotations, type FileReading } from './rules/rotations';
+import { usable } from './usable';
 
 export interface ImportRequest {
   readonly file: { readonly name: string; readonly bytes: Uint8Array };
@@ -81,19 +82,19 @@ function readFile(
   const codes = new Set(state.blocks.map((block) => block.code));
   switch (kind) {
     case 'blocks': {
-      const reading = readBlocks(text, answers);
+      const reading = usable(readBlocks(text, answers), kind, ({ fields }) => fields);
       return { reading, plan: planBlocks(reading, state.blocks) };
     }
     case 'rotations': {
-      const reading = readRotations(text, answers, mapping);
+      const reading = usable(readRotations(text, answers, mapping), kind, (fields) => fields);
       return { reading, plan: planRotations(reading, state) };
     }
     case 'features': {
-      const reading = readFeatures(text, codes, answers);
+      const reading = usable(readFeatures(text, codes, answers), kind, ({ fields }) => fields);
       return { reading, plan: planFeatures(reading, state.features) };
     }
     case 'directions': {
-      const reading = readDirections(text, codes, answers, mapping);
+      const reading = usable(readDirections(text, codes, answers, mapping), kind, (fields) => fields);
       return { reading, plan: planDirections(reading, state.directions) };
     }
   }

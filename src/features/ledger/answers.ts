@@ -14,7 +14,7 @@ export function expectedRevision(request: Request): ExpectedRevision {
       detail: 'Send If-Match: "<revision>", as the last answer gave it.',
     });
   if (header === '*') return '*';
-  const revision = /^(?:W\/)?"?(\d+)"?$/.exec(header)?.[1];
+  const revision = /^(?:W\/)?"?(\d{1,9})"?$/.exec(header)?.[1];
   if (revision === undefined)
     throw new Problem('InvalidRequest', { detail: `If-Match reads ${header}: a revision is expected.` });
   return Number(revision);

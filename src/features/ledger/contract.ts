@@ -8,11 +8,12 @@ export const slug = z
   .max(64)
   .regex(/^[a-z0-9]+(?:-[a-z0-9]+)*$/, 'lower-case letters, digits and single hyphens');
 
-const age = z.number().min(0).max(4600);
-const latitude = z.number().min(-90).max(90);
+const age = z.number().min(0, 'a negative age').max(4600, 'older than the Earth');
+const latitude = z.number().min(-90, 'latitude beyond 90°').max(90, 'latitude beyond 90°');
 /** Longitudes are stored as entered, so that files round-trip; ±360° covers every way of writing one. */
-const longitude = z.number().min(-360).max(360);
-const text = z.string().max(2000);
+const longitude = z.number().min(-360, 'longitude beyond 360°').max(360, 'longitude beyond 360°');
+const upTo = (most: number) => z.string().max(most, `more than ${most} characters`);
+const text = upTo(2000);
 const nullable = <T extends z.ZodType>(schema: T) => schema.nullable().default(null);
 
 export const evidence = z.enum(EVIDENCE);
@@ -21,7 +22,7 @@ export const insideRule = z.enum(['smaller', 'larger']);
 
 export const blockFields = z.object({
   code: slug,
-  name: z.string().min(1).max(120),
+  name: upTo(120).min(1, 'blank'),
   kind: blockKind,
   appears_ma: nullable(age),
   disappears_ma: nullable(age),
@@ -40,10 +41,11 @@ export const outlineFields = z.object({
   source: nullable(text),
 });
 
+/** rad²; a standard deviation of more than a whole turn says nothing. */
+const variance = z.number().min(-40, 'beyond ±40 rad²').max(40, 'beyond ±40 rad²');
+
 /** Entries xx, xy, xz, yy, yz, zz in rad², in the present coordinates of the moving block. */
-export const covariance = z
-  .tuple([z.number(), z.number(), z.number(), z.number(), z.number(), z.number()])
-  .readonly();
+export const covariance = z.tuple([variance, variance, variance, variance, variance, variance]).readonly();
 
 export const rotationFields = z.object({
   block: slug,
@@ -51,8 +53,8 @@ export const rotationFields = z.object({
   age_ma: age,
   pole_lat: latitude,
   pole_lon: longitude,
-  angle_deg: z.number().min(-720).max(720),
-  chron: nullable(z.string().max(40)),
+  angle_deg: z.number().min(-720, 'more than two turns').max(720, 'more than two turns'),
+  chron: nullable(upTo(40)),
   age_two_sigma_ma: nullable(z.number().min(0).max(1000)),
   evidence: evidence.default('unconstrained'),
   covariance: nullable(covariance),

@@ -115,7 +115,7 @@ function readFeature(
   if (reader.rejected.length > before) return null;
   const fields: BlockFields = {
     code,
-    name: (reader.text(feature, 'name') ?? code).slice(0, 120),
+    name: reader.text(feature, 'name') ?? code,
     kind: kind ?? 'other',
     appears_ma: appears_ma ?? null,
     disappears_ma: disappears_ma ?? null,

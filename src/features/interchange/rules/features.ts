@@ -88,7 +88,7 @@ function readOne(
   const fields = {
     block,
     kind,
-    name: (reader.text(feature, 'name') ?? '').slice(0, 200),
+    name: reader.text(feature, 'name') ?? '',
     age_ma: age_ma ?? null,
     appears_ma: appears_ma ?? null,
     disappears_ma: disappears_ma ?? null,

@@ -1,4 +1,5 @@
 /** Reads the properties of GeoJSON features with the same care as the cells of a table. */
+import { isPlain, plain } from '../../../plain';
 import type { RejectedRow } from '../contract';
 import type { Asking } from './ask';
 import type { LocatedFeature } from './geojson-text';
@@ -19,7 +20,16 @@ export class PropertyReader {
   text(feature: LocatedFeature, column: string): string | null {
     const value = feature.properties[column];
     if (value === null || value === undefined || value === '') return null;
-    return typeof value === 'string' ? value.trim() : String(value);
+    const text = typeof value === 'string' ? value.trim() : String(value);
+    if (!isPlain(text))
+      this.reject(
+        feature,
+        column,
+        'holds control characters or half a character',
+        'Type the text again, without what cannot be seen.',
+        plain(text),
+      );
+    return text;
   }
 
   /** A number or its text; null where absent or blank; undefined where rejected. */

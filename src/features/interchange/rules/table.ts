@@ -1,5 +1,6 @@
 /** Delimited text to rows that remember their line. RFC 4180 quoting; comma, semicolon, tab or bar between cells. */
 import { parse } from 'csv-parse/sync';
+import { isPlain, plain } from '../../../plain';
 
 export interface TableRow {
   readonly line: number;
@@ -56,6 +57,13 @@ export function readTable(text: string): Table {
   for (const { record, info } of rest) {
     if (record.every((cell) => cell.trim() === '')) continue;
     const line = info.lines;
+    const unplain = record.find((cell) => !isPlain(cell));
+    if (unplain !== undefined) {
+      const problem = 'holds control characters or half a character';
+      const hint = 'Type the text again, without what cannot be seen.';
+      broken.push({ line, read: plain(unplain), problem, hint });
+      continue;
+    }
     const extra = record.slice(headings.length).filter((cell) => cell.trim() !== '');
     if (extra.length > 0) {
       const hint =

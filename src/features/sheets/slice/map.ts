@@ -7,7 +7,7 @@ import { pathSvg, type DrawnPath } from './drift';
 import { graticuleLabels, graticuleSvg } from './graticule';
 import { COAST, INK, OUTLINE, PAPER } from './palette';
 import { pathWriter } from './path-writer';
-import { element, textElement } from './svg';
+import { element, escapeXml, textElement } from './svg';
 import { arrowSvg, type Arrow } from './velocity';
 import { visible } from './visible';
 
@@ -42,7 +42,7 @@ function blockSvg({ code, evidence, name }: CarriedBlock, d: string): string {
   if (d === '') return '';
   const stroke = { stroke: OUTLINE, 'stroke-width': 0.7, 'stroke-linejoin': 'round' };
   const dash = evidence === 'unconstrained' ? '5 2.6' : undefined;
-  const title = element('title', {}, name.replace(/[&<>]/g, ''));
+  const title = element('title', {}, escapeXml(name));
   return element(
     'path',
     {

@@ -1,3 +1,4 @@
+import { stillSignedIn } from '~/features/accounts/session';
 import { draftEvents } from '~/features/ledger/events';
 import { projectRoute } from '~/server/route';
 
@@ -7,5 +8,6 @@ export const GET = projectRoute(
     summary: 'Changes of the draft as server-sent events',
     streams: 'text/event-stream',
   },
-  ({ access, request }) => draftEvents(access, request.signal),
+  ({ access, request, context }) =>
+    draftEvents(access, request.signal, () => stillSignedIn(context.locals.session?.id ?? null)),
 );

@@ -10,8 +10,7 @@ export const GET = projectRoute(
     answer: changeEntry,
   },
   ({ access, params }) => {
-    const revision = Number(params['revision']);
-    if (!Number.isSafeInteger(revision)) throw new Problem('NotFound');
-    return readChange(access, revision);
+    if (!/^[1-9]\d{0,8}$/.test(params['revision'] ?? '')) throw new Problem('NotFound');
+    return readChange(access, Number(params['revision']));
   },
 );

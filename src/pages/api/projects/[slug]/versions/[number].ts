@@ -11,8 +11,7 @@ export const GET = projectRoute(
     answer: versionEntry.extend({ manifest: z.string() }),
   },
   ({ access, params }) => {
-    const number = Number(params['number']);
-    if (!Number.isSafeInteger(number)) throw new Problem('UnknownVersion');
-    return readVersion(access, number);
+    if (!/^[1-9]\d{0,8}$/.test(params['number'] ?? '')) throw new Problem('UnknownVersion');
+    return readVersion(access, Number(params['number']));
   },
 );
