@@ -51,3 +51,41 @@ test('an outline is drawn on the globe, its corners moved, and both undone', asy
   await page.getByRole('button', { name: 'Undo' }).click();
   await expect.poll(async () => (await blocks()).length).toBe(0);
 });
+
+test('an outline of two parts is edited part by part, and the other stays to the last digit', async ({
+  page,
+}) => {
+  const slug = 'two-parts';
+  await ownProject(page, slug);
+  const island = [[20.123456, 0], [30, 1], [25, 9], [20.123456, 0]]; // prettier-ignore
+  const islet = [[-20, 0], [-12, 1], [-15, 9], [-20, 0]]; // prettier-ignore
+  const feature = {
+    type: 'Feature',
+    properties: { code: 'alder', name: 'Alder arc', kind: 'arc' },
+    geometry: { type: 'MultiPolygon', coordinates: [[island], [islet]] },
+  };
+  const text = JSON.stringify({ type: 'FeatureCollection', features: [feature] });
+  const sent = await page.request.post(`/api/projects/${slug}/imports`, {
+    headers: { origin: new URL(page.url()).origin },
+    multipart: {
+      kind: 'blocks',
+      file: { name: 'b.geojson', mimeType: 'application/geo+json', buffer: Buffer.from(text) },
+    },
+  });
+  expect(await sent.json()).toMatchObject({ written: true });
+
+  await page.goto(`/projects/${slug}/workbench?block=alder&centre=0,5`);
+  await page.getByRole('button', { name: 'Move corners of Alder arc' }).click();
+  await page.getByRole('combobox', { name: 'Ring' }).selectOption('Part 2');
+  await page.getByRole('button', { name: /^Corner 2 of 3/ }).focus();
+  await page.keyboard.press('Shift+ArrowUp');
+  await page.getByRole('button', { name: 'Keep the outline' }).click();
+  await expect(page.getByText('The outline is kept.')).toBeVisible();
+  const file = (await (
+    await page.request.get(`/api/projects/${slug}/exports/blocks.geojson?version=draft`)
+  ).json()) as { features: { geometry: { coordinates: number[][][][] } }[] };
+  const parts = file.features[0]!.geometry.coordinates;
+  expect(parts[0]).toEqual([island]);
+  // Shift with an arrow moves a corner by one degree of latitude.
+  expect(parts[1]).toEqual([[islet[0], [-12, 2], islet[2], islet[0]]]);
+});

@@ -2,17 +2,21 @@
 import { describe, expect, it } from 'vitest';
 import {
   added,
-  cornersOf,
   middle,
   moved,
   nudged,
   outlineFault,
   present,
   removed,
+  ringAt,
+  ringNames,
+  ringsOf,
   seen,
   split,
+  toGeometry,
   toPolygon,
   toPosition,
+  withRing,
   type Corners,
 } from '~/features/motion/globe/outline-edit';
 import { vectorOf } from '~/features/motion/globe/matrix';
@@ -34,7 +38,7 @@ describe('corners', () => {
   });
 
   it('move by degrees on the ground, not past a pole', () => {
-    const [lon, lat] = toPosition(nudged(vectorOf(60, 10), 1, 0.1));
+    const [lon = NaN, lat = NaN] = toPosition(nudged(vectorOf(60, 10), 1, 0.1));
     expect(Math.abs(lat - 60.1)).toBeLessThan(1e-4);
     expect(Math.abs((lon - 10) * Math.cos((60.1 * Math.PI) / 180) - 1)).toBeLessThan(1e-3);
     expect(toPosition(nudged(vectorOf(89.95, 10), 0, 1))[1]).toBe(89.9);
@@ -59,7 +63,7 @@ describe('an outline', () => {
       const area = ring.slice(1).reduce((sum, [x, y], i) => sum + ring[i]![0]! * y! - x! * ring[i]![1]!, 0);
       expect(area).toBeGreaterThan(0);
     }
-    expect(cornersOf(toPolygon(square))!.map(toPosition)).toEqual(square.map(toPosition));
+    expect(ringsOf(toPolygon(square))[0]![0]!.map(toPosition)).toEqual(square.map(toPosition));
   });
 
   it('is refused with fewer than three corners, or crossing itself', () => {
@@ -68,9 +72,17 @@ describe('an outline', () => {
     expect(outlineFault(square)).toBeNull();
   });
 
-  it('of several parts or with a hole is left to the file', () => {
-    const ring = toPolygon(square).coordinates[0]!;
-    expect(cornersOf({ type: 'MultiPolygon', coordinates: [[ring], [ring]] })).toBeNull();
-    expect(cornersOf({ type: 'Polygon', coordinates: [ring, ring] })).toBeNull();
+  it('of several parts, with a hole, comes back as it was to the last digit, but for the corner moved', () => {
+    const outer = [[170.123456789, -10, 12], [190, -10.5], [189, 12], [170.123456789, -10, 12]]; // prettier-ignore
+    const hole = [[175, -5], [176, -2], [180, -5], [175, -5]]; // prettier-ignore
+    const island = [[0, 0], [3, 0], [3, 4], [0, 0]]; // prettier-ignore
+    const geometry = { type: 'MultiPolygon' as const, coordinates: [[outer, hole], [island]] };
+    const rings = ringsOf(geometry);
+    expect(toGeometry(rings)).toEqual(geometry);
+    expect(ringNames(rings).map(({ name }) => name)).toEqual(['Part 1', 'Part 1, hole 1', 'Part 2']);
+    const at = { part: 0, ring: 1 };
+    const changed = toGeometry(withRing(rings, at, moved(ringAt(rings, at), 1, vectorOf(-1.5, 177))));
+    expect(changed.coordinates).toEqual([[outer, [[175, -5], [177, -1.5], [180, -5], [175, -5]]], [island]]); // prettier-ignore
+    expect(toGeometry(ringsOf({ type: 'Polygon', coordinates: [island] })).type).toBe('Polygon');
   });
 });

@@ -90,7 +90,7 @@ export function PhoneWorkbench({ head, notice }: { readonly head: Head; readonly
         </div>
         <div className="border-frame relative h-[284px] border-b">
           <GlobeCanvas label={`${frame}: drag to turn, pinch to zoom`} describedBy="block-list" shortNames />
-          <p className="t-label text-ink-2 pointer-events-none absolute bottom-2 left-3 w-[76px]">
+          <p className="t-label text-ink-2 bg-paper/80 pointer-events-none absolute bottom-2 left-3 w-[76px]">
             dashed: present coast, for location only
           </p>
           <button

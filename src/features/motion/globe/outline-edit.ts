@@ -1,5 +1,5 @@
 /** An outline under edit: its corners as unit vectors in the block's present coordinates, first not repeated. */
-import type { MultiPolygon, Polygon } from 'geojson';
+import type { MultiPolygon, Polygon, Position } from 'geojson';
 import { readRing, ringArea, toLatLon } from '../../../kernel/sphere';
 import { selfCrossing } from '../../interchange/rules/rings';
 import { turn, turnBack, unit, vectorOf, type Vec } from './matrix';
@@ -34,9 +34,12 @@ export function nudged(v: Vec, east: number, north: number): Vec {
 export const present = (v: Vec, pose: ArrayLike<number> | null): Vec => (pose ? turnBack(pose, v) : v);
 export const seen = (v: Vec, pose: ArrayLike<number> | null): Vec => (pose ? turn(pose, v) : v);
 
-export const toPosition = (v: Vec): [number, number] => {
+/** Positions that corners were read from. */
+const asRead = new WeakMap<Vec, Position>();
+
+export const toPosition = (v: Vec): Position => {
   const { lat, lon } = toLatLon(v);
-  return [rounded(lon), rounded(lat)];
+  return asRead.get(v) ?? [rounded(lon), rounded(lat)];
 };
 
 /** What keeps the corners from being an outline, in words; null where nothing does. */
@@ -46,17 +49,53 @@ export function outlineFault(corners: Corners): string | null {
   return selfCrossing([...ring, ring[0]!]) ? 'The outline crosses itself.' : null;
 }
 
-/** The outline as GeoJSON: closed, anticlockwise. Inverse: {@link cornersOf}. */
+/** A drawn outline as GeoJSON: closed, anticlockwise. */
 export function toPolygon(corners: Corners): Polygon {
   const ring = corners.map(toPosition);
   if (ringArea(readRing(ring)) < 0) ring.reverse();
   return { type: 'Polygon', coordinates: [[...ring, ring[0]!]] };
 }
 
-/** Corners of an outline of one ring; null for one with holes or several parts, which is edited as a file. */
-export function cornersOf(geometry: Polygon | MultiPolygon): Corners | null {
+/** Rings of each part: the outer one first, then its holes. */
+export type Rings = readonly (readonly Corners[])[];
+
+/** Rings of an outline that is there; corners left where they are keep their positions to the last digit. */
+export function ringsOf(geometry: Polygon | MultiPolygon): Rings {
   const polygons = geometry.type === 'Polygon' ? [geometry.coordinates] : geometry.coordinates;
-  const [rings] = polygons;
-  if (polygons.length !== 1 || rings?.length !== 1) return null;
-  return readRing(rings[0]!).map(([x, y, z]): Vec => [x, y, z]);
+  return polygons.map((rings) => rings.map((ring) => ring.slice(0, -1).map(keptCorner)));
 }
+
+function keptCorner(position: Position): Vec {
+  const corner = vectorOf(position[1]!, position[0]!);
+  asRead.set(corner, position);
+  return corner;
+}
+
+/** Inverse of {@link ringsOf}. */
+export function toGeometry(rings: Rings): Polygon | MultiPolygon {
+  const parts = rings.map((part) => part.map((ring) => closed(ring.map(toPosition))));
+  return parts.length === 1
+    ? { type: 'Polygon', coordinates: parts[0]! }
+    : { type: 'MultiPolygon', coordinates: parts };
+}
+
+const closed = (ring: Position[]): Position[] => [...ring, ring[0]!];
+
+export interface RingPlace {
+  readonly part: number;
+  readonly ring: number;
+}
+
+export const ringAt = (rings: Rings, { part, ring }: RingPlace): Corners => rings[part]?.[ring] ?? [];
+
+export const withRing = (rings: Rings, at: RingPlace, corners: Corners): Rings =>
+  rings.map((part, p) => (p === at.part ? part.map((ring, r) => (r === at.ring ? corners : ring)) : part));
+
+/** "Part 2, hole 1" for each ring, in their order. */
+export const ringNames = (rings: Rings): { readonly at: RingPlace; readonly name: string }[] =>
+  rings.flatMap((part, p) =>
+    part.map((_, r) => ({
+      at: { part: p, ring: r },
+      name: `Part ${p + 1}${r > 0 ? `, hole ${r}` : ''}`,
+    })),
+  );

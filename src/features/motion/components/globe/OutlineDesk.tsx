@@ -7,23 +7,31 @@ import { getJson, keys } from '../../client';
 import { age as ageText, count } from '../../format';
 import {
   added,
-  cornersOf,
   moved,
   outlineFault,
   present,
   removed,
+  ringAt,
+  ringNames,
+  ringsOf,
   seen,
   split,
+  toGeometry,
   toPolygon,
+  withRing,
   type Corners,
+  type RingPlace,
+  type Rings,
 } from '../../globe/outline-edit';
 import { select } from '../../store/actions';
 import { useBench, useFrame, useWorkbench } from '../bench';
 import { matrixOf } from '../../scene/frame';
+import { holdsAt } from '../../scene/scene';
 import { useDraft } from '../ledger/use-draft';
 import { useSize } from '../use-size';
 import { NewBlockForm, type NewBlock } from './NewBlockForm';
 import { OutlineHandles } from './OutlineHandles';
+import { RingChoice } from './RingChoice';
 import { useDisc } from './use-disc';
 
 type Work =
@@ -33,9 +41,21 @@ type Work =
       readonly name: 'editing';
       readonly block: string;
       readonly outline: string;
+      /** Of the ring under edit. */
       readonly corners: Corners;
-      readonly before: Corners;
+      readonly at: RingPlace;
+      readonly rings: Rings;
     };
+
+function faultOf(work: Exclude<Work, { name: 'naming' }>): string | null {
+  if (work.name === 'drawing') return outlineFault(work.corners);
+  const rings = withRing(work.rings, work.at, work.corners);
+  for (const { at, name } of ringNames(rings)) {
+    const fault = outlineFault(ringAt(rings, at));
+    if (fault) return ringNames(rings).length > 1 ? `${name}: ${fault}` : fault;
+  }
+  return null;
+}
 
 /** A press that moves further turns the globe. */
 const SLACK = 4;
@@ -55,7 +75,9 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
   const own = work && work.name !== 'naming' ? work.block : null;
   const pose = own === null ? null : matrixOf(frame, own);
   const block = draft.blocks.find((one) => one.code === code);
-  const [outline] = block?.outlines ?? [];
+  const outline = block?.outlines.find(({ outline_older_ma, outline_younger_ma }) =>
+    holdsAt(outline_older_ma, outline_younger_ma, ageMa),
+  );
 
   const put = (corners: Corners): void => setWork((now) => (now ? { ...now, corners } : now));
   const leave = (say = ''): void => {
@@ -100,19 +122,25 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
   const begin = async (): Promise<void> => {
     if (!block || !outline) return;
     const geometry = await getJson<Polygon | MultiPolygon>(`/api/geometry/${outline.sha256}?format=geojson`);
-    const corners = cornersOf(geometry);
-    if (corners)
-      setWork({ name: 'editing', block: block.code, outline: outline.id, corners, before: corners });
-    else
-      setWords('This outline has several parts or holes: export it, change the file, and import it again.');
+    const rings = ringsOf(geometry);
+    const at = { part: 0, ring: 0 };
+    setWords('');
+    setWork({
+      name: 'editing',
+      block: block.code,
+      outline: outline.id,
+      rings,
+      at,
+      corners: ringAt(rings, at),
+    });
   };
 
   const finish = (): void => {
     if (!work || work.name === 'naming') return;
-    const fault = outlineFault(work.corners);
+    const fault = faultOf(work);
     if (fault) return setWords(fault);
-    const geometry = toPolygon(work.corners);
     if (work.name === 'editing') {
+      const geometry = toGeometry(withRing(work.rings, work.at, work.corners));
       void run(
         [{ op: 'update', table: 'outlines', id: work.outline, fields: { geometry } }],
         `Move corners of ${work.block}`,
@@ -120,7 +148,13 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
       );
     } else if (work.block) {
       void run(
-        [{ op: 'create', table: 'outlines', fields: { block: work.block, geometry } }],
+        [
+          {
+            op: 'create',
+            table: 'outlines',
+            fields: { block: work.block, geometry: toPolygon(work.corners) },
+          },
+        ],
         `Draw the outline of ${work.block}`,
         'The outline is kept.',
       );
@@ -188,6 +222,16 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
             refused={draft.refused}
             onKeep={(fields) => void make(fields)}
             onPutBack={() => leave('Put back.')}
+          />
+        )}
+        {work?.name === 'editing' && ringNames(work.rings).length > 1 && (
+          <RingChoice
+            rings={work.rings}
+            at={work.at}
+            onChoose={(at) => {
+              const rings = withRing(work.rings, work.at, work.corners);
+              setWork({ ...work, rings, at, corners: ringAt(rings, at) });
+            }}
           />
         )}
         <div className="flex gap-1.5">
