@@ -76,7 +76,8 @@ function serve(request, response) {
       });
     });
   };
-  if (request.method === 'GET' || request.method === 'HEAD') files(request, response, dynamic);
+  if (request.method === 'TRACE' || request.method === 'CONNECT') response.writeHead(405).end();
+  else if (request.method === 'GET' || request.method === 'HEAD') files(request, response, dynamic);
   else dynamic();
 }
 
@@ -104,8 +105,8 @@ server.listen(port, host, async () => {
   );
 });
 
-/** What an answer under way is given to end; streams of events do not end by themselves. */
-const GRACE_MS = 2000;
+/** What an answer under way is given to end. */
+const GRACE_MS = 10_000;
 
 let ending = false;
 async function end() {
@@ -113,6 +114,7 @@ async function end() {
   ending = true;
   // Answers under way may still need the database: it closes after the last connection.
   const closed = new Promise((done) => server.close(done));
+  runtime()?.endStreams?.();
   server.closeIdleConnections();
   setTimeout(() => server.closeAllConnections(), GRACE_MS).unref();
   await closed;

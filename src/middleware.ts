@@ -46,6 +46,20 @@ export const onRequest: MiddlewareHandler = async (context, next) => {
     if (actor.via !== 'token') requireOwnOrigin(request, settings());
     return secured(await answered(context, await next()), secure);
   } catch (error) {
-    return secured(problemResponse(toProblem(error)), secure);
+    return secured(await failed(context, toProblem(error)), secure);
   }
 };
+
+/** An unforeseen error of a page is told as a page. */
+async function failed(context: APIContext, problem: Problem): Promise<Response> {
+  const { request, url } = context;
+  const wantsPage = request.headers.get('accept')?.includes('text/html') ?? false;
+  if (problem.name !== 'Unexpected' || url.pathname.startsWith('/api/') || !wantsPage)
+    return problemResponse(problem);
+  try {
+    const page = await context.rewrite('/500');
+    return new Response(page.body, { status: problem.status, headers: page.headers });
+  } catch {
+    return problemResponse(problem);
+  }
+}

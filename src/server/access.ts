@@ -6,6 +6,8 @@ import type { Actor } from './actor';
 import { can, requireCan, type ProjectAction, type Standing } from './policy';
 import { Problem } from './problem';
 
+const isSlug = (text: string): boolean => /^[a-z0-9-]{1,64}$/.test(text);
+
 export type ProjectRow = typeof project.$inferSelect;
 
 /** A project opened by someone who may do at least one thing in it. Features take this, not a slug. */
@@ -19,6 +21,7 @@ export interface Access extends Standing {
  * @throws Problem `NotFound` where the actor may not know of it, `Forbidden` where the role does not allow the action
  */
 export async function openProject(actor: Actor, slug: string, action: ProjectAction): Promise<Access> {
+  if (!isSlug(slug)) throw new Problem('NotFound');
   const [found] = await database()
     .select({ project, role: membership.role })
     .from(project)

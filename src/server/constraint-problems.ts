@@ -48,6 +48,12 @@ const BY_CONSTRAINT: Readonly<Record<string, ConstraintProblem>> = {
   },
   version_immutable: conflict('a released version never changes', 'Release a new version.'),
   geometry_immutable: conflict('a stored geometry never changes', 'Store the new geometry beside it.'),
+  ...Object.fromEntries(
+    ['block', 'block_outline', 'rotation', 'feature', 'direction', 'source'].map((table) => [
+      `${table}_pkey`,
+      unusable('the id of a row that is there already', 'Leave the id out, or make a new UUID.'),
+    ]),
+  ),
   block_code_unique: conflict('the project has a block of this code', 'Codes are unique: choose another.'),
   source_cite_unique: conflict('the project has a source of this name', 'Add a letter, as in 2021a.'),
   rotation_row_unique: conflict(

@@ -32,6 +32,9 @@ export class SettingsError extends Error {
   override readonly name = 'SettingsError';
 }
 
+/** An address may carry a password, and messages are kept. */
+const withoutPassword = (address: string): string => address.replace(/\/\/[^@/]*@/, '//…@');
+
 const LOOPBACK = /^(localhost|127(\.\d{1,3}){3}|\[?::1\]?)$/i;
 export const isLoopback = (host: string) => LOOPBACK.test(host);
 
@@ -42,7 +45,7 @@ export function parseSettings(env: Readonly<Record<string, string | undefined>>)
     const issue = parsed.error.issues[0];
     const name = String(issue?.path[0]);
     throw new SettingsError(
-      `The setting ${name} reads "${env[name] ?? ''}", which is not usable: ${issue?.message}.`,
+      `The setting ${name} reads "${name.endsWith('_URL') ? withoutPassword(env[name] ?? '') : (env[name] ?? '')}", which is not usable: ${issue?.message}.`,
     );
   }
   const { DRIFTWRIGHT_DEMO, ...settings } = parsed.data;
@@ -51,6 +54,11 @@ export function parseSettings(env: Readonly<Record<string, string | undefined>>)
   if (demo && !(isLoopback(publicName) && isLoopback(settings.HOST))) {
     throw new SettingsError(
       `The demo's accounts need no password, so they are refused on the public name ${isLoopback(publicName) ? settings.HOST : publicName}: set DRIFTWRIGHT_DEMO=off.`,
+    );
+  }
+  if (demo && settings.TRUST_PROXY && !settings.PUBLIC_URL) {
+    throw new SettingsError(
+      'The demo’s accounts need no password, so they are refused behind a proxy (TRUST_PROXY): set DRIFTWRIGHT_DEMO=off.',
     );
   }
   return { ...settings, demo };

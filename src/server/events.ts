@@ -9,6 +9,7 @@ export interface DraftEvent {
 }
 
 const KEY = Symbol.for('driftwright.events');
+const ENDING = Symbol('ending');
 const holder = globalThis as { [KEY]?: EventEmitter };
 
 /** One emitter a process; a name is a project's id. */
@@ -17,6 +18,14 @@ function emitter(): EventEmitter {
 }
 
 export const publish = (projectId: string, event: DraftEvent): boolean => emitter().emit(projectId, event);
+
+/** Tells every open stream to end: the process is about to. */
+export const endStreams = (): boolean => emitter().emit(ENDING);
+
+export function onEnding(listener: () => void): () => void {
+  emitter().on(ENDING, listener);
+  return () => emitter().off(ENDING, listener);
+}
 
 /** @returns the function that ends the subscription */
 export function subscribe(projectId: string, listener: (event: DraftEvent) => void): () => void {

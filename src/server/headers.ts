@@ -14,7 +14,8 @@ const DATA_CSP = "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; f
 /** The answer with the headers added; some responses come with headers that cannot be written. */
 export function secured(response: Response, secure: boolean): Response {
   const headers = new Headers(response.headers);
-  for (const [name, value] of Object.entries(SECURITY_HEADERS)) headers.set(name, value);
+  for (const [name, value] of Object.entries(SECURITY_HEADERS))
+    if (!headers.has(name)) headers.set(name, value);
   if (!headers.has('Cache-Control')) headers.set('Cache-Control', 'private, no-cache');
   if (secure) headers.set('Strict-Transport-Security', HSTS);
   const isPage = headers.get('content-type')?.startsWith('text/html') ?? false;

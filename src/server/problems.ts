@@ -41,6 +41,7 @@ export const PROBLEMS = {
   ClientGone: { status: 499, title: 'The connection was closed' },
   Unexpected: { status: 500, title: 'Something went wrong on the server' },
   NotReady: { status: 503, title: 'The server is not ready' },
+  Busy: { status: 503, title: 'The server is busy' },
   UnknownBlock: { status: 404, title: 'Unknown block' },
   NegativeAge: { status: 400, title: 'Age below zero' },
   NonFinite: { status: 400, title: 'Not a number' },

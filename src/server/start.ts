@@ -1,12 +1,15 @@
 import { openDatabase, useDatabase } from '~/db/client';
 import { seedIfEmpty } from '~/db/seed';
 import { settings, type Settings } from './env';
+import { endStreams } from './events';
 import { log } from './log';
 import { keepSendingMail } from './mail';
 
 /** What server.mjs, which stands outside the bundle, takes over once the first request has started everything. */
 interface Runtime {
   readonly settings: Settings;
+  /** Ends the streams that would not end by themselves. */
+  readonly endStreams: () => void;
   readonly close: () => Promise<void>;
 }
 
@@ -32,6 +35,7 @@ async function start(): Promise<void> {
   const stopMail = keepSendingMail();
   holder[RUNTIME] = {
     settings: current,
+    endStreams,
     close: () => {
       stopMail();
       useDatabase(undefined);

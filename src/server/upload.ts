@@ -36,11 +36,9 @@ function collect(body: Readable, type: string, limitBytes: number): Promise<Uplo
       body.resume();
       reject(problem);
     };
-    const parser = busboy({
-      headers: { 'content-type': type },
-      defParamCharset: 'utf8',
-      limits: { files: 1, fields: 20, fileSize: limitBytes, fieldSize: FIELD_BYTES },
-    });
+    const broken = (): void =>
+      fail(new Problem('InvalidRequest', { detail: 'The multipart body is broken or ends too early.' }));
+    const parser = parserFor(type, limitBytes);
     parser.on('field', (name, value, info) => {
       if (info.valueTruncated) fail(tooLarge(FIELD_BYTES));
       else if (isPlain(value)) fields[name] = value;
@@ -50,6 +48,7 @@ function collect(body: Readable, type: string, limitBytes: number): Promise<Uplo
     parser.on('file', (name, stream, info) => {
       const chunks: Buffer[] = [];
       stream.on('data', (chunk: Buffer) => chunks.push(chunk));
+      stream.on('error', broken);
       stream.on('limit', () => fail(tooLarge(limitBytes)));
       stream.on('end', () => {
         if (name === 'file')
@@ -57,12 +56,23 @@ function collect(body: Readable, type: string, limitBytes: number): Promise<Uplo
       });
     });
     parser.on('close', () => resolve({ fields, file }));
-    parser.on('error', () =>
-      fail(new Problem('InvalidRequest', { detail: 'The multipart body is broken.' })),
-    );
+    parser.on('error', broken);
     body.on('error', () => reject(new Problem('ClientGone')));
     body.pipe(parser);
   });
+}
+
+/** @throws Problem `InvalidRequest` for a type without its boundary */
+function parserFor(type: string, limitBytes: number): busboy.Busboy {
+  try {
+    return busboy({
+      headers: { 'content-type': type },
+      defParamCharset: 'utf8',
+      limits: { files: 1, fields: 20, fileSize: limitBytes, fieldSize: FIELD_BYTES },
+    });
+  } catch {
+    throw new Problem('InvalidRequest', { detail: 'The multipart type names no boundary.' });
+  }
 }
 
 const tooLarge = (limitBytes: number): Problem =>

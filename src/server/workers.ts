@@ -1,8 +1,12 @@
 import { Piscina } from 'piscina';
 import { fileURLToPath } from 'node:url';
+import { Problem } from './problem';
 
 const KEY = Symbol.for('driftwright.pools');
 const holder = globalThis as { [KEY]?: Map<string, Piscina> };
+
+/** Tasks that may wait for a thread. */
+const MOST_WAITING = 64;
 
 /** Idle threads end after this, milliseconds. */
 const IDLE_MS = 30_000;
@@ -24,10 +28,15 @@ export async function runInWorker<Job, Result>(
       minThreads: 0,
       maxThreads: 2,
       idleTimeout: IDLE_MS,
-      maxQueue: 64,
+      maxQueue: MOST_WAITING,
     });
     pools.set(file, pool);
   }
+  if (pool.queueSize >= MOST_WAITING)
+    throw new Problem('Busy', {
+      detail: 'Many maps are being made. Try again in a moment.',
+      headers: { 'Retry-After': '5' },
+    });
   return (await pool.run(job, signal ? { signal } : {})) as Result;
 }
 

@@ -1,7 +1,7 @@
 /** What stands between the network and the features: origins, media types, sizes, headers. */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { createTestApp, ORIGIN, type TestApp } from '../support/app';
-import { createTeam, type Team } from '../support/team';
+import { add, addRotations, createTeam, square, terrane, type Team } from '../support/team';
 
 let app: TestApp;
 let team: Team;
@@ -81,6 +81,86 @@ describe('text that no database, page or map can hold', () => {
       revision: '*',
     });
     expect([answer.status, answer.json.name]).toEqual([400, 'InvalidRequest']);
+  });
+});
+
+describe('what is kept for good', () => {
+  it('is only what the address fixes wholly: a version, and the frame where there is one', async () => {
+    await addRotations(app, team, [['sable', 'spin-axis', 66, 12, 20, 9]]);
+    await app.call('POST', team.at('versions'), { as: team.lead, body: { title: 'First' } });
+    const kept = async (path: string) =>
+      (await app.call('GET', team.at(path), { as: team.instructor })).headers.get('cache-control');
+    expect(await kept('exports/rotations.csv?version=1')).toContain('immutable');
+    expect(await kept('exports/rotations.csv')).toBe('private, no-cache');
+    expect(await kept('quaternions?version=1&age_ma=5&relative_to=spin-axis')).toContain('immutable');
+    expect(await kept('quaternions?version=1&age_ma=5')).not.toContain('immutable');
+    expect(await kept('slice.svg?version=1&age_ma=5&relative_to=spin-axis')).toContain('immutable');
+    expect(await kept('slice.svg?version=1&age_ma=5')).toBe('private, no-cache');
+    expect(await kept('slice.svg?age_ma=5&relative_to=spin-axis')).toBe('private, no-cache');
+  });
+});
+
+describe('methods', () => {
+  it('that an address does not take are named with those it takes', async () => {
+    const answer = await app.call('PATCH', '/api/projects', { as: team.lead, body: {} });
+    expect([answer.status, answer.json.name, answer.headers.get('allow')]).toEqual([
+      ...[405, 'MethodNotAllowed', 'GET, HEAD, POST'],
+    ]);
+  });
+
+  it('HEAD of a stream answers without opening one', async () => {
+    const answer = await app.call('HEAD', team.at('events'), { as: team.lead });
+    expect([answer.status, answer.headers.get('content-type'), answer.text]).toEqual([
+      200,
+      'text/event-stream',
+      '',
+    ]);
+  });
+});
+
+describe('ids of rows', () => {
+  it('that are taken are refused by name, never as an error of the server', async () => {
+    const id = crypto.randomUUID();
+    const make = (code: string) =>
+      app.call('POST', team.at('edits'), {
+        as: team.researcher,
+        revision: '*',
+        body: { edits: [{ op: 'create', table: 'blocks', id, fields: terrane(code) }] },
+      });
+    expect((await make('one')).status).toBe(200);
+    const again = await make('two');
+    expect([again.status, again.json.name]).toEqual([422, 'InvalidRows']);
+  });
+});
+
+describe('uploads', () => {
+  const raw = '--X\r\nContent-Disposition: form-data; name="file"; filename="a"\r\n\r\nabc';
+  it.each([
+    ['that end before their closing boundary', 'multipart/form-data; boundary=X'],
+    ['without a boundary', 'multipart/form-data'],
+  ])('%s are refused, and the server goes on', async (_, type) => {
+    const answer = await app.call('POST', team.at('imports'), {
+      as: team.lead,
+      raw,
+      headers: { 'Content-Type': type },
+    });
+    expect([answer.status, answer.json.name]).toEqual([400, 'InvalidRequest']);
+    expect((await app.call('GET', '/api/health')).status).toBe(200);
+  });
+});
+
+describe('outlines of one block', () => {
+  const outline = (older: number | null, younger: number | null) => ({
+    ...{ block: 'sable', outline_older_ma: older, outline_younger_ma: younger },
+    geometry: square(20, 10),
+  });
+  it('follow one another without overlap, the younger end excluded', async () => {
+    expect((await add(app, team, 'blocks', terrane('sable'))).status).toBeLessThan(300);
+    expect((await add(app, team, 'outlines', outline(null, 50))).status).toBeLessThan(300);
+    expect((await add(app, team, 'outlines', outline(50, null))).status).toBeLessThan(300);
+    const refused = await add(app, team, 'outlines', outline(60, 40));
+    expect([refused.status, refused.json.name]).toEqual([422, 'InvalidRows']);
+    expect(refused.json.errors[0].problem).toBe('sable has another outline at some of these ages');
   });
 });
 

@@ -26,7 +26,10 @@ const words = (svg: string): string =>
 
 describe('SVG', () => {
   it('names age, frame, version, projection, sources, licence and the caution line, as text', async () => {
-    const answer = await slice('svg', `age_ma=62.4&projection=mollweide&centre_lon=36&version=7&${PATH}`);
+    const answer = await slice(
+      'svg',
+      `age_ma=62.4&projection=mollweide&centre_lon=36&version=7&relative_to=spin-axis&${PATH}`,
+    );
     expect(answer.status).toBe(200);
     expect(answer.headers.get('content-type')).toBe('image/svg+xml');
     expect(answer.headers.get('content-security-policy')).toContain("default-src 'none'");

@@ -69,7 +69,10 @@ export async function createTestApp(env: Record<string, string> = {}): Promise<T
     const context = createContext({ request, params, locals: {}, defaultLocale: 'en' } as Parameters<
       typeof createContext
     >[0]);
-    const handler = file && ((await file.load())[method] ?? (await file.load())['ALL']);
+    // As the framework does: HEAD is answered by GET, and the pattern that matched is told.
+    Object.defineProperty(context, 'routePattern', { value: file?.pattern ?? '/404' });
+    const endpoint = file ? await file.load() : {};
+    const handler = endpoint[method] ?? (method === 'HEAD' ? endpoint['GET'] : undefined) ?? endpoint['ALL'];
     const next = async () => (handler ? await handler(context) : new Response(null, { status: 404 }));
     const response = (await onRequest(context, next)) as Response;
     for (const cookie of context.cookies.headers()) response.headers.append('Set-Cookie', cookie);

@@ -2,7 +2,7 @@ import { setTimeout as delay } from 'node:timers/promises';
 import type { APIContext } from 'astro';
 import { and, eq, gt, isNull } from 'drizzle-orm';
 import { database } from '~/db/client';
-import { passwordReset, user } from '~/db/schema';
+import { apiToken, passwordReset, user } from '~/db/schema';
 import { paths } from '~/paths';
 import { settings } from '~/server/env';
 import { queueMail } from '~/server/mail';
@@ -47,7 +47,7 @@ async function writeResetMail(email: string): Promise<void> {
   });
 }
 
-/** Single use; ends every session of the account. @throws Problem `ResetLinkSpent` */
+/** Single use; ends every session and every token of the account, whoever holds them. @throws Problem `ResetLinkSpent` */
 export async function resetPassword(context: APIContext, token: string, password: string): Promise<void> {
   await countTry('reset by address', context.clientAddress);
   const password_hash = await hashPassword(password);
@@ -67,5 +67,6 @@ export async function resetPassword(context: APIContext, token: string, password
       .where(and(eq(passwordReset.user_id, user_id), isNull(passwordReset.used_at)));
     await tx.update(user).set({ password_hash }).where(eq(user.id, user_id));
     await revokeSessions(tx, user_id, null);
+    await tx.delete(apiToken).where(eq(apiToken.user_id, user_id));
   });
 }

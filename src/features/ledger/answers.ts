@@ -22,16 +22,17 @@ export function expectedRevision(request: Request): ExpectedRevision {
 
 /** The rows that an edit touched as they stand after it, by table. */
 async function touched(access: Access, { changed }: DraftResult) {
-  const last = new Map<string, { table: Table; row: LogRow | null }>();
-  for (const { entity, entity_id, after } of changed) last.set(entity_id, { table: entity, row: after });
+  const last = new Map<string, { id: string; table: Table; row: LogRow | null }>();
+  for (const { entity, entity_id: id, after } of changed)
+    last.set(`${entity} ${id}`, { id, table: entity, row: after });
   const items: { table: Table; row: LogRow }[] = [];
   const deleted: { table: Table; id: string }[] = [];
   for (const table of TABLES) {
-    const own = [...last].filter(([, one]) => one.table === table);
-    const rows = own.flatMap(([, { row }]) => row ?? []);
+    const own = [...last.values()].filter((one) => one.table === table);
+    const rows = own.flatMap(({ row }) => row ?? []);
     const answered = await asAnswered(database(), access.project.id, table, rows);
     items.push(...answered.map((row) => ({ table, row: row })));
-    deleted.push(...own.flatMap(([id, { row }]) => (row ? [] : { table, id })));
+    deleted.push(...own.flatMap(({ id, row }) => (row ? [] : { table, id })));
   }
   return { items, deleted };
 }

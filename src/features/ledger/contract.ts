@@ -12,7 +12,8 @@ const age = z.number().min(0, 'a negative age').max(4600, 'older than the Earth'
 const latitude = z.number().min(-90, 'latitude beyond 90°').max(90, 'latitude beyond 90°');
 /** Longitudes are stored as entered, so that files round-trip; ±360° covers every way of writing one. */
 const longitude = z.number().min(-360, 'longitude beyond 360°').max(360, 'longitude beyond 360°');
-const upTo = (most: number) => z.string().max(most, `more than ${most} characters`);
+/** Spaces around a text mean nothing and would not survive a table. */
+const upTo = (most: number) => z.string().trim().max(most, `more than ${most} characters`);
 const text = upTo(2000);
 const nullable = <T extends z.ZodType>(schema: T) => schema.nullable().default(null);
 
@@ -80,19 +81,19 @@ export const FEATURE_KINDS = [
 export const featureFields = z.object({
   block: slug,
   kind: z.enum(FEATURE_KINDS),
-  name: z.string().max(200).default(''),
+  name: upTo(200).default(''),
   sha256: z.string().regex(/^[0-9a-f]{64}$/),
   age_ma: nullable(age),
   appears_ma: nullable(age),
   disappears_ma: nullable(age),
-  chron: nullable(z.string().max(40)),
+  chron: nullable(upTo(40)),
   side: nullable(z.enum(['left', 'right', 'north', 'south', 'east', 'west'])),
   source: nullable(text),
   note: nullable(text),
 });
 
 export const directionFields = z.object({
-  site: z.string().min(1).max(120),
+  site: upTo(120).min(1, 'blank'),
   lat: latitude,
   lon: longitude,
   block: nullable(slug),
@@ -103,19 +104,19 @@ export const directionFields = z.object({
   inclination: nullable(z.number().min(-90).max(90)),
   strike: nullable(z.number().min(-360).max(360)),
   dip: nullable(z.number().min(-180).max(180)),
-  n: nullable(z.number().int().min(1)),
-  k: nullable(z.number().min(0)),
+  n: nullable(z.number().int().min(1).max(1_000_000)),
+  k: nullable(z.number().min(0).max(1e9)),
   alpha95: nullable(z.number().min(0).max(180)),
   polarity: nullable(z.enum(['normal', 'reversed', 'mixed', 'unknown'])),
   shallowing_f: nullable(z.number().positive().max(1)),
-  rock: nullable(z.string().max(120)),
+  rock: nullable(upTo(120)),
   source: nullable(text),
   note: nullable(text),
 });
 
 export const sourceFields = z.object({
   /** The name by which rows cite it, e.g. "Tolland et al. 2021". */
-  cite: z.string().min(1).max(200),
+  cite: upTo(200).min(1, 'blank'),
   title: z.string().max(500).default(''),
   authors: z.array(z.string().max(200)).max(200).default([]),
   year: nullable(z.number().int().min(1600).max(2200)),

@@ -1,8 +1,14 @@
 import { demand, may, openProject, type Access } from '~/server/access';
-import { subscribe, type DraftEvent } from '~/server/events';
+import { onEnding, subscribe, type DraftEvent } from '~/server/events';
 
 /** Keeps proxies from closing a stream on which nothing happens. */
 const HEARTBEAT_MS = 25_000;
+
+export const EVENT_HEADERS = {
+  'Content-Type': 'text/event-stream',
+  'Cache-Control': 'no-cache, no-transform',
+  'X-Accel-Buffering': 'no',
+} as const;
 
 /**
  * Server-sent events (HTML Living Standard §9.2): `open` with the revision at the start, then `change` for every
@@ -51,10 +57,15 @@ export function draftEvents(
       const unsubscribe = subscribe(id, (change: DraftEvent) => {
         void orEnd(() => event('change', named ? change : { revision: change.revision }, change.revision));
       });
+      const heedEnding = onEnding(() => {
+        end();
+        controller.close();
+      });
       const beat = setInterval(() => void orEnd(() => send(': \n\n')), HEARTBEAT_MS);
       end = () => {
         ended = true;
         unsubscribe();
+        heedEnding();
         clearInterval(beat);
         signal.removeEventListener('abort', end);
       };
@@ -62,10 +73,5 @@ export function draftEvents(
     },
     cancel: () => end(),
   });
-  const headers = {
-    'Content-Type': 'text/event-stream',
-    'Cache-Control': 'no-cache, no-transform',
-    'X-Accel-Buffering': 'no',
-  };
-  return new Response(stream, { headers });
+  return new Response(stream, { headers: EVENT_HEADERS });
 }

@@ -54,7 +54,7 @@ export interface ChangeList {
 export async function listChanges(access: Access, limit: number, cursor?: string): Promise<ChangeList> {
   demand(access, 'history.view');
   const before = cursor === undefined ? undefined : Number(cursor);
-  if (before !== undefined && !Number.isInteger(before))
+  if (cursor !== undefined && !/^\d{1,9}$/.test(cursor))
     throw new Problem('InvalidQuery', { detail: 'cursor: not one of ours' });
   const own = eq(change.project_id, access.project.id);
   const rows = await transactions(database())

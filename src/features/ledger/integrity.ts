@@ -1,6 +1,7 @@
-import { and, eq, isNotNull, isNull, sql } from 'drizzle-orm';
+import { and, eq, isNotNull, isNull, lt, sql } from 'drizzle-orm';
+import { alias } from 'drizzle-orm/pg-core';
 import type { Transaction } from '~/db/client';
-import { block, rotation, source } from '~/db/schema';
+import { block, blockOutline, rotation, source } from '~/db/schema';
 import type { FieldError } from '~/server/problem';
 import type { Table } from './contract';
 import { within } from './parse';
@@ -10,7 +11,7 @@ type PathOf = (id: string) => string | undefined;
 
 /**
  * What must hold at the end of an edit, whatever happened within: no two rotations of one block, reference and
- * age, no two sources of one name, no row on a block that is not there. The database's own constraints, which
+ * age, no two outlines of one block at one age, no two sources of one name, no row on a block that is not there. The database's own constraints, which
  * are deferred until then, say the same without naming the cell.
  */
 export async function integrityErrors(
@@ -22,6 +23,7 @@ export async function integrityErrors(
   const errors: FieldError[] = [];
   if (touched.has('rotations') || touched.has('blocks'))
     errors.push(...(await duplicateRotations(tx, projectId, pathOf)));
+  if (touched.has('outlines')) errors.push(...(await overlappingOutlines(tx, projectId, pathOf)));
   if (touched.has('sources')) errors.push(...(await duplicateSources(tx, projectId, pathOf)));
   for (const table of CARRIED) {
     if (touched.has(table) || touched.has('blocks'))
@@ -54,6 +56,44 @@ async function duplicateRotations(tx: Transaction, projectId: string, pathOf: Pa
       read: String(age_ma),
       problem: `${code} has a row relative to ${relative_to} at ${age_ma} Ma already`,
       hint: 'Change the row that is there, or give another age.',
+    })),
+  );
+}
+
+/** Younger ends are excluded but for the present: a blank or 0 one takes 0 Ma in. */
+const OPEN_YOUNGER_MA = -1;
+const OPEN_OLDER_MA = 1e9;
+
+async function overlappingOutlines(
+  tx: Transaction,
+  projectId: string,
+  pathOf: PathOf,
+): Promise<FieldError[]> {
+  const other = alias(blockOutline, 'other');
+  const younger = (t: typeof blockOutline | typeof other) =>
+    sql`coalesce(nullif(${t.outline_younger_ma}, 0), ${OPEN_YOUNGER_MA})`;
+  const older = (t: typeof blockOutline | typeof other) =>
+    sql`coalesce(${t.outline_older_ma}, ${OPEN_OLDER_MA})`;
+  const found = await tx
+    .select({ block: blockOutline.block, a: blockOutline.id, b: other.id })
+    .from(blockOutline)
+    .innerJoin(
+      other,
+      and(
+        eq(other.project_id, blockOutline.project_id),
+        eq(other.block, blockOutline.block),
+        lt(blockOutline.id, other.id),
+        sql`greatest(${younger(blockOutline)}, ${younger(other)}) < least(${older(blockOutline)}, ${older(other)})`,
+      ),
+    )
+    .where(eq(blockOutline.project_id, projectId))
+    .limit(100);
+  return found.flatMap(({ block: code, a, b }) =>
+    offenders([a, b], pathOf).map((path) => ({
+      path: within(path, 'outline_older_ma'),
+      read: code,
+      problem: `${code} has another outline at some of these ages`,
+      hint: 'Say when each holds in outline_older_ma and outline_younger_ma, or join them as a MultiPolygon.',
     })),
   );
 }

@@ -4,6 +4,7 @@ import type { Project } from '~/features/projects/contract';
 import { may } from '~/server/access';
 import { openPage } from '~/server/page';
 import { Problem } from '~/server/problem';
+import { queryVersion } from '~/server/queries';
 import type { WorkbenchIslandProps } from './components/WorkbenchIsland';
 import type { Payload } from './components/pictures/payload';
 import { modelOf } from './model';
@@ -23,11 +24,10 @@ export async function openWorkbench(
 ): Promise<Opened | null> {
   const opened = await openPage(locals, slug, 'project.view');
   if (!opened) return null;
-  const number = asked === null || asked === 'draft' ? undefined : Number(asked);
-  const name = asked === 'draft' ? 'draft' : number;
-  if (number !== undefined && !Number.isInteger(number)) return null;
+  const requested = queryVersion.safeParse(asked ?? undefined);
+  if (!requested.success) return null;
   try {
-    const state = await loadState(opened.access, name);
+    const state = await loadState(opened.access, requested.data);
     const { version, revision, blocks, features, directions, rotations } = state;
     const initial = {
       motions: { ...modelOf(state), version, revision },

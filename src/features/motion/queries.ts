@@ -48,6 +48,8 @@ export interface Motion {
   readonly state: State;
   readonly model: Model;
   readonly relative_to: string;
+  /** True where the question named the frame itself, so that the answer depends on the state alone. */
+  readonly framed: boolean;
 }
 
 /** @throws Problem as `loadState`; `InvalidQuery` where no reference is named and the project holds none still */
@@ -65,5 +67,5 @@ export async function openMotion(
       errors: [{ path: 'relative_to', read: '', problem }],
     });
   }
-  return { state: loaded, model: modelOf(loaded), relative_to };
+  return { state: loaded, model: modelOf(loaded), relative_to, framed: query.relative_to !== undefined };
 }

@@ -9,19 +9,19 @@ import { slug } from '../ledger/contract';
 import { LAYERS, USUAL_LAYERS, type Layer } from './choices';
 
 /** Other spellings of projection names that people try. */
-const ALIASES: Record<string, ProjectionName> = {
-  azimuthalequalarea: 'lambert-azimuthal',
-  lambertazimuthalequalarea: 'lambert-azimuthal',
-  lambert: 'lambert-azimuthal',
-  stereographic: 'polar-stereographic',
-  platecarree: 'equirectangular',
-};
+const ALIASES: ReadonlyMap<string, ProjectionName> = new Map([
+  ['azimuthalequalarea', 'lambert-azimuthal'],
+  ['lambertazimuthalequalarea', 'lambert-azimuthal'],
+  ['lambert', 'lambert-azimuthal'],
+  ['stereographic', 'polar-stereographic'],
+  ['platecarree', 'equirectangular'],
+]);
 const plain = (name: string): string => name.toLowerCase().replace(/[^a-z]/g, '');
 const projection = z
   .string()
   .default(DEFAULT_PROJECTION)
   .transform((name, context): ProjectionName => {
-    const found = PROJECTION_NAMES.find((known) => plain(known) === plain(name)) ?? ALIASES[plain(name)];
+    const found = PROJECTION_NAMES.find((known) => plain(known) === plain(name)) ?? ALIASES.get(plain(name));
     if (found) return found;
     context.addIssue({
       code: 'custom',

@@ -1,4 +1,7 @@
 /** Worker task: turns a page's SVG into PNG or PDF bytes. Fonts come from files; text stays text in the PDF. */
+import { setImmediate } from 'node:timers/promises';
+import { setFlagsFromString } from 'node:v8';
+import { runInNewContext } from 'node:vm';
 import { Resvg } from '@resvg/resvg-js';
 import PDFDocument from 'pdfkit';
 import SVGtoPDF from 'svg-to-pdfkit';
@@ -20,8 +23,11 @@ const withoutStyle = (svg: string): string => svg.replace(/<style>[\s\S]*?<\/sty
 /** svg-to-pdfkit takes bare lengths as points and lengths in pt as 4/3 of them. */
 const inPoints = (svg: string): string => svg.replace(/(width|height)="([\d.]+)pt"/g, '$1="$2"');
 
-export default function render(job: RenderJob): Promise<Uint8Array> {
-  return job.format === 'png' ? Promise.resolve(png(job)) : pdf(job);
+export default async function render(job: RenderJob): Promise<Uint8Array> {
+  if (job.format === 'pdf') return pdf(job);
+  const bytes = png(job);
+  await freePictures();
+  return bytes;
 }
 
 function png({ svg, width_pt, dpi }: RenderJob): Uint8Array {
@@ -30,7 +36,28 @@ function png({ svg, width_pt, dpi }: RenderJob): Uint8Array {
     fitTo: { mode: 'width', value: width },
     font: { fontFiles: fontFiles(), loadSystemFonts: false, defaultFontFamily: 'Inter' },
   });
-  return new Uint8Array(resvg.render().asPng());
+  const image = resvg.render();
+  const bytes = new Uint8Array(image.asPng());
+  pixelsKept += image.width * image.height;
+  return bytes;
+}
+
+/** Pictures lie outside the heap that the collector watches: left alone, it never sees the need to free them. */
+const MOST_PIXELS_KEPT = 16e6;
+let pixelsKept = 0;
+let collect: (() => void) | null = null;
+
+/** Waits for the collector before the thread sleeps: asleep, it would run no finalizer. */
+async function freePictures(): Promise<void> {
+  if (pixelsKept < MOST_PIXELS_KEPT) return;
+  pixelsKept = 0;
+  if (!collect) {
+    setFlagsFromString('--expose-gc');
+    collect = runInNewContext('gc') as () => void;
+  }
+  await setImmediate();
+  collect();
+  await setImmediate();
 }
 
 function pdf({ svg, width_pt, height_pt, title }: RenderJob): Promise<Uint8Array> {

@@ -36,7 +36,7 @@ export function readFeatureCollection(text: string): GeoJsonReading {
   }
   const collection = data as { type?: unknown; features?: unknown };
   if (collection?.type !== 'FeatureCollection' || !Array.isArray(collection.features)) {
-    const read = String(collection?.type ?? typeof data);
+    const read = written(collection?.type ?? typeof data);
     return wrongFile(
       1,
       read,
@@ -55,7 +55,7 @@ export function readFeatureCollection(text: string): GeoJsonReading {
       rejected.push({
         line,
         column: null,
-        read: String(f?.type),
+        read: written(f?.type),
         problem: `entry ${index + 1} is not a Feature`,
         hint,
       });
@@ -70,6 +70,10 @@ export function readFeatureCollection(text: string): GeoJsonReading {
   });
   return { features, rejected };
 }
+
+/** Whatever stands there, as a few words; converting an object could run what it holds. */
+const written = (value: unknown): string =>
+  typeof value === 'object' ? 'an object' : String(value).slice(0, 80);
 
 function lineAt(text: string, position: number): number {
   let line = 1;

@@ -1,6 +1,8 @@
 /** Writing SVG as text: escaped, numbers short, nothing else. */
+import { plain } from '../../../plain';
+
 export const escapeXml = (text: string): string =>
-  text.replace(
+  plain(text).replace(
     /[&<>"']/g,
     (c) => ({ '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' })[c]!,
   );

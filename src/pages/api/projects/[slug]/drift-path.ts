@@ -15,12 +15,12 @@ export const GET = projectRoute(
   async ({ access, request, query }) => {
     const motion = await openMotion(access, query);
     const path = driftPathOf(motion, query);
-    if (query.format === 'json') return stateAnswer(request, access, motion.state, path);
+    if (query.format === 'json') return stateAnswer(request, access, motion.state, path, motion.framed);
     const [text, type] =
       query.format === 'csv'
         ? [driftCsv(path), 'text/csv; charset=utf-8; header=present']
         : [JSON.stringify(driftGeojson(path)), 'application/geo+json'];
-    const response = stateText(request, access, motion.state, text, type);
+    const response = stateText(request, access, motion.state, text, type, motion.framed);
     const name = `drift-path-${path.block}.${query.format}`;
     response.headers.set('Content-Disposition', `attachment; filename="${name}"`);
     return response;

@@ -1,5 +1,5 @@
 import { stillSignedIn } from '~/features/accounts/session';
-import { draftEvents } from '~/features/ledger/events';
+import { draftEvents, EVENT_HEADERS } from '~/features/ledger/events';
 import { projectRoute } from '~/server/route';
 
 export const GET = projectRoute(
@@ -9,5 +9,7 @@ export const GET = projectRoute(
     streams: 'text/event-stream',
   },
   ({ access, request, context }) =>
-    draftEvents(access, request.signal, () => stillSignedIn(context.locals.session?.id ?? null)),
+    request.method === 'HEAD'
+      ? new Response(null, { headers: EVENT_HEADERS })
+      : draftEvents(access, request.signal, () => stillSignedIn(context.locals.session?.id ?? null)),
 );

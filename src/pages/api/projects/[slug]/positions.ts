@@ -13,6 +13,13 @@ export const GET = projectRoute(
   async ({ access, request, query }) => {
     const motion = await openMotion(access, query);
     const positions = await positionsOf(motion, query.age_ma);
-    return stateText(request, access, motion.state, JSON.stringify(positions), 'application/geo+json');
+    return stateText(
+      request,
+      access,
+      motion.state,
+      JSON.stringify(positions),
+      'application/geo+json',
+      motion.framed,
+    );
   },
 );

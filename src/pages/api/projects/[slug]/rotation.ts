@@ -13,6 +13,6 @@ export const GET = projectRoute(
   },
   async ({ access, request, query }) => {
     const motion = await openMotion(access, query);
-    return stateAnswer(request, access, motion.state, rotationOf(motion, query));
+    return stateAnswer(request, access, motion.state, rotationOf(motion, query), motion.framed);
   },
 );

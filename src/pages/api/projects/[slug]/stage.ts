@@ -8,6 +8,6 @@ export const GET = projectRoute(
   { action: 'compute', summary: 'A stage rotation, forward in time', query: stageQuery, answer: stageAnswer },
   async ({ access, request, query }) => {
     const motion = await openMotion(access, query);
-    return stateAnswer(request, access, motion.state, stageOf(motion, query));
+    return stateAnswer(request, access, motion.state, stageOf(motion, query), motion.framed);
   },
 );

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { EXPORT_NAMES, type ExportName } from '~/features/interchange/files';
 import { exportFile } from '~/features/interchange/server';
 import { loadState } from '~/features/ledger/state';
+import { isShared } from '~/features/ledger/state-answer';
 import { attachment } from '~/server/attachment';
 import { immutable } from '~/server/etag';
 import { Problem } from '~/server/problem';
@@ -21,10 +22,8 @@ export const GET = projectRoute(
     if (!isExport(name)) throw new Problem('NotFound', { detail: `Files are ${EXPORT_NAMES.join(', ')}.` });
     const state = await loadState(access, query.version);
     const { type, body } = await exportFile(state, name);
-    const shared = access.project.visibility === 'public';
-    const lasting: Record<string, string> = state.sha256
-      ? { 'Cache-Control': immutable(shared), ETag: `"${state.sha256}"` }
-      : {};
+    const asked = typeof query.version === 'number';
+    const lasting: Record<string, string> = asked ? { 'Cache-Control': immutable(isShared(access)) } : {};
     return attachment(body, type, name, lasting);
   },
 );
