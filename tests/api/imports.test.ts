@@ -72,7 +72,10 @@ describe('a file with mistakes', () => {
     expect((await app.call('GET', `${P}/rotations`, { as: lead })).json.items).toHaveLength(1);
     const kept = await app.call('GET', `${P}/imports/${json.import_id}/rejected`, { as: lead });
     expect(kept.headers.get('content-disposition')).toContain('poles-rejected.csv');
-    expect(kept.text).toContain('3,pole_lat,128.4,latitude beyond 90°');
+    expect(kept.text).toContain('sable,tarn,20,128.4,-27,8,pole_lat: latitude beyond 90°,');
+    const mended = await send({ kind: 'rotations', text: kept.text.replace('128.4', '12.84') });
+    expect(mended.json).toMatchObject({ accepted: 1, rejected: [], written: true });
+    expect((await app.call('GET', `${P}/rotations`, { as: lead })).json.items).toHaveLength(2);
     const original = await app.call('GET', `${P}/imports/${json.import_id}/file`, { as: lead });
     expect(original.text).toBe(text);
   });
@@ -118,6 +121,41 @@ describe('values that the ledger would refuse', () => {
       text: JSON.stringify({ type: 'FeatureCollection', features: [feature] }),
     });
     expect(json.rejected[0]).toMatchObject({ line: 1, column: 'name', problem: 'more than 120 characters' });
+  });
+});
+
+describe('a GeoJSON file on one line', () => {
+  it('names its features, counts each once, and keeps the rejected ones to mend', async () => {
+    const frame = (code: string) => ({
+      type: 'Feature',
+      properties: { code, name: 'M', kind: 'frame' },
+      geometry: null,
+    });
+    const bad = { ...frame('b'), properties: { code: 'B b', kind: 'sea', appears_ma: -3 } };
+    const text = JSON.stringify({ type: 'FeatureCollection', features: [frame('a'), bad] });
+    const { json } = await send({
+      kind: 'blocks',
+      text,
+      name: 'all.json',
+      fields: { skip_rejected: 'true' },
+    });
+    expect(json).toMatchObject({ accepted: 1, rejected_rows: 1, written: true });
+    expect(json.rejected.length).toBeGreaterThan(1);
+    expect(new Set(json.rejected.map((row: { entry: number }) => row.entry))).toEqual(new Set([2]));
+    const kept = await app.call('GET', `${P}/imports/${json.import_id}/rejected`, { as: lead });
+    expect(kept.headers.get('content-disposition')).toContain('all-rejected.geojson');
+    expect(kept.json.features).toHaveLength(1);
+    expect(kept.json.features[0].properties).toMatchObject({ code: 'B b', kind: 'sea' });
+  });
+});
+
+describe('what is no table and no GeoJSON', () => {
+  it.each([
+    ['an empty file', ' \n'],
+    ['a picture', '\u0089PNG\r\n\u001a\n\u0000\u0000'],
+  ])('%s is refused as a whole', async (_, text) => {
+    const answer = await send({ kind: 'rotations', text });
+    expect([answer.status, answer.json.name]).toEqual([400, 'InvalidRequest']);
   });
 });
 

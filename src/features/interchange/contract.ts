@@ -5,6 +5,8 @@ import { IMPORT_KINDS } from './files';
 /** A row that was not taken, and how to mend it. `column` is a heading, a property or `geometry`. */
 export const rejectedRow = z.object({
   line: z.number().int().nullable(),
+  /** Of a GeoJSON file, which may be one line: the feature's place in its list, from 1. */
+  entry: z.number().int().optional(),
   column: z.string().nullable(),
   read: z.string(),
   problem: z.string(),
@@ -44,7 +46,9 @@ export const importReport = z.object({
   file: z.string(),
   accepted: z.number().int(),
   rejected: z.array(rejectedRow),
-  /** How many more were rejected than are listed. */
+  /** Rows of the file with something wrong, each counted once. */
+  rejected_rows: z.number().int(),
+  /** How many more faults were found than are listed. */
   rejected_beyond: z.number().int(),
   questions: z.array(question),
   settled: z.array(offer),

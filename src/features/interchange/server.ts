@@ -19,7 +19,7 @@ import type { ImportPlan } from './rules/plan';
 import { planBlocks } from './rules/plan-blocks';
 import { planDirections, planFeatures } from './rules/plan-evidence';
 import { planRotations } from './rules/plan-rotations';
-import { rejectedCsv } from './rules/rejected-csv';
+import { countRows, rejectedFile } from './rules/rejected-file';
 import { readRotations, type FileReading } from './rules/rotations';
 import { usable } from './usable';
 
@@ -44,6 +44,7 @@ const MOST_PREVIEW = 100;
  */
 export async function importInto(access: Access, request: ImportRequest): Promise<ImportReport> {
   demand(access, 'import');
+  requireText(request.file.bytes);
   const { text, notes } = decode(request.file.bytes);
   const state = await loadState(access, 'draft');
   const { reading, plan } = readFile(text, request, state);
@@ -53,6 +54,7 @@ export async function importInto(access: Access, request: ImportRequest): Promis
     file: request.file.name,
     accepted: plan.accepted,
     rejected: plan.rejected.slice(0, MOST_REJECTED).map((row) => ({ ...row, read: row.read.slice(0, 200) })),
+    rejected_rows: countRows(plan.rejected),
     rejected_beyond: Math.max(0, plan.rejected.length - MOST_REJECTED),
     questions,
     settled: reading.asking.settled(),
@@ -71,7 +73,18 @@ export async function importInto(access: Access, request: ImportRequest): Promis
   };
   const blocked =
     questions.length > 0 || (plan.rejected.length > 0 && !request.skipRejected) || plan.accepted === 0;
-  return request.dryRun || blocked ? report : write(access, request, plan, report);
+  return request.dryRun || blocked ? report : write(access, request, text, plan, report);
+}
+
+/** @throws Problem `InvalidRequest` for a file that holds nothing, or nothing that is text */
+function requireText(bytes: Uint8Array): void {
+  const utf16 = (bytes[0] === 0xff && bytes[1] === 0xfe) || (bytes[0] === 0xfe && bytes[1] === 0xff);
+  if (bytes.every((byte) => byte === 0x20 || (byte >= 0x09 && byte <= 0x0d)))
+    throw new Problem('InvalidRequest', { detail: 'The file is empty.' });
+  if (!utf16 && bytes.subarray(0, 65_536).includes(0))
+    throw new Problem('InvalidRequest', {
+      detail: 'The file is not text. Save a table as CSV, outlines as GeoJSON.',
+    });
 }
 
 function readFile(
@@ -103,6 +116,7 @@ function readFile(
 async function write(
   access: Access,
   request: ImportRequest,
+  text: string,
   plan: ImportPlan,
   report: ImportReport,
 ): Promise<ImportReport> {
@@ -121,7 +135,7 @@ async function write(
         sha256: createHash('sha256').update(file.bytes).digest('hex'),
         content: file.bytes,
         report: { ...report, preview: [] },
-        rejected: plan.rejected.length > 0 ? rejectedCsv(plan.rejected) : null,
+        rejected: plan.rejected.length > 0 ? rejectedFile(kind, text, plan.rejected) : null,
         revision: made,
         imported_by: access.actor.user!.id,
       });
@@ -131,15 +145,24 @@ async function write(
 }
 
 /** The rejected rows of one import, to mend and try again. @throws Problem `NotFound` */
-export async function rejectedRows(access: Access, id: string): Promise<{ name: string; csv: string }> {
+export async function rejectedRows(
+  access: Access,
+  id: string,
+): Promise<{ name: string; type: string; text: string }> {
   demand(access, 'import');
   const own = and(eq(importFile.project_id, access.project.id), eq(importFile.id, id));
   const [row] = await database()
-    .select({ name: importFile.name, rejected: importFile.rejected })
+    .select({ name: importFile.name, kind: importFile.kind, rejected: importFile.rejected })
     .from(importFile)
     .where(own);
   if (!row?.rejected) throw new Problem('NotFound');
-  return { name: `${row.name.replace(/\.[^.]*$/, '')}-rejected.csv`, csv: row.rejected };
+  const isGeojson = row.kind === 'blocks' || row.kind === 'features';
+  const base = row.name.replace(/\.[^.]*$/, '').replace(/-rejected$/, '');
+  return {
+    name: `${base}-rejected.${isGeojson ? 'geojson' : 'csv'}`,
+    type: isGeojson ? 'application/geo+json; charset=utf-8' : 'text/csv; charset=utf-8',
+    text: row.rejected,
+  };
 }
 
 /** A kept original, byte for byte. @throws Problem `NotFound` */

@@ -130,7 +130,7 @@ interface ReportProps {
 }
 
 function Report({ report, desk, busy, again, accept, slug }: ReportProps) {
-  const rejected = report.rejected.length + report.rejected_beyond;
+  const rejected = report.rejected_rows;
   if (report.written) return <Written report={report} slug={slug} />;
   return (
     <div className="grid gap-8">
@@ -208,7 +208,7 @@ function Report({ report, desk, busy, again, accept, slug }: ReportProps) {
 }
 
 function Written({ report, slug }: { readonly report: ImportReport; readonly slug: string }) {
-  const rejected = report.rejected.length + report.rejected_beyond;
+  const rejected = report.rejected_rows;
   return (
     <div className="grid gap-4">
       <p className="t-answer" role="status">

@@ -25,7 +25,12 @@ export function RejectedTable({ rows, beyond, file }: Props) {
           <tbody>
             {rows.map((row, i) => (
               <tr key={i}>
-                <td className="number">{row.line ?? ''}</td>
+                <td className="number">
+                  {row.line ?? ''}
+                  {row.entry && (
+                    <span className="text-ink-2 block whitespace-nowrap">feature {row.entry}</span>
+                  )}
+                </td>
                 <td>{row.column ?? ''}</td>
                 <td className="text-madder max-w-56 break-words">{row.read === '' ? 'nothing' : row.read}</td>
                 <td>{row.problem}</td>

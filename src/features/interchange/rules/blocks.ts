@@ -48,6 +48,7 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
 
 interface Part {
   readonly line: number;
+  readonly entry: number;
   readonly fields: BlockFields;
   readonly outline: OutlineCandidate | null;
 }
@@ -59,7 +60,7 @@ function straightened(part: Part, rejected: RejectedRow[]): Part[] {
   const rings = geometry.type === 'Polygon' ? geometry.coordinates : geometry.coordinates.flat();
   const fault = rings.map(ringFault).find((found) => found !== null);
   if (!fault) return [{ ...part, outline: { ...part.outline, geometry } }];
-  rejected.push({ line: part.line, column: 'geometry', ...fault });
+  rejected.push({ line: part.line, entry: part.entry, column: 'geometry', ...fault });
   return [];
 }
 
@@ -126,6 +127,7 @@ function readFeature(
   const span = { outline_older_ma: outline_older_ma ?? null, outline_younger_ma: outline_younger_ma ?? null };
   return {
     line: feature.line,
+    entry: feature.index + 1,
     fields,
     outline: outline && {
       line: feature.line,
@@ -155,7 +157,7 @@ function gather(parts: readonly Part[], rejected: RejectedRow[]): Candidate<Bloc
       (k) => part.fields[k] !== block.fields[k],
     );
     const overlap = part.outline && block.outlines.find((o) => overlapping(o, part.outline!));
-    const row = { line: part.line, column: 'code', read: code };
+    const row = { line: part.line, entry: part.entry, column: 'code', read: code };
     if (differs) {
       const problem = `${differs} differs from line ${block.line} of the same code`;
       rejected.push({

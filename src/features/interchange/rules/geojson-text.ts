@@ -54,6 +54,7 @@ export function readFeatureCollection(text: string): GeoJsonReading {
       const hint = 'Each entry has "type":"Feature", properties and a geometry.';
       rejected.push({
         line,
+        entry: index + 1,
         column: null,
         read: written(f?.type),
         problem: `entry ${index + 1} is not a Feature`,
@@ -82,7 +83,7 @@ function lineAt(text: string, position: number): number {
 }
 
 /** Line of the opening brace of each entry of the top-level "features" array; a scan, since JSON.parse drops places. */
-function featureLines(text: string): number[] {
+export function featureLines(text: string): number[] {
   const lines: number[] = [];
   let line = 1;
   let depth = 0;

@@ -14,7 +14,8 @@ export class PropertyReader {
     const value = feature.properties[column];
     const text =
       read ?? (value === undefined ? '' : typeof value === 'string' ? value : JSON.stringify(value));
-    this.rejected.push({ line: feature.line, column, read: text.slice(0, 200), problem, hint });
+    const place = { line: feature.line, entry: feature.index + 1 };
+    this.rejected.push({ ...place, column, read: text.slice(0, 200), problem, hint });
   }
 
   text(feature: LocatedFeature, column: string): string | null {

@@ -34,7 +34,9 @@ function askEach(
 
 export function settleAges(rows: PoleValues[], unit: string | undefined, asking: Asking): void {
   const tooOld = rows.filter((row) => Math.abs(row.age_ma) > OLDEST_MA);
-  if (unit === 'ka' || tooOld.length > 0) {
+  // One odd age among good ones is a slip, not a unit: it is rejected by itself.
+  const most = 2 * tooOld.length >= rows.filter((row) => row.age_ma !== 0).length;
+  if (unit === 'ka' || (tooOld.length > 0 && most)) {
     const ask =
       unit === 'ka'
         ? 'The heading says ka. Divide the ages by 1,000 to have them in Ma?'
@@ -68,7 +70,7 @@ export function settleAngles(rows: PoleValues[], units: ReadonlyMap<string, stri
     turning.length >= 3 &&
     turning.every((row) => Math.abs(row.angle_deg) <= Math.PI) &&
     turning.every((row) => Math.abs(row.angle_deg) / row.age_ma < SLOWEST_DEG_PER_MYR) &&
-    turning.some((row) => !Number.isInteger(row.angle_deg * 100));
+    turning.some((row) => !Number.isInteger(row.angle_deg));
   if (!named && !small) return;
   const polesToo =
     says('pole_lat') ||

@@ -3,9 +3,9 @@ import { projectRoute } from '~/server/route';
 import { attachment } from '~/server/attachment';
 
 export const GET = projectRoute(
-  { action: 'import', summary: 'The rejected rows of an import, as CSV' },
+  { action: 'import', summary: 'The rejected rows of an import, as a file to mend and import again' },
   async ({ access, params }) => {
-    const { name, csv } = await rejectedRows(access, params['id'] ?? '');
-    return attachment(csv, 'text/csv; charset=utf-8', name);
+    const { name, type, text } = await rejectedRows(access, params['id'] ?? '');
+    return attachment(text, type, name);
   },
 );
