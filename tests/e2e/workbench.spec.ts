@@ -147,6 +147,34 @@ test.describe('editing', () => {
     await expect(angle66(page)).toHaveText('9.64');
   });
 
+  test('two people in one cell: the second is told, and chooses', async ({ page, browser }) => {
+    await signInAs(page, 'researcher', LINK);
+    await expect(angle66(page)).toHaveText('9.64');
+    await angle66(page).dblclick();
+    await grid(page).getByRole('textbox', { name: 'Angle, °' }).fill('9.80');
+
+    const other = await browser.newContext();
+    const theirs = await other.newPage();
+    await signInAs(theirs, 'lead', LINK);
+    await angle66(theirs).dblclick();
+    await grid(theirs).getByRole('textbox', { name: 'Angle, °' }).fill('9.70');
+    await theirs.keyboard.press('Enter');
+    await expect(angle66(theirs)).toHaveText('9.70');
+
+    await page.waitForTimeout(1500);
+    await page.keyboard.press('Enter');
+    await expect(page.getByRole('status').filter({ hasText: /Changed by .+ at \d\d:\d\d/ })).toBeVisible();
+    const draft = async (): Promise<string> =>
+      (await page.request.get('/api/projects/lantern-sea/rotations?version=draft')).text();
+    expect(await draft()).toContain('"angle_deg":9.7,');
+    await page.getByRole('button', { name: 'Keep theirs' }).click();
+    await expect(angle66(page)).toHaveText('9.70');
+    await theirs.getByRole('button', { name: 'Undo' }).click();
+    await expect(angle66(theirs)).toHaveText('9.64');
+    await expect(angle66(page)).toHaveText('9.64');
+    await other.close();
+  });
+
   test('a loop in the circuit is marked at its ages, and undo mends it', async ({ page }) => {
     await signInAs(page, 'researcher', LINK);
     const api = '/api/projects/lantern-sea';

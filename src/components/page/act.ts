@@ -25,12 +25,16 @@ function say(from: Element, text: string): void {
   box.hidden = false;
 }
 
-async function act(element: HTMLElement, body?: unknown): Promise<void> {
-  const { method = 'POST', href = '', then, confirms } = element.dataset;
+/** What a form said before the page was shown anew. */
+const SAID = 'driftwright.said';
+
+/** @returns false where nothing was done */
+async function act(element: HTMLElement, body?: unknown): Promise<boolean> {
+  const { method = 'POST', href = '', then, confirms, says } = element.dataset;
   if (confirms && element.dataset['asked'] !== 'yes') {
     element.dataset['asked'] = 'yes';
     element.textContent = confirms;
-    return;
+    return false;
   }
   try {
     const answer = await fetch(href, {
@@ -47,14 +51,15 @@ async function act(element: HTMLElement, body?: unknown): Promise<void> {
           output.value = made[output.name] ?? '';
           output.closest<HTMLElement>('[hidden]')?.removeAttribute('hidden');
         }
-        return;
+        return true;
       }
+      if (says) sessionStorage.setItem(SAID, says);
       if (then)
         location.assign(
           then.replace(/\{(\w+)\}/g, (_, key: string) => String((body as Record<string, unknown>)[key])),
         );
       else location.reload();
-      return;
+      return true;
     }
     const problem = (await answer.json()) as {
       title: string;
@@ -71,7 +76,12 @@ async function act(element: HTMLElement, body?: unknown): Promise<void> {
   } catch {
     say(element, 'The server did not answer. Nothing was changed; try again.');
   }
+  return false;
 }
+
+const said = document.querySelector<HTMLElement>('[data-said]');
+if (said) said.textContent = sessionStorage.getItem(SAID);
+sessionStorage.removeItem(SAID);
 
 for (const button of document.querySelectorAll<HTMLButtonElement>('button[data-href]')) {
   button.addEventListener('click', () => void act(button));
@@ -88,5 +98,10 @@ for (const form of document.querySelectorAll<HTMLFormElement>('form[data-href]')
   });
 }
 for (const select of document.querySelectorAll<HTMLSelectElement>('select[data-href]')) {
-  select.addEventListener('change', () => void act(select, { [select.name]: select.value }));
+  const before = select.value;
+  select.addEventListener('change', () => {
+    void act(select, { [select.name]: select.value }).then((done) => {
+      if (!done) select.value = before;
+    });
+  });
 }

@@ -9,13 +9,27 @@ interface ProblemBody {
   readonly errors?: readonly { readonly path?: string; readonly problem: string; readonly hint?: string }[];
 }
 
+const sentences = (parts: readonly (string | undefined)[]): string =>
+  parts
+    .flatMap((part) => (part ? [part.replace(/\.$/, '')] : []))
+    .map((part) => part.charAt(0).toUpperCase() + part.slice(1))
+    .join('. ');
+
+/** The first problem with its way to mend it; where it stands is shown at the cell. */
+function reasons({ errors = [] }: ProblemBody): string | null {
+  const [first, ...more] = errors;
+  if (!first) return null;
+  const others = more.length > 0 ? `and ${more.length} more` : undefined;
+  return sentences([first.problem, first.hint, others]);
+}
+
 /** Why an edit was not taken. Nothing of it was written. */
 export class EditRefused extends Error {
   constructor(
     readonly status: number,
     private readonly body: ProblemBody,
   ) {
-    super([body.title ?? `The server answered ${status}`, body.detail].filter(Boolean).join('. '));
+    super(reasons(body) ?? sentences([body.title ?? `The server answered ${status}`, body.detail]));
   }
 
   /** The revision that the draft has by now, where the edit was made on an older one. */
@@ -56,16 +70,31 @@ async function post<T>(address: string, revision: number | null, body?: unknown)
 
 const base = (slug: string): string => `/api/projects/${encodeURIComponent(slug)}`;
 
-/** Rows that others changed since and that these edits touch too. */
+type RowChange = NonNullable<ChangeEntry['changes']>[number];
+
+/** Rows in which others changed since what these edits change too: the same cells, or the whole row. */
 export function overlap(edits: readonly Edit[], changes: readonly ChangeEntry[]): string[] {
-  const own = new Set(edits.map((edit) => edit.id));
+  const own = new Map(edits.map((edit) => [edit.id, edit]));
   return changes
     .flatMap((entry) => entry.changes ?? [])
-    .flatMap(({ entity_id }) => (own.has(entity_id) ? [entity_id] : []));
+    .flatMap((change) => {
+      const edit = own.get(change.entity_id);
+      return edit && meets(edit, change) ? [change.entity_id] : [];
+    });
 }
 
+function meets(edit: Edit, { before, after }: RowChange): boolean {
+  if (edit.op !== 'update' || !isRow(before) || !isRow(after)) return true;
+  return Object.keys(edit.fields).some(
+    (key) => key === 'geometry' || JSON.stringify(before[key]) !== JSON.stringify(after[key]),
+  );
+}
+
+const isRow = (value: unknown): value is Record<string, unknown> =>
+  typeof value === 'object' && value !== null;
+
 /**
- * Sends edits. Where the draft has moved on but none of these rows was touched, they are sent again on the new revision.
+ * Sends edits. Where the draft has moved on but none of these cells was touched, they are sent again on the new revision.
  * @throws EditRefused
  */
 export async function sendEdits(
@@ -85,6 +114,14 @@ export async function sendEdits(
       throw error;
     return post<BatchAnswer>(`${base(slug)}/edits`, error.revision, { edits, ...(label ? { label } : {}) });
   }
+}
+
+/** What the newest step of the change log did. */
+export async function lastLabel(slug: string): Promise<string | null> {
+  const answer = await fetch(`${base(slug)}/changes?limit=1`);
+  if (!answer.ok) return null;
+  const { items } = (await answer.json()) as { items: readonly { label: string }[] };
+  return items[0]?.label ?? null;
 }
 
 export const sendUndo = (slug: string, which: 'undo' | 'redo', revision: number): Promise<BatchAnswer> =>

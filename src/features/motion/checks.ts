@@ -78,11 +78,18 @@ function circuits(model: Model, state: State, frame: string | null, nameOf: (cod
 }
 
 function jumps(model: Model, nameOf: (code: string) => string): Check {
-  const found = handOverJumps(model).filter((jump) => jump.greatest_km !== null);
+  const all = handOverJumps(model);
+  const found = all.filter((jump) => jump.greatest_km !== null);
   const worst = found.sort((a, b) => b.greatest_km! - a.greatest_km!)[0];
   const statement = `No hand-over jumps more than ${number(JUMP_KM)} km`;
+  if (!worst && all.length > 0)
+    return {
+      verdict: 'note',
+      statement: 'No hand-over can be measured',
+      figure: `${nameOf(all[0]!.block)} at ${shortAge(all[0]!.age_ma)} Ma: no circuit between the two`,
+    };
   if (!worst) return { verdict: 'holds', statement, figure: 'no hand-over' };
-  const figure = `${nameOf(worst.block)}, ${kilometres(worst.greatest_km!)} at ${shortAge(worst.age_ma)} Ma`;
+  const figure = `${nameOf(worst.block)}, up to ${kilometres(worst.greatest_km!)} at ${shortAge(worst.age_ma)} Ma`;
   return { verdict: worst.greatest_km! > JUMP_KM ? 'check' : 'holds', statement, figure };
 }
 

@@ -9,12 +9,13 @@ interface Named {
 export const inText = (block: Named): string =>
   block.kind === 'frame' ? block.name.charAt(0).toLowerCase() + block.name.slice(1) : block.name;
 
-/** "Old Harrow craton" is "Old Harrow" where room is short: a last word in lower case only says the kind. */
+const KINDS =
+  /\s+(craton|terrane|block|plate|microplate|microcontinent|continent|arc|plateau|ridge|margin|basin|island|islands|shield)$/;
+
+/** "Old Harrow craton" is "Old Harrow" where room is short: a last word that only says the kind goes without. */
 export function shortName(block: Named): string {
   if (block.kind === 'frame') return inText(block);
-  const words = block.name.split(' ');
-  const last = words[words.length - 1] ?? '';
-  return words.length > 1 && last === last.toLowerCase() ? words.slice(0, -1).join(' ') : block.name;
+  return block.name.replace(KINDS, '');
 }
 
 /** On the map "terrane", "block" and "microcontinent" go without saying; a craton, arc or plateau is named as one. */

@@ -36,6 +36,22 @@ describe('blocks.geojson', () => {
     expect(ids(reading)).toEqual([]);
   }); // prettier-ignore
 
+  it('takes none of the features of one code where one of them is rejected', () => {
+    const text = file(
+      block('birch', square(0, 0, 9, 9), { appears_ma: -5, outline_older_ma: 50 }),
+      block('birch', square(20, 0, 29, 9), { outline_younger_ma: 50 }),
+      block('alder', square(40, 0, 49, 9)),
+    );
+    const { candidates, rejected } = readBlocks(text);
+    expect(candidates.map((c) => c.fields.fields.code)).toEqual(['alder']);
+    expect(rejected.map((row) => [row.line, row.column])).toEqual(
+      expect.arrayContaining([
+        [2, 'appears_ma'],
+        [3, 'code'],
+      ]),
+    );
+  });
+
   it('asks about a clockwise ring, which by its direction covers most of the globe', () => {
     const text = file(block('sable', square(20, -35, 50, -20).reverse()));
     const open = readBlocks(text);

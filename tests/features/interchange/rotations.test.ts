@@ -248,3 +248,50 @@ describe('against the draft', () => {
     expect(resolved.create.map((c) => c.line)).toEqual([4]);
   });
 });
+
+describe('a code one slip away from one of the project', () => {
+  const draft = {
+    blocks: ['alder', 'spin-axis', 'arc-1'].map((code) => ({
+      code,
+      kind: 'other' as const,
+      appears_ma: null,
+      disappears_ma: null,
+    })),
+    rotations: [],
+  };
+  const read = (answers: Record<string, string>, ...lines: string[]) => {
+    const { candidates, asking } = readRotations(file(...lines), answers);
+    return { asking, ...resolveRotations(candidates, draft, asking) };
+  };
+
+  it('is asked about by itself, and read as answered', () => {
+    const line = 'birch,aldr,10,1,2,3';
+    const open = read({}, line);
+    const question = open.asking.questions().find((q) => q.id === 'spelling:aldr');
+    expect(question?.choices).toEqual(['alder', 'aldr, a new one', 'reject these rows']);
+    const meant = read({ 'spelling:aldr': 'alder', missing_block: 'add without outline' }, line);
+    expect(meant.create[0]?.fields.relative_to).toBe('alder');
+    const rejected = read({ 'spelling:aldr': 'reject these rows' }, line);
+    expect(rejected.rejected[0]).toMatchObject({ column: 'relative_to', read: 'aldr', hint: 'Write alder?' });
+  });
+
+  it('is not, where the two are a series', () => {
+    expect(
+      read({}, 'arc-2,spin-axis,10,1,2,3')
+        .asking.questions()
+        .map((q) => q.id),
+    ).toEqual(['missing_block']);
+  });
+});
+
+describe('one age that is too old among good ones', () => {
+  it('is rejected by itself, as written, and the unit of the others is not in question', () => {
+    const rows = [10.5, 20, 30, 20000].map((age) => `birch,alder,${age},1,2,3`);
+    const { candidates, rejected, asking } = readRotations(file(...rows));
+    expect(asking.questions()).toEqual([]);
+    expect(candidates.map((c) => c.fields.age_ma)).toEqual([10.5, 20, 30]);
+    expect(rejected).toMatchObject([
+      { line: 5, column: 'age_ma', read: '20000', problem: 'older than the Earth' },
+    ]);
+  });
+});

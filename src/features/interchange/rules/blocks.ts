@@ -34,9 +34,11 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
   const { features, rejected } = readFeatureCollection(text);
   const reader = new PropertyReader(asking);
   const swapped = outlineFaults.swapped(features, asking);
-  const parts = features
-    .map((feature) => readFeature(feature, reader, asking, swapped))
-    .filter((part) => part !== null);
+  const parts = withoutHalves(
+    features,
+    features.map((feature) => readFeature(feature, reader, asking, swapped)),
+    reader,
+  );
   const all = [...rejected, ...reader.rejected];
   const straight = followsStraightLines(
     parts.flatMap(({ outline }) => outline ?? []),
@@ -44,6 +46,28 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
   );
   const candidates = gather(straight ? parts.flatMap((part) => straightened(part, all)) : parts, all);
   return { candidates, rejected: all, asking, notes: notesOf(features) };
+}
+
+/** Features of one code are one block: where one of them is rejected, the others would be a part of it unasked. */
+function withoutHalves(
+  features: readonly LocatedFeature[],
+  read: readonly (Part | null)[],
+  reader: PropertyReader,
+): Part[] {
+  const broken = new Map<unknown, LocatedFeature>();
+  features.forEach((feature, i) => {
+    if (!read[i]) broken.set(feature.properties['code'], feature);
+  });
+  return features.flatMap((feature, i) => {
+    const part = read[i];
+    if (!part) return [];
+    const other = broken.get(part.fields.code);
+    if (!other) return [part];
+    const where = other.line === feature.line ? `feature ${other.index + 1}` : `line ${other.line}`;
+    const hint = 'Mend that one first: features of one code are outlines by age of one block.';
+    reader.reject(feature, 'code', `the code of ${where}, which is rejected`, hint);
+    return [];
+  });
 }
 
 interface Part {

@@ -37,7 +37,8 @@ export function resolveRotations(
   const addFrames = new Set<string>();
   const moved = new Set(candidates.map((c) => c.fields.block));
 
-  const present = candidates.filter((candidate) => {
+  const spelled = candidates.flatMap((candidate) => respelled(candidate, known, asking, rejected));
+  const present = spelled.filter((candidate) => {
     const { block, relative_to } = candidate.fields;
     for (const code of [block, relative_to]) {
       if (known.has(code)) continue;
@@ -61,6 +62,51 @@ export function resolveRotations(
     addFrames: [...addFrames],
     addBlocks: [...addBlocks],
   };
+}
+
+/** A code one slip away from one of the project's is asked about by itself, before it is taken for a new one. */
+function respelled(
+  candidate: Candidate<RotationFields>,
+  known: ReadonlySet<string>,
+  asking: Asking,
+  rejected: RejectedRow[],
+): Candidate<RotationFields>[] {
+  const fields = { ...candidate.fields };
+  for (const column of ['block', 'relative_to'] as const) {
+    const code = fields[column];
+    const near = known.has(code) ? null : nearest(code, known);
+    if (!near) continue;
+    const ask = `${code} is not in the project, but ${near} is. Which is meant?`;
+    const choices = [near, `${code}, a new one`, REJECT];
+    const answer = asking.ask(`spelling:${code}`, ask, choices, `line ${candidate.line}: ${code}`);
+    if (answer === near) fields[column] = near;
+    if (answer !== REJECT) continue;
+    rejected.push({ ...unknownCode(candidate, code, column === 'relative_to'), hint: `Write ${near}?` });
+    return [];
+  }
+  return [{ ...candidate, fields }];
+}
+
+/** Numbered and lettered codes, as "arc-2" and "arc-b", differ by one letter on purpose. */
+const SERIES = /\d|(^|-)[a-z]$/;
+
+/** A code of the project that a slip of one letter turns into this one; null where there is none. */
+function nearest(code: string, known: ReadonlySet<string>): string | null {
+  if (code.length < 4 || SERIES.test(code)) return null;
+  return [...known].find((other) => Math.abs(other.length - code.length) <= 1 && isSlip(code, other)) ?? null;
+}
+
+/** One letter changed, left out, added, or two neighbours exchanged (Damerau 1964). */
+function isSlip(a: string, b: string): boolean {
+  let i = 0;
+  while (i < a.length && a[i] === b[i]) i++;
+  const [restA, restB] = [a.slice(i), b.slice(i)];
+  return (
+    restA.slice(1) === restB.slice(1) ||
+    restA.slice(1) === restB ||
+    restA === restB.slice(1) ||
+    (restA[0] === restB[1] && restA[1] === restB[0] && restA.slice(2) === restB.slice(2))
+  );
 }
 
 function askMissing(

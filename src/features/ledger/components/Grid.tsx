@@ -7,7 +7,7 @@ import { useCallback, useId, useLayoutEffect, useMemo, useRef } from 'react';
 import { cellAt, within } from '../grid/selection';
 import type { GridProps, GridRow } from './grid-props';
 import { GridCell } from './GridCell';
-import { GridHeading, slotsOf } from './GridHeading';
+import { GridHeading, slotsOf, type Slot } from './GridHeading';
 import { useGrid } from './use-grid';
 
 const ROW = 21;
@@ -18,7 +18,7 @@ export function Grid(props: GridProps) {
   const grid = useRef<HTMLDivElement>(null);
   const id = useId();
   const slots = useMemo(() => slotsOf(columns, shown), [columns, shown]);
-  const template = useMemo(() => slots.map((slot) => slot.of.width).join(' '), [slots]);
+  const template = useMemo(() => templateOf(slots, rows), [slots, rows]);
   const virtual = useVirtualizer({
     count: rows.length,
     getScrollElement: () => scroller.current,
@@ -115,6 +115,7 @@ export function Grid(props: GridProps) {
                         onType={type}
                         onKeep={keep}
                         onPutBack={putBack}
+                        onSpread={work.spread}
                       />
                     );
                   })}
@@ -127,6 +128,32 @@ export function Grid(props: GridProps) {
     </div>
   );
 }
+
+/** Pixels that a digit and the padding of a cell take. */
+const DIGIT = 7;
+const PADDING = 16;
+/** Rows that are measured: a longer table repeats itself. */
+const MEASURED = 2000;
+
+/** Tracks of the grid: the columns' own widths, numbers as wide as the longest of them needs. */
+function templateOf(slots: readonly Slot[], rows: readonly GridRow[]): string {
+  return slots
+    .map(({ of, column }) => {
+      if (!column?.numeric) return of.width;
+      const longest = rows
+        .slice(0, MEASURED)
+        .reduce(
+          (most, row) =>
+            Math.max(most, shownLength(row.fields[column.key], /age|_ma$/.test(column.key) ? 1 : 2)),
+          0,
+        );
+      return `max(${of.width}, ${Math.ceil(longest * DIGIT + PADDING)}px)`;
+    })
+    .join(' ');
+}
+
+const shownLength = (value: unknown, decimals: number): number =>
+  typeof value !== 'number' ? 0 : Math.max(String(value).length, value.toFixed(decimals).length);
 
 function rowClass(row: GridRow): string {
   const base = 'absolute inset-x-0 top-0 grid grid-cols-(--columns) border-b border-rule';

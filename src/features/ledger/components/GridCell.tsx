@@ -21,6 +21,8 @@ interface Props {
   readonly onType: (text: string) => void;
   readonly onKeep: (then?: (from: Place) => Place) => void;
   readonly onPutBack: () => void;
+  /** Several cells pasted into the one under edit: they go into the grid from here on. */
+  readonly onSpread: (text: string) => void;
 }
 
 const below = (from: Place): Place => ({ ...from, row: from.row + 1 });
@@ -66,7 +68,15 @@ export function GridCell(props: Props) {
   );
 }
 
-function CellInput({ id, column, editing, onType, onKeep, onPutBack }: Props & { readonly editing: string }) {
+function CellInput({
+  id,
+  column,
+  editing,
+  onType,
+  onKeep,
+  onPutBack,
+  onSpread,
+}: Props & { readonly editing: string }) {
   const input = useRef<HTMLInputElement>(null);
   useEffect(() => {
     const field = input.current;
@@ -97,7 +107,13 @@ function CellInput({ id, column, editing, onType, onKeep, onPutBack }: Props & {
         onKeyDown={onKey}
         onBlur={() => onKeep()}
         onCopy={(event) => event.stopPropagation()}
-        onPaste={(event) => event.stopPropagation()}
+        onPaste={(event) => {
+          event.stopPropagation();
+          const text = event.clipboardData.getData('text/plain');
+          if (!/[\t\n]/.test(text.trim())) return;
+          event.preventDefault();
+          onSpread(text);
+        }}
       />
       {column.choices && (
         <datalist id={`${id}-choices`}>

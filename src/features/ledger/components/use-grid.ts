@@ -70,8 +70,8 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
     const { place, text } = edit;
     const changed = text !== textAt(place);
     setEdit(null);
-    onEditing(null);
     if (changed) onChanges([{ row: rows[place.row]!.id, key: columns[place.column]!.key, text }], []);
+    onEditing(null);
     const at = then(place);
     goTo({ at, from: at });
     grid.current?.focus();
@@ -156,7 +156,16 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
   function onPaste(event: ClipboardEvent): void {
     if (edit || readOnly) return;
     event.preventDefault();
-    const cells = readCells(event.clipboardData.getData('text/plain'));
+    paste(event.clipboardData.getData('text/plain'));
+  }
+
+  const spread = (text: string): void => {
+    putBack();
+    paste(text);
+  };
+
+  function paste(text: string): void {
+    const cells = readCells(text);
     const top = Math.min(selection.at.row, selection.from.row);
     const row = rows.slice(0, top).filter((r) => !r.computed).length;
     const anchor = { row, column: Math.min(selection.at.column, selection.from.column) };
@@ -164,5 +173,5 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
     onChanges(changes, newRows);
   }
 
-  return { selection, edit, textAt, goTo, begin, type, keep, putBack, onKey, onCopy, onPaste };
+  return { selection, edit, textAt, goTo, begin, type, keep, putBack, onKey, onCopy, onPaste, spread };
 }

@@ -11,18 +11,46 @@ const rowCount = (model: Model, code: string): number =>
   model.blocks.find((block) => block.code === code)?.legs.reduce((sum, { rows }) => sum + rows.length, 0) ??
   0;
 
-/** The frame at the top of a block's circuit; else the first frame, else the block itself. */
+/**
+ * The frame at the top of a block's circuit; where hand-overs lead to several, the one that it is placed in for the
+ * longest; else the first frame, else the block itself.
+ */
 export function rootFrame(model: Model, code: string | null): string {
-  const seen = new Set<string>();
-  let block = model.blocks.find((candidate) => candidate.code === code);
-  while (block && block.legs.length > 0 && !seen.has(block.code)) {
-    seen.add(block.code);
-    const above: string | undefined = block.legs.at(-1)?.relative_to;
-    block = model.blocks.find((candidate) => candidate.code === above) ?? block;
+  const block = model.blocks.find((candidate) => candidate.code === code);
+  const tops = block ? topsOf(model, block.code) : [];
+  if (tops.length <= 1 || !block)
+    return (
+      tops[0] ??
+      model.blocks.find(({ kind }) => kind === 'frame')?.code ??
+      block?.code ??
+      model.blocks[0]?.code ??
+      ''
+    );
+  const spans = tops.map((top) => placedSpan(model, block.code, top));
+  return tops[spans.indexOf(Math.max(...spans))]!;
+}
+
+/** Blocks and frames without rotations of their own at which a block's circuits end, whatever the age. */
+function topsOf(model: Model, code: string): string[] {
+  const seen = new Set([code]);
+  const tops: string[] = [];
+  for (const next of seen) {
+    const legs = model.blocks.find((block) => block.code === next)?.legs ?? [];
+    if (legs.length === 0 && next !== code) tops.push(next);
+    for (const { relative_to } of legs) seen.add(relative_to);
   }
-  return (
-    block?.code ?? model.blocks.find(({ kind }) => kind === 'frame')?.code ?? model.blocks[0]?.code ?? ''
-  );
+  return tops.filter((top) => model.blocks.some((block) => block.code === top));
+}
+
+/** Myr for which a block is placed in a frame. */
+function placedSpan(model: Model, code: string, frame: string): number {
+  const ends = model.blocks.flatMap(({ legs }) => legs.flatMap((leg) => [leg.younger_ma, leg.older_ma]));
+  const ages = [...new Set([0, ...ends])].sort((a, b) => a - b);
+  return ages.slice(1).reduce((sum, older, i) => {
+    const younger = ages[i]!;
+    const placed = poseAt(model, code, (younger + older) / 2, frame).status === 'placed';
+    return placed ? sum + older - younger : sum;
+  }, 0);
 }
 
 function firstBlock(scene: Scene): string | null {

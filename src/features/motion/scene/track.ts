@@ -28,7 +28,16 @@ export function trackOf(model: Model, point: NamedPoint, heldStill: string, span
   const step_ma = span.step_ma % FINE === 0 ? FINE : span.step_ma;
   const path = driftPath(model, { ...point, older_ma, younger_ma, step_ma, relative_to: heldStill });
   const points = path.flatMap(placed);
-  return points.length > 0 ? { points, tick: span.step_ma } : null;
+  return points.length > 0 ? { points, tick: tickOf(span.step_ma, older_ma - younger_ma) } : null;
+}
+
+/** More ticks than this would run together. */
+const MOST_TICKS = 30;
+
+/** The step itself, or as many of it between two ticks as keep them apart. */
+function tickOf(step: number, span: number): number {
+  const factor = [1, 2, 5, 10, 20, 50, 100, 200, 500].find((n) => span / (n * step) <= MOST_TICKS) ?? 1000;
+  return factor * step;
 }
 
 function placed({ age_ma, lat, lon, ellipse_95 }: DriftPoint): TrackPoint[] {

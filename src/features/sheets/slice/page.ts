@@ -9,7 +9,7 @@ import {
   kmPerUnit,
   PROJECTIONS,
 } from '../../../kernel/cartography/projections';
-import { age, ageValue, coordinates, list, number } from '../../motion/format';
+import { age, coordinates, list, number } from '../../motion/format';
 import { inText } from '../../motion/names';
 import { PAPERS } from '../choices';
 import type { SliceQuery } from '../contract';
@@ -282,4 +282,4 @@ function scaleBar(x: number, y: number, kmPerPt: number): string {
 }
 
 export const sliceFileName = (slug: string, version: string, age_ma: number, extension: string): string =>
-  `${slug}-${version === 'draft' ? 'draft' : `v${version}`}-${ageValue(age_ma)}-ma.${extension}`;
+  `${slug}-${version === 'draft' ? 'draft' : `v${version}`}-${age_ma.toFixed(1)}-ma.${extension}`;

@@ -79,7 +79,10 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
     holdsAt(outline_older_ma, outline_younger_ma, ageMa),
   );
 
-  const put = (corners: Corners): void => setWork((now) => (now ? { ...now, corners } : now));
+  const put = (corners: Corners): void => {
+    setWords('');
+    setWork((now) => (now ? { ...now, corners } : now));
+  };
   const leave = (say = ''): void => {
     setWork(null);
     setWords(say);
@@ -100,6 +103,7 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
       if (Math.hypot(event.clientX - from[0], event.clientY - from[1]) > SLACK) return;
       const bounds = panel.getBoundingClientRect();
       const v = disc.under([event.clientX - bounds.left, event.clientY - bounds.top]);
+      setWords('');
       if (v)
         setWork((now) =>
           now?.name === 'drawing' ? { ...now, corners: added(now.corners, present(v, pose)) } : now,
@@ -210,11 +214,13 @@ export function OutlineDesk({ slug }: { readonly slug: string }) {
       )}
       <div className="pointer-events-auto absolute right-2 bottom-2 flex max-w-[320px] flex-col items-end gap-1.5">
         <p className="t-body bg-paper/90 px-1 text-right" role="status">
-          {work?.name === 'drawing'
-            ? `${count(work.corners.length, 'corner')}: click to add one, Backspace takes the last, Enter closes, Esc leaves.`
-            : work?.name === 'editing'
-              ? 'Drag a corner, or press a midpoint for a new one. Enter keeps, Esc puts back.'
-              : (draft.refused ?? words)}
+          {words !== '' && work !== null && work.name !== 'naming'
+            ? words
+            : work?.name === 'drawing'
+              ? `${count(work.corners.length, 'corner')}: click to add one, Backspace takes the last, Enter closes, Esc leaves.`
+              : work?.name === 'editing'
+                ? 'Drag a corner, or press a midpoint for a new one. Enter keeps, Esc puts back.'
+                : (draft.refused ?? words)}
         </p>
         {work?.name === 'naming' && (
           <NewBlockForm

@@ -98,7 +98,10 @@ export function BlocksLedger({ draft, readOnly }: Props) {
             ids.map((id) => ({ id, base: BLANK_BLOCK })),
           )
         }
-        onEditing={(cell) => setEditing(cell !== null)}
+        onEditing={(cell) => {
+          draft.onCell(cell !== null);
+          setEditing(cell !== null);
+        }}
         onDelete={(ids) => draft.remove('blocks', ids)}
         onAdd={add}
         onRow={(id) => {

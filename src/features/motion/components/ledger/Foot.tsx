@@ -33,9 +33,15 @@ export function Foot({ draft, readOnly, editing, add, addLabel, children }: Prop
 }
 
 function Standing({ draft, readOnly }: { readonly draft: Draft; readonly readOnly: string | null }) {
-  const { conflict, refused, saving, pending } = draft;
+  const { conflict, refused, saving, pending, step } = draft;
   if (conflict) return <span className="text-madder">{conflict.words}</span>;
-  if (refused) return <span className="text-madder">{refused}</span>;
+  if (refused)
+    return (
+      <span className="text-madder">
+        {pending.size > 0 && `${count(pending.size, 'row')} not saved. `}
+        {`${refused.replace(/\.$/, '')}.`}
+      </span>
+    );
   if (saving) return <>Saving …</>;
   const waiting = [...pending.values()]
     .flatMap((row) => Object.values(row.cells))
@@ -45,6 +51,7 @@ function Standing({ draft, readOnly }: { readonly draft: Draft; readonly readOnl
       <span className="text-madder">{`${count(waiting.length, 'cell')} not saved: ${waiting[0]!.problem}.`}</span>
     );
   if (pending.size > 0) return <>A new row is saved once its block, reference, age and pole are filled in.</>;
+  if (step) return <>{step}</>;
   return <span className="text-ink-2">{readOnly ?? 'Type in a cell, or paste from a spreadsheet.'}</span>;
 }
 

@@ -114,7 +114,10 @@ export function RotationsLedger({ draft, readOnly }: Props) {
             made.map((id) => ({ id, base: { ...BLANK_ROTATION, block: code ?? '' } })),
           )
         }
-        onEditing={setEditing}
+        onEditing={(cell) => {
+          draft.onCell(cell !== null);
+          setEditing(cell);
+        }}
         onDelete={(ids) => draft.remove('rotations', ids)}
         onAdd={add}
         onRow={() => undefined}

@@ -6,7 +6,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import { compileModel } from '../../../../kernel/rotations';
 import type { Model } from '../../../../kernel/rotations/types';
-import { EditRefused, overlap, sendEdits, sendUndo } from '../../../ledger/client';
+import { EditRefused, lastLabel, overlap, sendEdits, sendUndo } from '../../../ledger/client';
 import type { BatchAnswer, Block, Edit, Rotation, Table } from '../../../ledger/contract';
 import type { Column } from '../../../ledger/grid/column';
 import {
@@ -35,6 +35,8 @@ export interface Draft {
   readonly model: Model | null;
   readonly pending: Pending;
   readonly saving: boolean;
+  /** The step of the log that was just undone or done again, in words. */
+  readonly step: string | null;
   /** What the server said of the last save; null after a good one. */
   readonly refused: string | null;
   readonly conflict: Conflict | null;
@@ -47,6 +49,8 @@ export interface Draft {
   readonly remove: (table: Table, rows: readonly string[]) => void;
   readonly run: (edits: readonly Edit[], label?: string) => Promise<boolean>;
   readonly undo: (which: 'undo' | 'redo') => void;
+  /** Told whenever a cell is opened, typed in, or left. */
+  readonly onCell: (open: boolean) => void;
   readonly putBack: () => void;
   readonly takeMine: () => void;
 }
@@ -135,6 +139,16 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
     [adopt, client, slug, unsent],
   );
 
+  /** The revision on the page when the cell under edit was opened: what others changed since is not overwritten unseen. */
+  const editedSince = useRef<number | null>(null);
+  const onCell = useCallback(
+    (open: boolean) => {
+      if (!open) editedSince.current = null;
+      else editedSince.current ??= revisionNow();
+    },
+    [revisionNow],
+  );
+
   const save = useCallback(
     (next: Pending, table: Table, columns: readonly Column[]): Promise<boolean> => {
       const attempt = async (now: Pending): Promise<boolean> => {
@@ -142,13 +156,14 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
         if (edits.length === 0) return true;
         const done = await send({
           edits,
-          work: () => sendEdits(slug, revisionNow(), edits),
+          work: () => sendEdits(slug, since ?? revisionNow(), edits),
           again: { key: table, send: () => attempt(latest.current) },
           onRefused: (error) => setPending((map) => marked(map, rows, error)),
         });
         if (done) setPending((map) => without(map, rows));
         return done;
       };
+      const since = editedSince.current;
       setPending(next);
       latest.current = next;
       return attempt(next);
@@ -187,8 +202,32 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
     [pending, run],
   );
 
+  const putBack = useCallback(() => {
+    setPending(new Map());
+    unsent.clear();
+    setRefused(null);
+    setConflict(null);
+  }, [unsent]);
+
+  const [step, setStep] = useState<string | null>(null);
+  /** Names the step that was taken back or done again: nobody should have to guess. */
+  const tellStep = useCallback(
+    (which: 'undo' | 'redo') => async (done: boolean) => {
+      if (!done) return;
+      const label = await lastLabel(slug).catch(() => null);
+      setStep(label === null ? null : `${which === 'undo' ? 'Undone' : 'Done again'}: ${label}.`);
+    },
+    [slug],
+  );
+  useEffect(() => {
+    if (step === null) return undefined;
+    const timer = window.setTimeout(() => setStep(null), STEP_SHOWN_MS);
+    return () => window.clearTimeout(timer);
+  }, [step]);
+
   return useMemo(
     () => ({
+      step,
       blocks: blocks.data ?? [],
       rotations: rotations.data ?? [],
       model: motions.data ?? null,
@@ -199,13 +238,13 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       change,
       remove,
       run,
-      undo: (which) => void send({ edits: [], work: () => sendUndo(slug, which, revisionNow()) }),
-      putBack: () => {
-        setPending(new Map());
-        unsent.clear();
-        setRefused(null);
-        setConflict(null);
+      undo: (which) => {
+        // What is typed and not saved is the last thing done: it goes first.
+        if (which === 'undo' && pending.size > 0) putBack();
+        else void send({ edits: [], work: () => sendUndo(slug, which, revisionNow()) }).then(tellStep(which));
       },
+      onCell,
+      putBack,
       takeMine: () => {
         if (!conflict) return;
         const { edits, revision: now } = conflict;
@@ -229,10 +268,15 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       send,
       slug,
       revisionNow,
-      unsent,
+      onCell,
+      putBack,
+      step,
+      tellStep,
     ],
   );
 }
+
+const STEP_SHOWN_MS = 8_000;
 
 interface Sending {
   readonly edits: readonly Edit[];

@@ -143,7 +143,7 @@ export function Log({ strips = ALL, heading = 'full', first = FIRST, reachTo, hi
             strip={latitude}
             curve={curve}
             observed={observed}
-            subject={subject}
+            subject={latitudeFrame === heldStill ? subject : `${subject} in ${nameOf(latitudeFrame)}`}
             beyond={beyond}
             gaps={gaps}
             stale={stale}
