@@ -10,6 +10,8 @@ export interface ImportRequest {
   readonly mapping: ColumnMapping;
   readonly dryRun: boolean;
   readonly skipRejected: boolean;
+  /** The revision that was previewed; null for a preview. */
+  readonly previewed: number | null;
 }
 
 /** What the server refused, in its own words. */
@@ -23,8 +25,16 @@ export async function sendImport(request: ImportRequest): Promise<ImportReport> 
   body.set('answers', JSON.stringify(request.answers));
   if (Object.keys(request.mapping).length > 0) body.set('mapping', JSON.stringify(request.mapping));
   body.set('file', request.file);
-  const answer = await fetch(`/api/projects/${request.slug}/imports`, { method: 'POST', body });
+  const answer = await fetch(`/api/projects/${request.slug}/imports`, {
+    method: 'POST',
+    body,
+    ...(request.previewed === null ? {} : { headers: { 'if-match': `"${request.previewed}"` } }),
+  });
   if (answer.ok) return (await answer.json()) as ImportReport;
+  if (answer.status === 412)
+    throw new ImportRefused(
+      'Someone changed the draft since this preview. Nothing was written: read the file again, then accept.',
+    );
   const problem = (await answer.json().catch(() => ({}))) as { title?: string; detail?: string };
   throw new ImportRefused(
     [problem.title ?? `The server answered ${answer.status}`, problem.detail].filter(Boolean).join('. '),

@@ -93,6 +93,14 @@ function meets(edit: Edit, { before, after }: RowChange): boolean {
 const isRow = (value: unknown): value is Record<string, unknown> =>
   typeof value === 'object' && value !== null;
 
+/** Whether every change between two revisions is there, row by row: long histories come shortened. */
+function tellsAll({ changes, revision }: EditRefused, since: number): boolean {
+  return (
+    changes.length === (revision ?? since) - since &&
+    changes.every((entry) => entry.changes !== undefined && entry.changes.length === entry.rows)
+  );
+}
+
 /**
  * Sends edits. Where the draft has moved on but none of these cells was touched, they are sent again on the new revision.
  * @throws EditRefused
@@ -109,6 +117,7 @@ export async function sendEdits(
     if (
       !(error instanceof EditRefused) ||
       error.revision === null ||
+      !tellsAll(error, revision) ||
       overlap(edits, error.changes).length > 0
     )
       throw error;

@@ -8,19 +8,18 @@ const DEGREES = 180 / Math.PI;
 /** Written digits: 0.1 m. */
 const round = (value: number): number => Math.round(value * 1e6) / 1e6 + 0;
 
-interface Sink {
-  point: (x: number, y: number) => void;
-}
+/**
+ * The plane whose coordinates are degrees, cut at the antimeridian and closed round poles. Its y runs down, as on a
+ * screen: outer rings and holes are told apart by their direction there, so it is turned over afterwards.
+ */
+const plane = geoEquirectangular().scale(DEGREES).translate([0, 0]).precision(PRECISION_DEG);
 
-/** The plane whose coordinates are degrees: a stream that d3-geo cuts at the antimeridian and closes round poles. */
-const plane = {
-  stream: (sink: Sink) => {
-    const projection = geoEquirectangular().scale(DEGREES).translate([0, 0]).precision(PRECISION_DEG);
-    const turned = Object.create(sink) as Sink;
-    turned.point = (x, y) => sink.point(round(x), round(-y));
-    return projection.stream(turned as Parameters<typeof projection.stream>[0]);
-  },
-};
+const upright = ([x = 0, y = 0]: Position): Position => [round(x), round(-y)];
+
+function turnedOver(node: unknown): unknown {
+  if (!Array.isArray(node)) return node;
+  return typeof node[0] === 'number' ? upright(node as Position) : node.map(turnedOver);
+}
 
 /**
  * Geometry on the sphere (great-circle edges, polygons clockwise round their inside, as d3-geo reads them) to
@@ -28,9 +27,11 @@ const plane = {
  * great circles, outer rings anticlockwise. Null for what is empty.
  */
 export function flatten(geometry: Geometry): Geometry | null {
-  const flat = geoProject<Geometry>(geometry, plane);
-  if (flat?.type === 'Polygon') return { ...flat, coordinates: flat.coordinates.map(wound) };
-  if (flat?.type === 'MultiPolygon')
+  const projected = geoProject<Geometry>(geometry, plane);
+  if (!projected || projected.type === 'GeometryCollection') return projected;
+  const flat = { ...projected, coordinates: turnedOver(projected.coordinates) } as typeof projected;
+  if (flat.type === 'Polygon') return { ...flat, coordinates: flat.coordinates.map(wound) };
+  if (flat.type === 'MultiPolygon')
     return { ...flat, coordinates: flat.coordinates.map((rings) => rings.map(wound)) };
   return flat;
 }

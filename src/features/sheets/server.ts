@@ -4,7 +4,7 @@ import { loadState, type State } from '~/features/ledger/state';
 import { modelOf } from '~/features/motion/model';
 import { usualFrame } from '~/features/motion/usual-frame';
 import { shortHash } from '~/features/versions/hash';
-import { driftPath } from '~/kernel/rotations';
+import { driftPath, type DriftPoint } from '~/kernel/rotations';
 import type { Model } from '~/kernel/rotations/types';
 import { createIndex, requireBlock } from '~/kernel/rotations/model-index';
 import { demand, type Access } from '~/server/access';
@@ -101,11 +101,19 @@ async function subjectOf(access: Access, state: State, query: SliceQuery): Promi
 function pathOf(
   subject: SliceSubject,
   query: SliceQuery,
-): { name: string; points: ReturnType<typeof driftPath> } | null {
+): { name: string; points: DriftPoint[]; here: DriftPoint | null } | null {
   const { path_block: block, path_lat: lat, path_lon: lon, path_step_ma: step_ma } = query;
   if (block === undefined || lat === undefined || lon === undefined) return null;
   const span = { older_ma: Math.max(subject.model.oldest_ma, step_ma), younger_ma: 0, step_ma };
   const points = driftPath(subject.model, { block, lat, lon, ...span, relative_to: subject.frame.code });
   const name = subject.blocks.find((one) => one.code === block)?.name ?? block;
-  return { name: `${name} at ${coordinates(lat, lon)}`, points };
+  const age = { older_ma: query.age_ma, younger_ma: query.age_ma, step_ma };
+  const [here = null] = driftPath(subject.model, {
+    block,
+    lat,
+    lon,
+    ...age,
+    relative_to: subject.frame.code,
+  });
+  return { name: `${name} at ${coordinates(lat, lon)}`, points, here };
 }

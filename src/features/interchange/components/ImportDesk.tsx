@@ -45,7 +45,13 @@ export default function ImportDesk({ slug, blocks }: Props) {
     setBusy(dryRun ? 'reading' : 'writing');
     setRefused(null);
     try {
-      const read = await sendImport({ slug, ...next, dryRun, skipRejected });
+      const read = await sendImport({
+        slug,
+        ...next,
+        dryRun,
+        skipRejected,
+        previewed: dryRun ? null : (report?.revision ?? null),
+      });
       if (mine !== latest.current) return;
       setReport(read);
       heading.current?.focus();

@@ -13,6 +13,8 @@ export interface ColumnMatch {
 }
 
 const UNIT = /[\s_([]+(ka|ma|rad|radians|deg|degrees|°)[\])]?$/i;
+/** Units that no column of the formats is in. */
+const FOREIGN = /^(ka|rad)/i;
 const bare = (heading: string): string =>
   heading
     .toLowerCase()
@@ -25,6 +27,8 @@ export function matchColumns(
   columns: readonly string[],
   required: readonly string[],
   mapping: ColumnMapping = {},
+  /** Columns whose unit is asked about; in any other a unit that is not the format's own leaves the heading unread. */
+  asked: ReadonlySet<string> = new Set(),
 ): ColumnMatch {
   const heading = new Map<string, string>();
   const units = new Map<string, string>();
@@ -34,8 +38,9 @@ export function matchColumns(
       columns.find((c) => c === bare(name)) ??
       columns.find((c) => stem(c) === stem(name) && !heading.has(c));
     if (!target || !columns.includes(target) || heading.has(target)) continue;
-    heading.set(target, name);
     const unit = UNIT.exec(name)?.[1];
+    if (unit && FOREIGN.test(unit) && !asked.has(target) && mapping[name] === undefined) continue;
+    heading.set(target, name);
     if (unit) units.set(target, unit.toLowerCase());
   }
   const claimed = new Set(heading.values());

@@ -15,6 +15,7 @@ export const ROTATION_COLUMNS = [
   'cov_xx', 'cov_xy', 'cov_xz', 'cov_yy', 'cov_yz', 'cov_zz', 'cov_dof', 'source', 'note',
 ] as const; // prettier-ignore
 const REQUIRED = ROTATION_COLUMNS.slice(0, 6);
+const UNITS_ASKED = new Set(['age_ma', 'angle_deg', 'pole_lat', 'pole_lon']);
 const PUBLISHED_FORM = ['kappa', 'a', 'b', 'c', 'd', 'e', 'f', 'g'] as const;
 const READ_COLUMNS = [...ROTATION_COLUMNS, ...PUBLISHED_FORM, 'cap95_deg'];
 
@@ -47,7 +48,7 @@ export function readRotations(
   mapping: ColumnMapping = {},
 ): FileReading<RotationFields> {
   const table = readTable(text);
-  const match = matchColumns(table, READ_COLUMNS, REQUIRED, mapping);
+  const match = matchColumns(table, READ_COLUMNS, REQUIRED, mapping, UNITS_ASKED);
   const asking = new Asking(answers);
   const notes: string[] = [];
   const described = { headings: table.headings, columns: READ_COLUMNS, required: REQUIRED };

@@ -52,6 +52,12 @@ export function readTable(text: string): Table {
   }
   const [first, ...rest] = parsed;
   const headings = (first?.record ?? []).map((h) => h.trim());
+  const twice = headings.find((h, i) => h !== '' && headings.indexOf(h) !== i);
+  if (twice !== undefined) {
+    const problem = 'two columns have this heading';
+    const hint = 'Give each column a heading of its own, or take one of them out.';
+    return { delimiter, headings, rows: [], broken: [{ line: 1, read: twice, problem, hint }] };
+  }
   const rows: TableRow[] = [];
   const broken: Table['broken'][number][] = [];
   for (const { record, info } of rest) {

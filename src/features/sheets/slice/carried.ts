@@ -1,8 +1,8 @@
 /** Everything of a subject that has a place at an age, carried there: the same for maps and for GeoJSON. */
 import type { MultiLineString, MultiPolygon, Polygon } from 'geojson';
 import { poseAt, rotate } from '../../../kernel/rotations';
-import type { Evidence, Pose, Status, Vector3 } from '../../../kernel/rotations/types';
-import { areaKm2, boundingCap, toLatLon } from '../../../kernel/sphere';
+import type { Evidence, Pose, Status } from '../../../kernel/rotations/types';
+import { areaKm2, boundingCap, centroid, toLatLon } from '../../../kernel/sphere';
 import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
 import { holdsAt, type SliceSubject } from './subject';
 
@@ -41,13 +41,21 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
       continue;
     }
     if (outlines.length === 0) continue;
-    const polygons = outlines.flatMap((o) =>
-      polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside),
+    const sided = outlines.flatMap((o) =>
+      polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside).map((polygon) => ({
+        polygon,
+        inside: o.inside,
+      })),
     );
-    const sizes = polygons.map((polygon) => areaKm2(polygon));
-    const largest = polygons[sizes.indexOf(Math.max(...sizes))]!;
+    const polygons = sided.map(({ polygon }) => polygon);
+    const sizes = sided.map(({ polygon, inside }) => areaKm2(polygon, inside));
+    const largest = sided[sizes.indexOf(Math.max(...sizes))]!;
     const area = carryPolygons(polygons, pose.quaternion);
-    const label = toLatLon(boundingCap(carriedVectors(largest[0]!, pose)).centre);
+    const middle =
+      largest.inside === 'larger'
+        ? centroid(largest.polygon, 'larger')
+        : boundingCap(largest.polygon[0]!).centre;
+    const label = toLatLon(rotate(pose.quaternion, middle));
     blocks.push({
       code: block.code,
       name: block.name,
@@ -67,10 +75,6 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
     if (line.source) sources.add(line.source);
   }
   return { blocks, coasts, missing, sources: [...sources].sort((a, b) => a.localeCompare(b, 'en')) };
-}
-
-function carriedVectors(ring: readonly Vector3[], pose: Extract<Pose, { status: 'placed' }>): Vector3[] {
-  return ring.map((v) => rotate(pose.quaternion, v));
 }
 
 function cite(

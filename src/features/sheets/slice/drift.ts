@@ -11,6 +11,8 @@ import { visible } from './visible';
 /** A path to draw, with the age of the slice and the spacing of its age labels. */
 export interface DrawnPath {
   readonly points: readonly DriftPoint[];
+  /** The point at the age of the slice itself; null where it has no place then. */
+  readonly here: DriftPoint | null;
   readonly age_ma: number;
   readonly label_step_ma: number;
 }
@@ -22,10 +24,7 @@ export function pathSvg(path: DrawnPath, projection: GeoProjection, ellipses: bo
   const points = path.points.filter(isPlaced);
   const draw = geoPath(projection).digits(2);
   const line = { type: 'LineString' as const, coordinates: points.map((p) => [p.lon, p.lat]) };
-  const at = points.reduce<Placed | null>(
-    (best, p) => (best && Math.abs(best.age_ma - path.age_ma) <= Math.abs(p.age_ma - path.age_ma) ? best : p),
-    null,
-  );
+  const at = path.here && isPlaced(path.here) ? path.here : null;
   return [
     element('path', {
       class: 'drift-path',

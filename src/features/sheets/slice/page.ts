@@ -40,7 +40,11 @@ export interface PageRequest {
   readonly subject: SliceSubject;
   readonly carried: Carried;
   readonly query: SliceQuery;
-  readonly path: { readonly name: string; readonly points: readonly DriftPoint[] } | null;
+  readonly path: {
+    readonly name: string;
+    readonly points: readonly DriftPoint[];
+    readonly here: DriftPoint | null;
+  } | null;
 }
 
 export interface Page {
@@ -78,6 +82,7 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
   const projection = fitProjection(query.projection, centre, box, query.reach_deg ?? null);
   const drawnPath = path && {
     points: path.points,
+    here: path.here,
     age_ma: query.age_ma,
     label_step_ma: 2 * query.path_step_ma,
   };

@@ -180,7 +180,11 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
   );
 
   const run = useCallback(
-    (edits: readonly Edit[], label?: string): Promise<boolean> => {
+    (given: readonly Edit[], label?: string): Promise<boolean> => {
+      // Rows are named here, so that an edit whose answer was lost is not made twice.
+      const edits = given.map((edit) =>
+        edit.op === 'create' && edit.id === undefined ? { ...edit, id: crypto.randomUUID() } : edit,
+      );
       const key = crypto.randomUUID();
       const attempt = (): Promise<boolean> =>
         send({

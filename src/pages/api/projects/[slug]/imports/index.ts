@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { answers, columnMapping, importReport } from '~/features/interchange/contract';
+import { expectedRevision } from '~/features/ledger/answers';
 import { IMPORT_KINDS, IMPORT_LIMIT_BYTES } from '~/features/interchange/files';
 import { importInto } from '~/features/interchange/server';
 import { fieldErrors, Problem } from '~/server/problem';
@@ -44,7 +45,7 @@ export const POST = projectRoute(
       throw new Problem('InvalidRows', { errors: fieldErrors(parsed.error, upload.fields) });
     if (!upload.file) throw new Problem('InvalidRows', { detail: 'The part `file` is missing.' });
     const { kind, dry_run, skip_rejected, answers, mapping } = parsed.data;
-    const revision = /^"(\d+)"$/.exec(request.headers.get('if-match') ?? '')?.[1];
+    const expected = request.headers.has('if-match') ? expectedRevision(request) : '*';
     return importInto(access, {
       file: upload.file,
       kind,
@@ -52,7 +53,7 @@ export const POST = projectRoute(
       mapping,
       dryRun: dry_run,
       skipRejected: skip_rejected,
-      expected: revision === undefined ? '*' : Number(revision),
+      expected,
     });
   },
 );
