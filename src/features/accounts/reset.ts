@@ -47,18 +47,29 @@ async function writeResetMail(email: string): Promise<void> {
   });
 }
 
+const unusedBy = (token: string) =>
+  and(
+    eq(passwordReset.hash, sha256(token)),
+    isNull(passwordReset.used_at),
+    gt(passwordReset.expires_at, new Date()),
+  );
+
+/** Whether a link may still set a password, so that nobody types one in vain. */
+export async function isUsable(token: string): Promise<boolean> {
+  const found = await database()
+    .select({ at: passwordReset.expires_at })
+    .from(passwordReset)
+    .where(unusedBy(token));
+  return found.length > 0;
+}
+
 /** Single use; ends every session and every token of the account, whoever holds them. @throws Problem `ResetLinkSpent` */
 export async function resetPassword(context: APIContext, token: string, password: string): Promise<void> {
   await countTry('reset by address', context.clientAddress);
   const password_hash = await hashPassword(password);
   const now = new Date();
-  const unused = and(
-    eq(passwordReset.hash, sha256(token)),
-    isNull(passwordReset.used_at),
-    gt(passwordReset.expires_at, now),
-  );
   await database().transaction(async (tx) => {
-    const [spent] = await tx.update(passwordReset).set({ used_at: now }).where(unused).returning();
+    const [spent] = await tx.update(passwordReset).set({ used_at: now }).where(unusedBy(token)).returning();
     if (!spent) throw new Problem('ResetLinkSpent', { detail: 'Ask for a new link.' });
     const { user_id } = spent;
     await tx

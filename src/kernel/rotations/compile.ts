@@ -42,7 +42,11 @@ export function compileModel(blocks: readonly BlockInput[], rotations: readonly 
   const rowsOf = new Map<string, RotationInput[]>();
   for (const row of rotations) {
     if (!byCode.has(row.block)) problems.push({ name: 'UnknownBlock', block: row.block, rotation: row.id });
-    else if (isValid(row, problems)) rowsOf.set(row.block, [...(rowsOf.get(row.block) ?? []), row]);
+    else if (isValid(row, problems)) {
+      const rows = rowsOf.get(row.block);
+      if (rows) rows.push(row);
+      else rowsOf.set(row.block, [row]);
+    }
   }
 
   const compiled = [...byCode.values()].map((block) =>

@@ -52,6 +52,14 @@ describe('blocks.geojson', () => {
     );
   });
 
+  it.each([
+    ['there and back again', [[0, 0], [10, 0], [20, 0], [10, 0], [0, 0]], 'the ring encloses nothing'],
+    ['a box of the plane round the pole', [[-180, 60], [180, 60], [180, 90], [-180, 90], [-180, 60]], 'the ring encloses nothing'],
+    ['an edge half round the globe', [[0, 0], [180, 0], [90, 40], [0, 0]], 'an edge joins opposite points of the globe'],
+  ])('rejects %s', (_, ring, problem) => {
+    expect(readBlocks(file(block('x', ring))).rejected[0]).toMatchObject({ column: 'geometry', problem });
+  }); // prettier-ignore
+
   it('asks about a clockwise ring, which by its direction covers most of the globe', () => {
     const text = file(block('sable', square(20, -35, 50, -20).reverse()));
     const open = readBlocks(text);

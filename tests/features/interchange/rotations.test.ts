@@ -295,3 +295,37 @@ describe('one age that is too old among good ones', () => {
     ]);
   });
 });
+
+describe('a loop that the rows of a file reach across', () => {
+  it('is refused, though no row of the file lies at its ages', () => {
+    const own = (block: string, relative_to: string, age_ma: number) => ({
+      ...{
+        id: `${block}${age_ma}`,
+        block,
+        relative_to,
+        age_ma,
+        pole_lat: 1,
+        pole_lon: 2,
+        angle_deg: age_ma / 9,
+      },
+      ...{ chron: null, age_two_sigma_ma: null, evidence: 'posed' as const, covariance: null, cov_dof: null },
+      ...{ source: null, note: null },
+    });
+    const draft = {
+      blocks: ['alder', 'birch'].map((code) => ({
+        code,
+        kind: 'other' as const,
+        appears_ma: null,
+        disappears_ma: null,
+      })),
+      rotations: [own('alder', 'birch', 20), own('alder', 'birch', 50)],
+    };
+    const { candidates, asking } = readRotations(file('birch,alder,10,1,2,3', 'birch,alder,90,1,2,9'));
+    const { rejected, create } = resolveRotations(candidates, draft, asking);
+    expect(create).toEqual([]);
+    expect(rejected.map((row) => [row.line, row.column])).toEqual([
+      [2, 'relative_to'],
+      [3, 'relative_to'],
+    ]);
+  });
+});

@@ -153,15 +153,15 @@ function withoutLoops(
   ];
   const loops = compileModel(blocks, rows).problems.filter((p) => p.name === 'Cycle');
   if (loops.length === 0) return candidates;
-  return candidates.filter(({ line, fields }) => {
-    const loop = loops.find(
-      (l) =>
-        l.loop.some(
-          (code, i) => code === fields.block && l.loop[(i + 1) % l.loop.length] === fields.relative_to,
-        ) &&
-        fields.age_ma >= l.younger_ma &&
-        fields.age_ma <= l.older_ma,
-    );
+  const links = ({ fields }: Candidate<RotationFields>, { loop }: (typeof loops)[number]): boolean =>
+    loop.some((code, i) => code === fields.block && loop[(i + 1) % loop.length] === fields.relative_to);
+  const within = ({ fields }: Candidate<RotationFields>, l: (typeof loops)[number]): boolean =>
+    fields.age_ma >= l.younger_ma && fields.age_ma <= l.older_ma;
+  // Rows may also reach across the loop's ages from both sides without one inside.
+  const across = new Set(loops.filter((l) => !candidates.some((c) => links(c, l) && within(c, l))));
+  const rest = candidates.filter((candidate) => {
+    const { line, fields } = candidate;
+    const loop = loops.find((l) => links(candidate, l) && (across.has(l) || within(candidate, l)));
     if (!loop) return true;
     rejected.push({
       line,
@@ -172,6 +172,8 @@ function withoutLoops(
     });
     return false;
   });
+  // The rows left may close the loop anew between them.
+  return rest.length < candidates.length ? withoutLoops(rest, draft, addBlocks, addFrames, rejected) : rest;
 }
 
 function against(

@@ -2,7 +2,8 @@
  * Checks rings of [longitude, latitude] before they become outlines: enough points, closed, in range, not crossing
  * themselves. Edges are great circles. Longitudes may run past 180° or jump there; vectors do not see it.
  */
-import { toVector } from '../../../kernel/sphere';
+import type { Position } from 'geojson';
+import { readRing, ringArea, toVector } from '../../../kernel/sphere';
 import type { Vector3 } from '../../../kernel/rotations/types';
 
 export type Ring = readonly (readonly number[])[];
@@ -56,12 +57,35 @@ export function ringFault(ring: unknown): RingFault | null {
     };
   }
   const crossing = selfCrossing(positions);
-  if (!crossing) return null;
+  if (!crossing) return degenerateFault(positions);
   const [i, j] = crossing;
   return {
     read: point(positions[i]!),
     problem: `the ring crosses itself: edge ${i + 1} meets edge ${j + 1} near ${point(positions[j]!)}`,
     hint: 'Move or remove a vertex there, or split the outline into parts.',
+  };
+}
+
+/** sr; some 40 m² on the Earth. */
+const NOTHING_SR = 1e-12;
+/** Cosine of nearly half a turn. */
+const OPPOSITE = -1 + 1e-12;
+
+/** Rings of great circles that enclose nothing, or whose edges could run anywhere. */
+function degenerateFault(positions: Ring): RingFault | null {
+  const vectors = positions.map((p) => toVector(p[1]!, p[0]!));
+  const opposite = vectors.findIndex((v, i) => i > 0 && dot(v, vectors[i - 1]!) < OPPOSITE);
+  if (opposite > 0)
+    return {
+      read: `${point(positions[opposite - 1]!)} to ${point(positions[opposite]!)}`,
+      problem: 'an edge joins opposite points of the globe',
+      hint: 'Add a vertex between them, to say which way it goes.',
+    };
+  if (Math.abs(ringArea(readRing(positions as Position[]))) > NOTHING_SR) return null;
+  return {
+    read: `${positions.length} positions`,
+    problem: 'the ring encloses nothing',
+    hint: 'Edges are great circles: round a pole, give a vertex every 90° of longitude or less.',
   };
 }
 

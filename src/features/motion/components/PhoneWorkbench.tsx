@@ -109,7 +109,17 @@ export function PhoneWorkbench({ head, notice }: { readonly head: Head; readonly
         )}
         <BlockList id="block-list" />
         <LogPanel />
-        <Answer open={why} toggle={() => setWhy(!why)} />
+        <Answer
+          open={why}
+          toggle={() => {
+            setWhy(!why);
+            // Below the fold otherwise: the button would seem to do nothing.
+            if (!why)
+              requestAnimationFrame(() =>
+                document.getElementById('notebook')?.scrollIntoView({ block: 'start' }),
+              );
+          }}
+        />
         {why && <Notebook />}
       </main>
     </div>
