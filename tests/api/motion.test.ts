@@ -3,6 +3,8 @@
  * (Chang 1988 for the conventions); the sphere has R = 6371.0088 km (IUGG mean), so 1° is 111.195 km.
  */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { frameAt, matrixOf } from '~/features/motion/scene/frame';
+import { turn } from '~/features/motion/globe/matrix';
 import { createTestApp, type Answer, type TestApp } from '../support/app';
 import { addRotations, createTeam, type Team } from '../support/team';
 
@@ -154,10 +156,21 @@ describe('motion', () => {
     const q = (rows.blocks ?? rows.items).find(
       (row: { block?: string; code?: string }) => (row.block ?? row.code) === 'b',
     ).quaternion;
-    hand.forEach((component, i) => near(Math.abs(q[i]), Math.abs(component), 1e-11));
+    // q and −q are one rotation; the order of the two links is in the sign of the third component.
+    const sign = Math.sign(q[0]);
+    hand.forEach((component, i) => near(sign * q[i], component, 1e-11));
     const motions = (await get('motions')).json;
     expect(
       motions.blocks.find((block: { code: string }) => block.code === 'b').legs[0].stages[0],
     ).toMatchObject({ younger_ma: 0, older_ma: 10 });
+
+    // What the globe draws from: one matrix a block at the age, here Rz(20°) Rx(20°) written out.
+    const frame = frameAt(motions, 5, 'axis');
+    const pose = matrixOf(frame, 'b')!;
+    const [C, S] = [Math.cos(Math.PI / 9), Math.sin(Math.PI / 9)];
+    const columns = [[C, S, 0], [-S * C, C * C, S], [S * S, -C * S, C]]; // prettier-ignore
+    ([[1, 0, 0], [0, 1, 0], [0, 0, 1]] as const).forEach((axis, i) =>
+      turn(pose, [...axis]).forEach((x, k) => near(x, columns[i]![k]!, (1e-9 * Math.PI) / 180)),
+    ); // prettier-ignore
   });
 });

@@ -2,7 +2,6 @@
  * Checks rings of [longitude, latitude] before they become outlines: enough points, closed, in range, not crossing
  * themselves. Edges are great circles. Longitudes may run past 180° or jump there; vectors do not see it.
  */
-import type { Position } from 'geojson';
 import { readRing, ringArea, toVector } from '../../../kernel/sphere';
 import type { Vector3 } from '../../../kernel/rotations/types';
 
@@ -81,7 +80,7 @@ function degenerateFault(positions: Ring): RingFault | null {
       problem: 'an edge joins opposite points of the globe',
       hint: 'Add a vertex between them, to say which way it goes.',
     };
-  if (Math.abs(ringArea(readRing(positions as Position[]))) > NOTHING_SR) return null;
+  if (Math.abs(ringArea(readRing(positions))) > NOTHING_SR) return null;
   return {
     read: `${positions.length} positions`,
     problem: 'the ring encloses nothing',

@@ -136,6 +136,15 @@ function subtitle(subject: SliceSubject, age_ma: number): string {
   ].join('  ·  ');
 }
 
+/** Named here at most: a sheet is a map first. */
+const MOST_MISSING = 12;
+
+function missingNames({ missing }: Carried): string[] {
+  const named = missing.slice(0, MOST_MISSING).map((m) => `${m.name} (${m.status})`);
+  const more = missing.length - named.length;
+  return more > 0 ? [...named, `${more} more`] : named;
+}
+
 function captionLines(
   subject: SliceSubject,
   carried: Carried,
@@ -155,9 +164,7 @@ function captionLines(
     query.layers.includes('coasts') && carried.coasts.length > 0
       ? 'Dashed: present coast, for location only.'
       : '',
-    carried.missing.length > 0
-      ? `Without a place at this age: ${list(carried.missing.map((m) => `${m.name} (${m.status})`))}.`
-      : '',
+    carried.missing.length > 0 ? `Without a place at this age: ${list(missingNames(carried))}.` : '',
   ];
   const text = sentences.filter((s) => s !== '').join(' ');
   return [
