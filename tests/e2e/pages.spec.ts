@@ -58,3 +58,26 @@ test('at 360 px nothing is wider than the window', async ({ page }) => {
     expect(await page.evaluate(() => document.documentElement.scrollWidth), path).toBeLessThanOrEqual(360);
   }
 });
+
+for (const [path, island] of [
+  ['/', 'LandingLog'],
+  ['/', 'LandingGlobe'],
+  [DEMO, 'OverviewGlobe'],
+  [DEMO, 'EvidenceByBlock'],
+] as const) {
+  test(`${path}: ${island} may arrive after the outlines and takes over the markup as it stands`, async ({
+    page,
+  }) => {
+    let outlines = 0;
+    page.on('response', (answer) => (outlines += answer.url().includes('/geometry') ? 1 : 0));
+    const early = page.waitForResponse(/\/geometry/);
+    await page.route(new RegExp(`/_astro/${island}\\.`), async (route) => {
+      await early;
+      await new Promise((later) => setTimeout(later, 1_500));
+      await route.continue();
+    });
+    await page.goto(path);
+    await expect(page.locator(`astro-island[component-url*="${island}"]`)).not.toHaveAttribute('ssr');
+    expect(outlines).toBeGreaterThan(0);
+  });
+}

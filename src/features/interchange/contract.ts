@@ -36,7 +36,7 @@ export type Offer = z.infer<typeof offer>;
 /** One row that would be written, as the preview shows it. */
 export const previewRow = z.object({
   line: z.number().int().nullable(),
-  change: z.enum(['new', 'replaces', 'unchanged', 'kept']),
+  change: z.enum(['new', 'replaces', 'unchanged', 'kept', 'removed']),
   cells: z.record(z.string(), z.union([z.string(), z.number(), z.null()])),
 });
 export type PreviewRow = z.infer<typeof previewRow>;

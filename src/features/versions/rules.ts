@@ -33,6 +33,13 @@ function blocker(problem: ModelProblem): FieldError | null {
         read: problem.block,
         problem: `${problem.name}: the rows contradict each other`,
       };
+    case 'ParallelSequences':
+      return {
+        path: 'rotations',
+        read: problem.references.join(', '),
+        problem: `${problem.block} has rows in these references side by side at ${span(problem)}`,
+        hint: 'Keep one reference between two hand-overs.',
+      };
     case 'InvalidRow':
       return {
         path: 'rotations',

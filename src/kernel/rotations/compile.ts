@@ -2,6 +2,7 @@ import { toDegrees } from '../sphere/angles';
 import { findCycles } from './cycles';
 import { stageBetween } from './interpolate';
 import { rowsToLegs } from './legs';
+import { findParallel } from './parallel';
 import { fromPole } from './pole';
 import { angleOf, IDENTITY } from './quaternion';
 import type {
@@ -86,6 +87,7 @@ function compileBlock(
   problems: ModelProblem[],
 ): CompiledBlock {
   const rows = withoutDuplicates(given, problems);
+  problems.push(...findParallel(block.code, rows));
   const runs = rowsToLegs(rows);
   const legs = runs.map(({ relative_to, rows: run }, i): Leg => {
     const first = run[0];
@@ -116,7 +118,9 @@ function withoutDuplicates(rows: readonly RotationInput[], problems: ModelProble
   const groups = new Map<string, RotationInput[]>();
   for (const row of rows) {
     const key = `${row.age_ma} ${row.relative_to}`;
-    groups.set(key, [...(groups.get(key) ?? []), row]);
+    const group = groups.get(key);
+    if (group) group.push(row);
+    else groups.set(key, [row]);
   }
   return [...groups.values()].flatMap((group) => {
     const [first] = group;

@@ -30,8 +30,13 @@ export function rowsToLegs<R extends Row>(rows: readonly R[]): Run<R>[] {
   return runs;
 }
 
-function groupByAge<R extends Row>(rows: readonly R[]): R[][] {
+/** Rows of one age together, youngest first. */
+export function groupByAge<R extends Row>(rows: readonly R[]): R[][] {
   const groups = new Map<number, R[]>();
-  for (const row of rows) groups.set(row.age_ma, [...(groups.get(row.age_ma) ?? []), row]);
+  for (const row of rows) {
+    const group = groups.get(row.age_ma);
+    if (group) group.push(row);
+    else groups.set(row.age_ma, [row]);
+  }
   return [...groups.entries()].sort(([a], [b]) => a - b).map(([, group]) => group);
 }

@@ -127,6 +127,13 @@ export type ModelProblem =
       readonly younger_ma: number;
     }
   | {
+      readonly name: 'ParallelSequences';
+      readonly block: string;
+      readonly references: readonly string[];
+      readonly older_ma: number;
+      readonly younger_ma: number;
+    }
+  | {
       readonly name: 'NearHalfTurnStage';
       readonly block: string;
       readonly relative_to: string;

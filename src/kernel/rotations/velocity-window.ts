@@ -2,16 +2,24 @@ import { scale } from '../sphere/vector';
 import { circuitBreakpoints } from './breakpoints';
 import { circuitAt } from './circuit';
 import { requireBlock } from './model-index';
-import { between, log } from './quaternion';
-import type { Model } from './types';
+import { angleOf, between, log } from './quaternion';
+import type { Model, Quaternion } from './types';
 import type { AngularVelocity } from './velocity';
 
 /** Step past the end of a leg, Myr, by which the older side of it is meant. */
 const JUST_OLDER_MYR = 1e-9;
+/** Two sides of a leg's end that differ by more than this, radians (0.6 m on the sphere), are a jump, not a motion. */
+const JUMP_RAD = 1e-7;
+
+/** How far a window reaches on one side, and the rotation there. */
+interface End {
+  readonly age_ma: number;
+  readonly quaternion: Quaternion;
+}
 
 /**
  * Ω = Log(R(t₁) R(t₂)⁻¹)/(t₂ − t₁) over a window cut to the ages at which block and circuit go on without a
- * break.
+ * break: the jump of a hand-over is no motion, and ends the window on its side.
  */
 export function windowedVelocity(
   model: Model,
@@ -26,35 +34,63 @@ export function windowedVelocity(
     older: Math.min(wanted.older, appears_ma ?? Infinity),
     younger: Math.max(wanted.younger, disappears_ma ?? 0, 0),
   };
-  const ages = circuitBreakpoints(model, block, relative_to);
-  const placed = (age: number): boolean => circuitAt(model, block, age, relative_to).status === 'placed';
+  const ends = circuitBreakpoints(model, block, relative_to);
+  const at = (age: number): Quaternion | null => circuitAt(model, block, age, relative_to).quaternion;
 
-  let older_ma = age_ma;
-  for (const end of [...ages.filter((age) => age > age_ma), Infinity]) {
-    const next = Math.min(end, bounds.older);
-    if (!placed(next)) break;
-    older_ma = next;
-    if (end >= bounds.older) break;
-  }
-  let younger_ma = age_ma;
-  for (const end of [...ages.filter((age) => age < age_ma).reverse(), -Infinity]) {
-    const next = Math.max(end, bounds.younger);
-    if (next >= younger_ma || !placed((next + younger_ma) / 2)) break;
-    const reached = placed(next);
-    younger_ma = reached ? next : next + JUST_OLDER_MYR;
-    if (!reached || end <= bounds.younger) break;
-  }
-
-  const older = circuitAt(model, block, older_ma, relative_to);
-  const younger = circuitAt(model, block, younger_ma, relative_to);
-  if (older.status !== 'placed' || younger.status !== 'placed' || !(older_ma > younger_ma))
-    return { status: 'outside rotations', at: block };
-  const omega = scale(log(between(older.quaternion, younger.quaternion)), 1 / (older_ma - younger_ma));
+  const here = at(age_ma);
+  if (!here) return { status: 'outside rotations', at: block };
+  const older = reachOlder({ age_ma, quaternion: here }, bounds.older, ends, at);
+  const younger = reachYounger({ age_ma, quaternion: here }, bounds.younger, ends, at);
+  if (!(older.age_ma > younger.age_ma)) return { status: 'outside rotations', at: block };
+  const length = older.age_ma - younger.age_ma;
   return {
     status: 'placed',
-    omega,
-    older_ma,
-    younger_ma,
-    clipped: older_ma < wanted.older || younger_ma > wanted.younger,
+    omega: scale(log(between(older.quaternion, younger.quaternion)), 1 / length),
+    older_ma: older.age_ma,
+    younger_ma: younger.age_ma,
+    clipped: older.age_ma < wanted.older || younger.age_ma > wanted.younger,
   };
+}
+
+const jumps = (a: Quaternion, b: Quaternion): boolean => angleOf(between(a, b)) > JUMP_RAD;
+
+function reachOlder(
+  from: End,
+  bound: number,
+  ends: readonly number[],
+  at: (age: number) => Quaternion | null,
+): End {
+  let reached = from;
+  for (const end of [...ends.filter((age) => age >= from.age_ma), Infinity]) {
+    const age_ma = Math.min(end, bound);
+    const quaternion = at(age_ma);
+    if (!quaternion) break;
+    reached = { age_ma, quaternion };
+    if (end >= bound) break;
+    const beyond = at(end + JUST_OLDER_MYR);
+    if (!beyond || jumps(quaternion, beyond)) break;
+  }
+  return reached;
+}
+
+function reachYounger(
+  from: End,
+  bound: number,
+  ends: readonly number[],
+  at: (age: number) => Quaternion | null,
+): End {
+  let reached = from;
+  for (const end of [...ends.filter((age) => age < from.age_ma).reverse(), -Infinity]) {
+    const age_ma = Math.max(end, bound);
+    if (age_ma >= reached.age_ma || !at((age_ma + reached.age_ma) / 2)) break;
+    const quaternion = at(age_ma);
+    const above = end >= bound ? at(end + JUST_OLDER_MYR) : quaternion;
+    if (!quaternion || (above && jumps(quaternion, above))) {
+      if (above) reached = { age_ma: age_ma + JUST_OLDER_MYR, quaternion: above };
+      break;
+    }
+    reached = { age_ma, quaternion };
+    if (end <= bound) break;
+  }
+  return reached;
 }

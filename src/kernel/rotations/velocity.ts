@@ -1,4 +1,4 @@
-import { requireFinite } from '../errors';
+import { KernelError, requireFinite } from '../errors';
 import { EARTH_RADIUS_KM } from '../sphere/angles';
 import { azimuthOf } from '../sphere/azimuth';
 import { eastNorth } from '../sphere/tangent';
@@ -29,8 +29,8 @@ export type AngularVelocity =
 /**
  * Angular velocity of a block as seen from relative_to: Ω(B|F) = Ω(A|F) + R(A|F) Ω(B|A), each link's own
  * stage (at a row's age the younger one, at 0 the first). With `window_myr` above 0: from the stage rotation
- * over the window centred on the age, cut to the sequence and divided by the length left.
- * @throws {KernelError} as {@link poseAt}.
+ * over the window centred on the age, cut to the sequence and to hand-over jumps, and divided by the length left.
+ * @throws {KernelError} as {@link poseAt}; `OutOfRange` for a window below 0.
  */
 export function angularVelocity(
   model: Model,
@@ -39,7 +39,13 @@ export function angularVelocity(
   relative_to: string,
   { window_myr = 0 }: { window_myr?: number } = {},
 ): AngularVelocity {
-  requireFinite('window_myr', window_myr);
+  if (requireFinite('window_myr', window_myr) < 0) {
+    throw new KernelError('OutOfRange', {
+      quantity: 'window_myr',
+      value: window_myr,
+      problem: 'a window is never shorter than 0 Myr',
+    });
+  }
   const pose = poseAt(model, block, age_ma, relative_to);
   if (pose.status !== 'placed') return { status: pose.status, at: pose.at };
   return window_myr > 0

@@ -329,3 +329,54 @@ describe('a loop that the rows of a file reach across', () => {
     ]);
   });
 });
+
+describe('two sequences of one block for the same ages', () => {
+  const whole = { appears_ma: null, disappears_ma: null };
+  const blocks = [
+    { code: 'sable', kind: 'terrane' as const, ...whole },
+    { code: 'tarn', kind: 'frame' as const, ...whole },
+    { code: 'mere', kind: 'frame' as const, ...whole },
+  ];
+  const lines = [10, 20, 30].flatMap((age) => [`sable,tarn,${age},12,20,5`, `sable,mere,${age},14,20,5`]);
+  const read = (answers: Record<string, string>, given = lines, rotations: never[] = []) => {
+    const { candidates, asking } = readRotations(file(...given), answers);
+    return { asking, ...resolveRotations(candidates, { blocks, rotations }, asking) };
+  };
+
+  it('are asked about, and those not chosen are refused by line', () => {
+    expect(read({}).asking.questions()).toMatchObject([
+      { id: 'parallel:sable:10-30', choices: ['mere', 'tarn'] },
+    ]);
+    const chosen = read({ 'parallel:sable:10-30': 'tarn' });
+    expect(chosen.create.map(({ fields }) => fields.relative_to)).toEqual(['tarn', 'tarn', 'tarn']);
+    expect(chosen.rejected.map(({ line, column, read }) => [line, column, read])).toEqual([
+      [3, 'relative_to', 'mere'],
+      [5, 'relative_to', 'mere'],
+      [7, 'relative_to', 'mere'],
+    ]);
+  });
+
+  it('keep the row of a hand-over where the other goes on', () => {
+    const on = [...lines, 'sable,mere,50,14,20,9'];
+    const chosen = read({ 'parallel:sable:10-30': 'tarn' }, on);
+    expect(chosen.create.map(({ fields }) => `${fields.relative_to} ${fields.age_ma}`)).toEqual([
+      'tarn 10',
+      'tarn 20',
+      'tarn 30',
+      'mere 30',
+      'mere 50',
+    ]);
+  });
+
+  it('take the draft’s out where the file’s are chosen', () => {
+    const { candidates } = readRotations(file(...lines));
+    const draft = candidates
+      .filter(({ fields }) => fields.relative_to === 'mere')
+      .map(({ fields }, i) => ({ ...fields, id: `draft-${i}`, author: null }));
+    const files = lines.filter((line) => line.includes('tarn'));
+    const chosen = read({ 'parallel:sable:10-30': 'tarn' }, files, draft as never[]);
+    expect(chosen.remove.map(({ id }) => id)).toEqual(['draft-0', 'draft-1', 'draft-2']);
+    expect(chosen.create).toHaveLength(3);
+    expect(chosen.rejected).toEqual([]);
+  });
+});

@@ -203,3 +203,43 @@ describe('what compiling finds wrong', () => {
     expect(compileModel([], [])).toEqual({ blocks: [], problems: [], oldest_ma: 0 });
   });
 });
+
+describe('sequences side by side', () => {
+  const both = (ages: number[]) =>
+    ages.flatMap((age) => [
+      row(['corrie', 'avon', age, 20, 30, age]),
+      row(['corrie', 'brant', age, 25, 28, age]),
+    ]);
+  const parallel = (rotations: RotationInput[]) =>
+    problemsOf(rotations).filter(({ name }) => name === 'ParallelSequences');
+  const rest = [row(['avon', 'spin', 100, 50, 60, 30]), row(['brant', 'spin', 100, 48, 66, 28])];
+
+  it('are a problem, with their references and ages', () => {
+    expect(parallel([...rest, ...both([10, 20, 30])])).toEqual([
+      {
+        name: 'ParallelSequences',
+        block: 'corrie',
+        references: ['avon', 'brant'],
+        older_ma: 30,
+        younger_ma: 10,
+      },
+    ]);
+    expect(parallel([...rest, ...both([0, 20]), row(['corrie', 'avon', 60, 20, 30, 40])])).toHaveLength(1);
+    expect(parallel([...rest, ...both([10, 20])])).toHaveLength(1);
+    expect(
+      parallel([
+        ...rest,
+        row(['corrie', 'avon', 5, 20, 30, 4]),
+        ...both([10, 20, 30]),
+        row(['corrie', 'avon', 60, 20, 30, 40]),
+      ]),
+    ).toMatchObject([{ older_ma: 30, younger_ma: 10 }]);
+  });
+
+  it('are none where one leg stands between two hand-overs, or at one hand-over', () => {
+    const younger = row(['corrie', 'avon', 5, 20, 30, 4]);
+    const older = row(['corrie', 'avon', 60, 20, 30, 40]);
+    expect(parallel([...rest, younger, ...both([10, 20]), older])).toEqual([]);
+    expect(parallel([...rest, younger, ...both([10]), row(['corrie', 'brant', 60, 20, 30, 40])])).toEqual([]);
+  });
+});

@@ -130,6 +130,45 @@ describe('velocities', () => {
     expect(velocityAt(toVector(31, 62), scale(toVector(31, 62), 0.1)).azimuth_deg).toBeNull();
   });
 
+  it('over a window end at the jump of a hand-over, which is no motion', () => {
+    const rates = compileModel(
+      [block('avon'), block('brant'), spin],
+      [
+        row(['avon', 'spin', 30, 90, 0, 30]),
+        row(['avon', 'brant', 30, 90, 0, 30.5]),
+        row(['avon', 'brant', 60, 90, 0, 90.5]),
+        row(['brant', 'spin', 60, 90, 0, 0]),
+      ],
+    );
+    const at = (age: number, window_myr: number) =>
+      placed(angularVelocity(rates, 'avon', age, 'spin', { window_myr }));
+    const rate = ({ omega }: { omega: Vector3 }) => toDegrees(norm(omega));
+    for (const window of [0.1, 2, 20]) {
+      expect(rate(at(30, window))).toBeCloseTo(1, 9);
+      expect(rate(at(29.99, window))).toBeCloseTo(1, 9);
+      expect(rate(at(30.01, window))).toBeCloseTo(2, 6);
+    }
+    expect(at(30, 2)).toMatchObject({ older_ma: 30, younger_ma: 29, clipped: true });
+    expect(at(31, 4).younger_ma).toBeCloseTo(30, 8);
+    expect(at(40, 2)).toMatchObject({ older_ma: 41, younger_ma: 39, clipped: false });
+    expect(() => angularVelocity(rates, 'avon', 30, 'spin', { window_myr: -5 })).toThrow(/window_myr -5/);
+  });
+
+  it('over a window go on through a hand-over without a jump', () => {
+    const model = compileModel(
+      [block('avon'), block('brant'), spin],
+      [
+        row(['avon', 'spin', 30, 90, 0, 30]),
+        row(['avon', 'brant', 30, 90, 0, 30]),
+        row(['avon', 'brant', 60, 90, 0, 90]),
+        row(['brant', 'spin', 60, 90, 0, 0]),
+      ],
+    );
+    const across = placed(angularVelocity(model, 'avon', 30, 'spin', { window_myr: 4 }));
+    expect(across).toMatchObject({ older_ma: 32, younger_ma: 28, clipped: false });
+    expect(toDegrees(norm(across.omega))).toBeCloseTo(1.5, 12);
+  });
+
   it('through a circuit agree with the paths of points', () => {
     const code = fc.constantFrom('b1', 'b3', 'b5', 'b6', 'mantle');
     fc.assert(

@@ -5,7 +5,13 @@ interface Props {
   readonly accepted: number;
 }
 
-const CHANGES = { new: 'new', replaces: 'replaces', unchanged: 'as it is', kept: 'draft stays' } as const;
+const CHANGES = {
+  new: 'new',
+  replaces: 'replaces',
+  unchanged: 'as it is',
+  kept: 'draft stays',
+  removed: 'goes from the draft',
+} as const;
 
 /** The first rows as they would stand in the ledger. */
 export function PreviewTable({ rows, accepted }: Props) {
@@ -40,7 +46,11 @@ export function PreviewTable({ rows, accepted }: Props) {
             {rows.map((row, i) => (
               <tr key={i}>
                 <td className="number text-ink-2">{row.line ?? ''}</td>
-                <td className={row.change === 'replaces' ? 'text-ochre-ink' : 'text-ink-2'}>
+                <td
+                  className={
+                    row.change === 'replaces' || row.change === 'removed' ? 'text-ochre-ink' : 'text-ink-2'
+                  }
+                >
                   {CHANGES[row.change]}
                 </td>
                 {columns.map((column) => (

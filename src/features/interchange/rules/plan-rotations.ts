@@ -1,7 +1,7 @@
 import type { RotationFields } from '../../ledger/contract';
 import { Planner, type ImportPlan } from './plan';
 import { resolveRotations, type DraftForRotations } from './resolve-rotations';
-import type { Candidate, FileReading } from './rotations';
+import type { FileReading } from './rotations';
 
 /** Rotations of a file against the draft's, with the frames and blocks that the user had added for them. */
 export function planRotations(reading: FileReading<RotationFields>, draft: DraftForRotations): ImportPlan {
@@ -18,6 +18,10 @@ export function planRotations(reading: FileReading<RotationFields>, draft: Draft
     planner.create('blocks', { code, name: nameOf(code), kind: 'frame', ...blank });
   for (const code of resolved.addBlocks)
     planner.create('blocks', { code, name: nameOf(code), kind: 'other', ...blank });
+  for (const { id, ...fields } of resolved.remove) {
+    planner.show(null, 'removed', cells(fields));
+    planner.remove('rotations', id);
+  }
   const replaced = new Map(resolved.replace.map((candidate) => [candidate.line, candidate.id]));
   const unchanged = new Set(resolved.unchanged.map((candidate) => candidate.line));
   const kept = new Set(resolved.kept.map((candidate) => candidate.line));
@@ -25,7 +29,7 @@ export function planRotations(reading: FileReading<RotationFields>, draft: Draft
   for (const { line, fields } of taken.sort((a, b) => (a.line ?? 0) - (b.line ?? 0))) {
     const id = replaced.get(line);
     const change = id ? 'replaces' : unchanged.has(line) ? 'unchanged' : kept.has(line) ? 'kept' : 'new';
-    planner.show(line, change, cells({ line, fields }));
+    planner.show(line, change, cells(fields));
     if (change === 'new') planner.create('rotations', { ...fields });
     if (id) planner.update('rotations', id, { ...fields });
   }
@@ -35,7 +39,7 @@ export function planRotations(reading: FileReading<RotationFields>, draft: Draft
 /** "spin-axis" reads "Spin axis". */
 const nameOf = (code: string): string => code.charAt(0).toUpperCase() + code.slice(1).replaceAll('-', ' ');
 
-function cells({ fields }: Candidate<RotationFields>): Record<string, string | number | null> {
+function cells(fields: RotationFields): Record<string, string | number | null> {
   const { block, relative_to, age_ma, pole_lat, pole_lon, angle_deg, chron, evidence, covariance, source } =
     fields;
   return {

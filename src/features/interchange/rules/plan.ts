@@ -34,7 +34,8 @@ export class Planner {
   }
 
   plan(rejected: readonly RejectedRow[]): ImportPlan {
-    return { edits: this.#edits, preview: this.#preview, accepted: this.#preview.length, rejected };
+    const accepted = this.#preview.filter(({ change }) => change !== 'removed').length;
+    return { edits: this.#edits, preview: this.#preview, accepted, rejected };
   }
 }
 

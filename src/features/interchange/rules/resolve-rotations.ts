@@ -4,6 +4,7 @@ import type { BlockInput } from '../../../kernel/rotations/types';
 import type { Rotation, RotationFields } from '../../ledger/contract';
 import type { RejectedRow } from '../contract';
 import type { Asking } from './ask';
+import { withoutParallel } from './parallel';
 import { rotationKey, type Candidate } from './rotations';
 
 export interface DraftForRotations {
@@ -17,6 +18,8 @@ export interface ResolvedRotations {
   readonly unchanged: readonly Candidate<RotationFields>[];
   readonly kept: readonly Candidate<RotationFields>[];
   readonly rejected: readonly RejectedRow[];
+  /** Rows of the draft that the answers say to take out. */
+  readonly remove: readonly Rotation[];
   /** Codes that the answers say to add: frames for missing references, blocks without outline otherwise. */
   readonly addFrames: readonly string[];
   readonly addBlocks: readonly string[];
@@ -55,9 +58,15 @@ export function resolveRotations(
     return true;
   });
 
-  const looped = withoutLoops(present, draft, [...addBlocks], [...addFrames], rejected);
+  const given = new Set(present.map(({ fields }) => rotationKey(fields)));
+  const standing = draft.rotations.filter((row) => !given.has(rotationKey(row)));
+  const single = withoutParallel(present, standing, asking, rejected);
+  const removed = new Set(single.remove);
+  const rest = { ...draft, rotations: draft.rotations.filter((row) => !removed.has(row)) };
+  const looped = withoutLoops(single.candidates, rest, [...addBlocks], [...addFrames], rejected);
   return {
-    ...against(looped, draft.rotations, asking),
+    ...against(looped, rest.rotations, asking),
+    remove: single.remove,
     rejected,
     addFrames: [...addFrames],
     addBlocks: [...addBlocks],

@@ -75,7 +75,7 @@ const CALM_MS = 100;
 /** The age for tables and lists: ten times a second at most while the line is dragged, exact when it rests. */
 export function useCalmAge(): number {
   const { store } = useBench();
-  const [age, setAge] = useState(() => store.getState().age);
+  const [age, setAge] = useState(() => store.getInitialState().age);
   useEffect(() => {
     let timer: number | undefined;
     const take = () => {

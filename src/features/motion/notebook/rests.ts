@@ -174,6 +174,11 @@ export function problemWords(problem: ModelProblem, nameOf: (code: string) => st
       };
     case 'LegGap':
       return { severity: 'check', words: `${nameOf(problem.block)} has no rotations ${span(problem)}.` };
+    case 'ParallelSequences':
+      return {
+        severity: 'blocker',
+        words: `${nameOf(problem.block)} has rows in ${list(problem.references.map(nameOf))} side by side ${span(problem)}: which of them holds is not said. Keep one reference between two hand-overs.`,
+      };
     case 'NearHalfTurnStage':
       return {
         severity: 'check',

@@ -6,6 +6,9 @@ import { assemble, useShapes, wantedBy } from '../../client';
 import { complete } from '../../scene/defaults';
 import type { Scene } from '../../scene/scene';
 import { sharedWorkbench, type Layer, type Linked, type WorkbenchStore } from '../../store/state';
+import { useHydrated } from '../use-hydrated';
+
+const NO_SHAPES: ReturnType<typeof useShapes>['shapes'] = new Map();
 
 export interface Payload {
   readonly title: string;
@@ -36,7 +39,8 @@ export function usePicture({ payload, shown = {}, share }: PictureProps): {
   ready: boolean;
 } {
   const wanted = useMemo(() => wantedBy(payload.blocks, payload.features), [payload]);
-  const { shapes, waiting } = useShapes(wanted);
+  const { shapes: arrived, waiting } = useShapes(wanted);
+  const shapes = useHydrated() ? arrived : NO_SHAPES;
   const scene = useMemo(
     () =>
       assemble(payload.title, payload.model, payload.blocks, payload.features, payload.directions, shapes),
