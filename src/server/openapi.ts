@@ -64,7 +64,7 @@ function parametersOf(path: string, spec: RouteSpec): Parameter[] {
   const revision: Parameter = {
     name: 'If-Match',
     in: 'header',
-    required: true,
+    required: spec.edits === true,
     schema: { type: 'string' },
     description: 'The revision that the edit was made on, in quotes.',
   };
@@ -83,11 +83,11 @@ function operationOf(path: string, spec: RouteSpec): Operation {
     ? `Roles: ${rule.roles.join(', ')}${rule.visitors ? `; visitors ${rule.visitors}` : ''}.`
     : `Action: ${spec.action}.`;
   const accepted = spec.accepts ?? spec.body;
-  const answer = spec.streams
-    ? { content: { [spec.streams]: {} } }
-    : spec.answer
-      ? { content: { 'application/json': { schema: schemaOf(spec.answer, 'output') } } }
-      : {};
+  const content = {
+    ...(spec.answer ? { 'application/json': { schema: schemaOf(spec.answer, 'output') } } : {}),
+    ...Object.fromEntries([spec.streams ?? []].flat().map((type) => [type, {}])),
+  };
+  const answer = Object.keys(content).length > 0 ? { content } : {};
   const body = accepted
     ? { 'application/json': { schema: schemaOf(accepted, 'input') } }
     : spec.reads && Object.fromEntries(spec.reads.map((type) => [type, { schema: { type: 'object' } }]));

@@ -1,5 +1,5 @@
 import type { APIContext, APIRoute } from 'astro';
-import type { z } from 'zod';
+import { z } from 'zod';
 import { localPath } from '~/paths';
 import { isPlain, plain } from '~/plain';
 import { openProject, type Access } from './access';
@@ -25,10 +25,10 @@ export interface RouteSpec<A extends Action = Action, Q extends Shape = Shape, B
   readonly limitBytes?: number;
   /** The page that posts this as a plain form, by the fields posted: problems go back to it as `?error=Name`. */
   readonly form?: (fields: Readonly<Record<string, string>>) => string;
-  /** Media type of an answer that is not JSON. */
-  readonly streams?: string;
-  /** The edit names the revision it was made on (`If-Match`). */
-  readonly edits?: boolean;
+  /** Media types of answers that are not JSON. */
+  readonly streams?: string | readonly string[];
+  /** The edit names the revision it was made on (`If-Match`); or may, where it can also hold for any. */
+  readonly edits?: boolean | 'optional';
   /** Media types read, where the handler reads the body itself. */
   readonly reads?: readonly string[];
 }
@@ -107,6 +107,7 @@ async function read<Q extends Shape, B extends Shape>(
   let raw: unknown;
   if (posted) raw = Object.assign(fields, await readForm(request, spec.limitBytes));
   else if (spec.body) raw = await readJson(request, spec.limitBytes);
+  requireKnown(spec.query, url.searchParams);
   return {
     context,
     request,
@@ -116,6 +117,23 @@ async function read<Q extends Shape, B extends Shape>(
     body: parse(spec.body as B, raw, 'InvalidRows'),
     posted,
   };
+}
+
+/** A name misspelt would be an answer to another question, and of one given twice only one can be meant. */
+function requireKnown(shape: Shape, given: URLSearchParams): void {
+  if (!(shape instanceof z.ZodObject)) return;
+  const known = Object.keys(shape.shape);
+  const errors = [...new Set(given.keys())].flatMap((name) => {
+    const read = given.getAll(name);
+    if (!known.includes(name))
+      return {
+        path: plain(name),
+        read: plain(read[0] ?? ''),
+        problem: `no such name here; known are ${known.join(', ')}`,
+      };
+    return read.length > 1 ? { path: name, read: read.join(', '), problem: 'given more than once' } : [];
+  });
+  if (errors.length > 0) throw new Problem('InvalidQuery', { detail: inBrief(errors), errors });
 }
 
 function parse<S extends Shape>(shape: S, value: unknown, name: 'InvalidQuery' | 'InvalidRows'): Parsed<S> {

@@ -386,6 +386,17 @@ describe('undo and redo', () => {
     expect(await angle()).toBe(9);
   });
 
+  it('hold for the revision that is named', async () => {
+    await patch(team.lead, id, { angle_deg: 10 });
+    const at = async (revision: number) =>
+      app.call('POST', team.at('changes/undo'), { as: team.lead, revision });
+    const now = await revisionOf(app, team);
+    expect((await at(now - 1)).status).toBe(412);
+    expect(await angle()).toBe(10);
+    expect((await at(now)).status).toBe(200);
+    expect(await angle()).toBe(9);
+  });
+
   it('pass over what others did to other rows', async () => {
     await patch(team.lead, id, { angle_deg: 10 });
     await add(app, team, 'rotations', rotation(['sable', 'spin-axis', 80, 12, 20, 5]));

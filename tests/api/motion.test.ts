@@ -6,7 +6,8 @@ import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { frameAt, matrixOf } from '~/features/motion/scene/frame';
 import { turn } from '~/features/motion/globe/matrix';
 import { createTestApp, type Answer, type TestApp } from '../support/app';
-import { addRotations, createTeam, type Team } from '../support/team';
+import { decodeModel } from '../../src/kernel';
+import { add, addRotations, createTeam, square, type Team } from '../support/team';
 
 let app: TestApp;
 let team: Team;
@@ -87,6 +88,82 @@ describe('rotation', () => {
     const older = await get('rotation?block=sable&age_ma=25&relative_to=axis');
     expect(older.status).toBe(200);
     expect(older.json).toMatchObject({ status: 'outside rotations', pole_lat: null, angle_deg: null });
+  });
+});
+
+describe('a question', () => {
+  beforeEach(() => give([['sable', 'axis', 20, 25, 71, 40]]));
+
+  it('with a name that is not known, or one twice, is refused with those that are', async () => {
+    const misspelt = await get('rotation?block=sable&age_ma=5&relativeto=sable');
+    expect([misspelt.status, misspelt.json.errors[0].path]).toEqual([400, 'relativeto']);
+    expect(misspelt.json.errors[0].problem).toContain('relative_to');
+    const twice = await get('rotation?block=sable&age_ma=5&age_ma=6&relative_to=axis');
+    expect([twice.status, twice.json.errors[0].read]).toEqual([400, '5, 6']);
+  });
+
+  it('over a window below zero is refused', async () => {
+    const { status, json } = await get(
+      'velocity?block=sable&lat=0&lon=0&age_ma=5&window_myr=-5&relative_to=axis',
+    );
+    expect(status).toBe(400);
+    expect(json.detail).toContain('window_myr -5');
+  });
+
+  it('without a frame is answered in the project’s, else in the one that most blocks reach', async () => {
+    expect((await get('rotation?block=sable&age_ma=5')).json.relative_to).toBe('axis');
+    const settings = (held_still: string) =>
+      app.call('PATCH', team.at(), { as: team.lead, body: { held_still } });
+    expect((await settings('sable')).status).toBe(200);
+    expect((await get('rotation?block=sable&age_ma=5')).json.relative_to).toBe('sable');
+    const unknown = await settings('nobody');
+    expect([unknown.status, unknown.json.errors[0].path]).toEqual([422, 'held_still']);
+    const { items } = (await get('blocks')).json;
+    const id = items.find(({ code }: { code: string }) => code === 'sable').id;
+    await app.call('PATCH', team.at(`blocks/${id}`), {
+      as: team.lead,
+      body: { code: 'sable-isle' },
+      revision: '*',
+    });
+    expect((await get('rotation?block=sable-isle&age_ma=5')).json.relative_to).toBe('sable-isle');
+  });
+});
+
+describe('a loop', () => {
+  it('leaves the blocks that it does not hold where they are', async () => {
+    await give([
+      ['a', 'b', 10, 90, 0, 5], ['b', 'a', 10, 90, 0, 3], ['c', 'axis', 10, 90, 0, 40],
+    ]); // prettier-ignore
+    for (const code of ['a', 'c'])
+      await add(app, team, 'outlines', { block: code, geometry: square(170, 10) });
+    const { status, json } = await get('quaternions?age_ma=5&relative_to=axis');
+    expect(status).toBe(200);
+    const statuses = Object.fromEntries(json.blocks.map((one: any) => [one.block, one.status]));
+    expect(statuses).toEqual({ a: 'not connected', b: 'not connected', c: 'placed', axis: 'placed' });
+    const placed = (await get('positions?age_ma=5&relative_to=axis')).json.features;
+    expect(placed.map((one: any) => one.properties.block)).toEqual(['c']);
+    expect((await get('slice.svg?age_ma=5&relative_to=axis')).status).toBe(200);
+    expect((await get('rotation?block=a&age_ma=5&relative_to=axis')).status).toBe(409);
+    expect((await get('quaternions?age_ma=5&relative_to=nobody')).status).toBe(404);
+    expect((await get('quaternions?age_ma=-5&relative_to=axis')).status).toBe(400);
+  });
+});
+
+describe('motions', () => {
+  it('come as bytes to who asks for them, the same to the last bit', async () => {
+    await give([
+      ['sable', 'tarn', 20, 25.123456789, 71, 40], ['sable', 'axis', 20, 2, 7, 4], ['sable', 'axis', 60, 2, 8, 14], ['tarn', 'axis', 60, 1, 2, 3],
+    ]); // prettier-ignore
+    const plain = await get('motions');
+    const bytes = await app.respond('GET', team.at('motions'), {
+      as: team.reviewer,
+      headers: { Accept: 'application/octet-stream, application/json;q=0.5' },
+    });
+    expect(bytes.headers.get('content-type')).toBe('application/octet-stream');
+    expect(bytes.headers.get('vary')).toContain('Accept');
+    expect(bytes.headers.get('etag')).toBe(plain.headers.get('etag'));
+    expect(decodeModel(new Uint8Array(await bytes.arrayBuffer()))).toEqual(plain.json);
+    expect(() => decodeModel(new Uint8Array(16))).toThrow(/DWM1/);
   });
 });
 

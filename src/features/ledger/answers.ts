@@ -20,6 +20,10 @@ export function expectedRevision(request: Request): ExpectedRevision {
   return Number(revision);
 }
 
+/** As {@link expectedRevision}, any where the header is missing. */
+export const optionalRevision = (request: Request): ExpectedRevision =>
+  request.headers.has('if-match') ? expectedRevision(request) : '*';
+
 /** The rows that an edit touched as they stand after it, by table. */
 async function touched(access: Access, { changed }: DraftResult) {
   const last = new Map<string, { id: string; table: Table; row: LogRow | null }>();

@@ -1,6 +1,6 @@
 import { and, eq, inArray, ne } from 'drizzle-orm';
 import type { Transaction } from '~/db/client';
-import { rotation } from '~/db/schema';
+import { project, rotation } from '~/db/schema';
 import { constraintProblem } from '~/server/constraint-problems';
 import { Problem, type FieldError } from '~/server/problem';
 import type { Edit, Table } from './contract';
@@ -93,7 +93,7 @@ export class Draft {
     }
   }
 
-  /** Writes `after` over `before`; a block's new code carries its rows and those that refer to it along. */
+  /** Writes `after` over `before`; a block's new code carries its rows, those that refer to it and the project's choice along. */
   async replace(table: Table, before: LogRow, after: LogRow): Promise<void> {
     if (canonicalCells(before) === canonicalCells(after)) return;
     const target = DB_TABLES[table];
@@ -116,6 +116,10 @@ export class Draft {
       .update(rotation)
       .set({ relative_to: code })
       .where(and(eq(rotation.project_id, this.projectId), eq(rotation.relative_to, String(before['code']))));
+    await this.tx
+      .update(project)
+      .set({ held_still: code })
+      .where(and(eq(project.id, this.projectId), eq(project.held_still, String(before['code']))));
     for (const { entity, row } of carried) {
       const moved = Object.fromEntries(
         Object.entries(row).map(([name, value]) => [

@@ -7,21 +7,27 @@ import type { Changed, Draft } from './apply';
 import type { Table } from './contract';
 import { ownStacks } from './history';
 import { canonicalCells } from './order';
-import { changeDraft, type DraftResult } from './server';
+import { changeDraft, type DraftResult, type ExpectedRevision } from './server';
 import type { LogRow } from './tables';
 
-/** Takes back the caller's last step that is not yet taken back. @throws Problem `NothingToUndo` or `ChangedSince` */
-export const undo = (access: Access): Promise<DraftResult> => step(access, 'undo');
+/** Takes back the caller's last step that is not yet taken back. @throws Problem `StaleRevision`, `NothingToUndo` or `ChangedSince` */
+export const undo = (access: Access, expected: ExpectedRevision = '*'): Promise<DraftResult> =>
+  step(access, 'undo', expected);
 
 /** Does again what the caller took back last. @throws Problem `NothingToRedo` or `ChangedSince` */
-export const redo = (access: Access): Promise<DraftResult> => step(access, 'redo');
+export const redo = (access: Access, expected: ExpectedRevision = '*'): Promise<DraftResult> =>
+  step(access, 'redo', expected);
 
-async function step(access: Access, action: 'undo' | 'redo'): Promise<DraftResult> {
+async function step(
+  access: Access,
+  action: 'undo' | 'redo',
+  expected: ExpectedRevision,
+): Promise<DraftResult> {
   demand(access, 'ledger.edit');
   const target = (await ownStacks(database(), access))[action];
   if (!target) throw new Problem(action === 'undo' ? 'NothingToUndo' : 'NothingToRedo');
   const label = `${action === 'undo' ? 'Undid' : 'Redid'}: ${target.label}`.slice(0, 200);
-  const how = { expected: '*', action, label, reverts_revision: target.revision } as const;
+  const how = { expected, action, label, reverts_revision: target.revision } as const;
   return changeDraft(access, how, async (draft, tx) => {
     // Read again under the lock: another window of the same person may have been quicker.
     const still = (await ownStacks(tx, access))[action];

@@ -1,5 +1,6 @@
 import type { Feature, FeatureCollection, MultiPolygon, Position } from 'geojson';
-import { poseAt } from '~/kernel/rotations/circuit';
+import { requireAge } from '~/kernel/errors';
+import { requireBlock } from '~/kernel/rotations/model-index';
 import { rotate } from '~/kernel/rotations/quaternion';
 import type { Quaternion, Vector3 } from '~/kernel/rotations/types';
 import { ringArea } from '~/kernel/sphere/area';
@@ -7,12 +8,18 @@ import { writeRing } from '~/kernel/sphere/ring';
 import { outlinesOf, type LoadedOutline } from './outlines';
 import { flatten } from './plate-carree';
 import type { Motion } from './queries';
+import { poseAt } from './scene/tolerant';
 
-/** The outlines that hold at an age, where they lay then, as GeoJSON (RFC 7946). @throws KernelError as `poseAt` */
+/**
+ * The outlines that hold at an age, where they lay then, as GeoJSON (RFC 7946); blocks that a loop cuts off are left out.
+ * @throws KernelError `UnknownBlock` of the frame, `NegativeAge`
+ */
 export async function positionsOf(
   { state, model, relative_to }: Motion,
   age_ma: number,
 ): Promise<FeatureCollection> {
+  requireBlock(model, relative_to, 'relative_to');
+  requireAge('age_ma', age_ma);
   const outlines = (await outlinesOf(state)).filter(({ holdsAt }) => holdsAt(age_ma));
   const features: Feature[] = [];
   for (const { code, name, kind, evidence } of state.blocks) {

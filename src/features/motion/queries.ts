@@ -6,9 +6,10 @@ import { demand, type Access } from '~/server/access';
 import { Problem } from '~/server/problem';
 import { queryLatitude, queryLongitude, queryNumber, queryVersion } from '~/server/queries';
 import { modelOf } from './model';
+import { openingFrame } from './usual-frame';
 
 const state = { version: queryVersion };
-/** Left out, it is what the project holds still. */
+/** Left out, it is what the project holds still, else the frame in which the most blocks have a place. */
 const frame = { ...state, relative_to: slug.optional() };
 const span = { older_ma: queryNumber, younger_ma: queryNumber.default(0) };
 
@@ -52,14 +53,15 @@ export interface Motion {
   readonly framed: boolean;
 }
 
-/** @throws Problem as `loadState`; `InvalidQuery` where no reference is named and the project holds none still */
+/** @throws Problem as `loadState`; `InvalidQuery` where no reference is named and there is no block at all */
 export async function openMotion(
   access: Access,
   query: { readonly version?: VersionName | undefined; readonly relative_to?: string | undefined },
 ): Promise<Motion> {
   demand(access, 'compute');
   const loaded = await loadState(access, query.version);
-  const relative_to = query.relative_to ?? access.project.held_still;
+  const model = modelOf(loaded);
+  const relative_to = query.relative_to ?? openingFrame(model, access.project.held_still);
   if (relative_to === null) {
     const problem = 'name the block or frame to hold still';
     throw new Problem('InvalidQuery', {
@@ -67,5 +69,5 @@ export async function openMotion(
       errors: [{ path: 'relative_to', read: '', problem }],
     });
   }
-  return { state: loaded, model: modelOf(loaded), relative_to, framed: query.relative_to !== undefined };
+  return { state: loaded, model, relative_to, framed: query.relative_to !== undefined };
 }

@@ -1,6 +1,7 @@
 import type { z } from 'zod';
-import { KernelError } from '~/kernel/errors';
+import { KernelError, requireAge } from '~/kernel/errors';
 import { poseAt, type PlacedPose } from '~/kernel/rotations/circuit';
+import { requireBlock } from '~/kernel/rotations/model-index';
 import { driftPath, type DriftPoint } from '~/kernel/rotations/drift-path';
 import { toPole } from '~/kernel/rotations/pole';
 import { rotate } from '~/kernel/rotations/quaternion';
@@ -26,6 +27,7 @@ import type {
   velocityQuery,
 } from './queries';
 import { uncertaintySentence } from './rules';
+import * as tolerant from './scene/tolerant';
 
 type Query<S extends z.ZodType> = z.output<S>;
 
@@ -37,12 +39,15 @@ export const motionsOf = ({ state, model }: Pick<Motion, 'state' | 'model'>): Mo
   ...model,
 });
 
+/** A loop leaves the blocks that it cuts off `not connected`. @throws KernelError `UnknownBlock` of the frame, `NegativeAge` */
 export function quaternionsOf(
   { state, model, relative_to }: Motion,
   { age_ma }: Query<typeof quaternionsQuery>,
 ): QuaternionsAnswer {
+  requireBlock(model, relative_to, 'relative_to');
+  requireAge('age_ma', age_ma);
   const blocks = model.blocks.map(({ code }) => {
-    const { status, quaternion } = poseAt(model, code, age_ma, relative_to);
+    const { status, quaternion } = tolerant.poseAt(model, code, age_ma, relative_to);
     return { block: code, status, quaternion: quaternion && asTuple(quaternion) };
   });
   return { age_ma, relative_to, version: state.version, blocks };

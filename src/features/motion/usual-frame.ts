@@ -21,3 +21,7 @@ export function usualFrame(model: Model): string | null {
   const counts = frames.map(({ code }) => placed(code));
   return frames[counts.indexOf(Math.max(...counts))]?.code ?? model.blocks[0]?.code ?? null;
 }
+
+/** What a view opens with: the project's own choice where the model holds it, else the usual frame. */
+export const openingFrame = (model: Model, held_still: string | null): string | null =>
+  model.blocks.some(({ code }) => code === held_still) ? held_still : usualFrame(model);

@@ -1,11 +1,11 @@
 import { and, asc, desc, eq, gt, isNotNull, or } from 'drizzle-orm';
 import type { z } from 'zod';
 import { database, type Queryable } from '~/db/client';
-import { membership, project, version } from '~/db/schema';
+import { block, membership, project, version } from '~/db/schema';
 import { accessTo, demand, may, type Access } from '~/server/access';
 import type { Actor } from '~/server/actor';
 import { PROJECT_ACTIONS, requireSite } from '~/server/policy';
-import { Problem } from '~/server/problem';
+import { inBrief, Problem } from '~/server/problem';
 import type { createProject, patchProject, Project, Role } from './contract';
 
 /** Projects with the actor's role and the newest version: one query, whatever the condition. */
@@ -112,12 +112,30 @@ export async function makeProject(actor: Actor, body: z.output<typeof createProj
   return asProject(actor, { project: row, role, latest: null });
 }
 
+/** @throws Problem `InvalidRows` for a block to hold still that is not there */
 export async function changeProject(access: Access, body: z.output<typeof patchProject>): Promise<Project> {
   demand(access, 'project.settings');
   if (Object.keys(body).length > 0) {
+    if (body.held_still) await requireBlock(access, body.held_still);
     await database().update(project).set(body).where(eq(project.id, access.project.id));
   }
   return readProject(access);
+}
+
+/** @throws Problem `InvalidRows` where the draft has no such block */
+async function requireBlock(access: Access, code: string): Promise<void> {
+  const [found] = await database()
+    .select({ code: block.code })
+    .from(block)
+    .where(and(eq(block.project_id, access.project.id), eq(block.code, code)));
+  if (found) return;
+  const error = {
+    path: 'held_still',
+    read: code,
+    problem: 'the draft has no block or frame of this code',
+    hint: 'Give the code of one, or null for the usual frame.',
+  };
+  throw new Problem('InvalidRows', { detail: inBrief([error]), errors: [error] });
 }
 
 /** @throws Problem `ProjectHasVersions`: what was released stays citable */

@@ -2,10 +2,10 @@
 import { loadShapes } from '~/features/ledger/shapes';
 import { loadState, type State } from '~/features/ledger/state';
 import { modelOf } from '~/features/motion/model';
-import { usualFrame } from '~/features/motion/usual-frame';
+import { driftPath } from '~/features/motion/scene/tolerant';
+import { openingFrame } from '~/features/motion/usual-frame';
 import { shortHash } from '~/features/versions/hash';
-import { driftPath, type DriftPoint } from '~/kernel/rotations';
-import type { Model } from '~/kernel/rotations/types';
+import type { DriftPoint } from '~/kernel/rotations';
 import { createIndex, requireBlock } from '~/kernel/rotations/model-index';
 import { demand, type Access } from '~/server/access';
 import { runInWorker } from '~/server/workers';
@@ -68,16 +68,9 @@ function render(
   return runInWorker<RenderJob, Uint8Array>(renderTask, { ...page, format, dpi: query.dpi, title }, signal);
 }
 
-/** The frame asked for, else the one the project opens with, else the usual one of the model. */
-function frameCode(access: Access, state: State, model: Model, query: SliceQuery): string {
-  const known = state.blocks.map((block) => block.code);
-  const usual = access.project.held_still;
-  return query.relative_to ?? (usual && known.includes(usual) ? usual : undefined) ?? usualFrame(model) ?? '';
-}
-
 async function subjectOf(access: Access, state: State, query: SliceQuery): Promise<SliceSubject> {
   const model = modelOf(state);
-  const code = frameCode(access, state, model, query);
+  const code = query.relative_to ?? openingFrame(model, access.project.held_still) ?? '';
   requireBlock(model, code, 'relative_to');
   const frame = state.blocks[createIndex(model).get(code)!]!;
   const coasts = state.features.filter((feature) => feature.kind === 'layer');

@@ -4,6 +4,7 @@ export * from './pole';
 export * from './interpolate';
 export * from './compile';
 export * from './model-index';
+export * from './model-codec';
 export { type Beyond, legAt } from './leg-at';
 export * from './circuit';
 export * from './batch';

@@ -1,8 +1,9 @@
 /** Everything of a subject that has a place at an age, carried there: the same for maps and for GeoJSON. */
 import type { MultiLineString, MultiPolygon, Polygon } from 'geojson';
-import { poseAt, rotate } from '../../../kernel/rotations';
+import { rotate } from '../../../kernel/rotations';
 import type { Evidence, Pose, Status } from '../../../kernel/rotations/types';
 import { areaKm2, boundingCap, centroid, toLatLon } from '../../../kernel/sphere';
+import { poseAt } from '../../motion/scene/tolerant';
 import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
 import { holdsAt, type SliceSubject } from './subject';
 

@@ -1,8 +1,9 @@
 /** Arrows of motion on a printed map: where each block goes, forward in time, at points spread over it. */
 import { geoContains, type GeoProjection } from 'd3-geo';
-import { angularVelocity, velocityAt } from '../../../kernel/rotations';
+import { velocityAt } from '../../../kernel/rotations';
 import type { Model } from '../../../kernel/rotations/types';
 import { destination, toLatLon, toVector } from '../../../kernel/sphere';
+import { angularVelocity } from '../../motion/scene/tolerant';
 import type { CarriedBlock } from './carried';
 import { INK } from './palette';
 import { element, short } from './svg';

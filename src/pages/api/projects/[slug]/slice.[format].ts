@@ -12,7 +12,12 @@ const SVG_POLICY = "default-src 'none'; style-src 'unsafe-inline'; font-src data
 const isFormat = (name: string): name is SliceFormat => Object.hasOwn(SLICE_FORMATS, name);
 
 export const GET = projectRoute(
-  { action: 'compute', summary: 'A time slice as SVG, PNG, PDF or GeoJSON', query: sliceQuery },
+  {
+    action: 'compute',
+    summary: 'A time slice as SVG, PNG, PDF or GeoJSON',
+    query: sliceQuery,
+    streams: Object.values(SLICE_FORMATS),
+  },
   async ({ access, params, query, request }) => {
     const format = params['format'] ?? '';
     if (!isFormat(format))

@@ -16,6 +16,7 @@ export const GET = projectRoute(
     action: 'export',
     summary: 'One of the project’s own files, for a version',
     query: z.object({ version: queryVersion }),
+    streams: ['text/csv', 'application/geo+json'],
   },
   async ({ access, params, query }) => {
     const name = params['name'] ?? '';

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { answers, columnMapping, importReport } from '~/features/interchange/contract';
-import { expectedRevision } from '~/features/ledger/answers';
+import { optionalRevision } from '~/features/ledger/answers';
 import { IMPORT_KINDS, IMPORT_LIMIT_BYTES } from '~/features/interchange/files';
 import { importInto } from '~/features/interchange/server';
 import { fieldErrors, Problem } from '~/server/problem';
@@ -36,6 +36,7 @@ export const POST = projectRoute(
       'Read a file into the draft: a report of accepted and rejected rows; writes unless dry_run, questions or rejections hold it back',
     reads: ['multipart/form-data'],
     answer: importReport,
+    edits: 'optional',
     limitBytes: IMPORT_LIMIT_BYTES,
   },
   async ({ request, access }) => {
@@ -45,7 +46,6 @@ export const POST = projectRoute(
       throw new Problem('InvalidRows', { errors: fieldErrors(parsed.error, upload.fields) });
     if (!upload.file) throw new Problem('InvalidRows', { detail: 'The part `file` is missing.' });
     const { kind, dry_run, skip_rejected, answers, mapping } = parsed.data;
-    const expected = request.headers.has('if-match') ? expectedRevision(request) : '*';
     return importInto(access, {
       file: upload.file,
       kind,
@@ -53,7 +53,7 @@ export const POST = projectRoute(
       mapping,
       dryRun: dry_run,
       skipRejected: skip_rejected,
-      expected,
+      expected: optionalRevision(request),
     });
   },
 );
