@@ -85,7 +85,9 @@ export function requireCan(actor: Actor, action: ProjectAction, standing: Standi
     throw new Problem('ReadOnlyToken', {
       detail: 'Make a token with the scope "write" in the account page.',
     });
-  throw new Problem('Forbidden', { detail: refusal(action, standing.role) });
+  throw new Problem('Forbidden', {
+    detail: actor.user ? refusal(action, standing.role) : `You are not signed in. ${refusal(action, null)}`,
+  });
 }
 
 /** A button that cannot act says why beside it. */

@@ -318,6 +318,51 @@ describe('an edit', () => {
     expect(await revisionOf(app, team)).toBe(0);
   });
 
+  it('sent again under its name because its answer was lost is made once', async () => {
+    const id = crypto.randomUUID();
+    const edits = [
+      { op: 'create', table: 'blocks', id, fields: { code: 'tarn', name: 'Tarn', kind: 'terrane' } },
+    ];
+    const send = (key: string, as = team.researcher) =>
+      app.call('POST', team.at('edits'), {
+        as,
+        body: { edits },
+        revision: 0,
+        headers: { 'Idempotency-Key': key },
+      });
+    const first = await send('one');
+    expect(first.status, first.text).toBe(200);
+    const again = await send('one');
+    expect([again.status, again.json]).toEqual([200, first.json]);
+    expect(await revisionOf(app, team)).toBe(1);
+    expect((await send('two')).status).toBe(412);
+    expect((await send('one', team.lead)).status).toBe(412);
+    expect((await send('x'.repeat(65))).status).toBe(400);
+  });
+
+  it('of thousands of rows is taken back as it was made', async () => {
+    await addRotations(app, team, [['sable', 'tarn', 10, 1, 2, 3]]);
+    const ages = Array.from({ length: 1200 }, (_, i) => 11 + i / 100);
+    await add(app, team, 'rotations', ages.map((age) => rotation(['sable', 'tarn', age, 1, 2, 3]))); // prettier-ignore
+    const before = (await list('rotations', team.researcher, '?limit=500')).items;
+    const rows = await app.db.select({ id: rotationTable.id }).from(rotationTable);
+    const edits = rows.map(({ id }, i) => ({
+      op: 'update',
+      table: 'rotations',
+      id,
+      fields: { angle_deg: i % 90, note: `n ${i}` },
+    }));
+    const sent = await app.call('POST', team.at('edits'), {
+      as: team.researcher,
+      body: { edits },
+      revision: '*',
+    });
+    expect([sent.status, sent.json.items?.length]).toEqual([200, 1201]);
+    expect((await list('rotations', team.researcher, '?limit=500')).items).not.toEqual(before);
+    expect((await app.call('POST', team.at('changes/undo'), { as: team.researcher })).status).toBe(200);
+    expect((await list('rotations', team.researcher, '?limit=500')).items).toEqual(before);
+  });
+
   it('of many tables is one step of undo, with the ids that it brought', async () => {
     const id = crypto.randomUUID();
     const edits = [

@@ -43,6 +43,28 @@ export const change = pgTable(
   ],
 );
 
+/** An edit as its sender named it: one whose answer was lost is sent again under its name, and not made twice. */
+export const editRequest = pgTable(
+  'edit_request',
+  {
+    project_id: text('project_id')
+      .notNull()
+      .references(() => project.id, { onDelete: 'cascade' }),
+    actor_id: text('actor_id')
+      .notNull()
+      .references(() => user.id, { onDelete: 'cascade' }),
+    key: text('key').notNull(),
+    /** The revision that it made. */
+    revision: integer('revision').notNull(),
+    at: moment('at').notNull().defaultNow(),
+  },
+  (table) => [
+    primaryKey({ columns: [table.project_id, table.actor_id, table.key] }),
+    index('edit_request_at').on(table.at),
+    check('edit_request_key', sql`length(${table.key}) between 1 and 64`),
+  ],
+);
+
 /** An uploaded file as it came, with the report that was shown and the rejected rows to mend. */
 export const importFile = pgTable(
   'import_file',

@@ -1,4 +1,4 @@
-import { and, eq, inArray, ne } from 'drizzle-orm';
+import { and, eq, inArray, ne, sql } from 'drizzle-orm';
 import type { Transaction } from '~/db/client';
 import { project, rotation } from '~/db/schema';
 import { constraintProblem } from '~/server/constraint-problems';
@@ -57,11 +57,15 @@ export class Draft {
       ...fields,
     }));
     rows.forEach((row, i) => this.pathById.set(row.id, group[i]!.path));
-    for (let i = 0; i < rows.length; i += CHUNK) await this.insert(table, rows.slice(i, i + CHUNK));
+    await this.insertAll(table, rows);
   }
 
   /** Puts rows in as they are, ids included. */
-  async insert(table: Table, rows: readonly LogRow[]): Promise<void> {
+  async insertAll(table: Table, rows: readonly LogRow[]): Promise<void> {
+    for (let i = 0; i < rows.length; i += CHUNK) await this.insert(table, rows.slice(i, i + CHUNK));
+  }
+
+  private async insert(table: Table, rows: readonly LogRow[]): Promise<void> {
     const target = DB_TABLES[table];
     const values = rows.map((row) => ({ ...toColumns(table, row), project_id: this.projectId }));
     const pathOf = (read: string) =>
@@ -82,19 +86,56 @@ export class Draft {
     });
     const given = await resolveGeometries(this.tx, this.projectId, table, merged);
     // Two edits of one row: the second builds on what the first made of it.
+    const replacements: Replacement[] = [];
     for (const [i, { row, path }] of merged.entries()) {
       const before = current.get(row.id)!;
       const { id, ...fields } = before;
       const [parsed] = parseCells(table, [{ cells: { ...fields, ...given[i]!.cells }, path }]);
       const after: LogRow = { id, ...parsed };
       this.pathById.set(id, path);
-      await this.replace(table, before, after);
+      replacements.push({ before, after });
       current.set(id, after);
     }
+    await this.replaceAll(table, replacements);
+  }
+
+  /** Writes rows over others in their order; many at once where no row comes twice and no code changes. */
+  async replaceAll(table: Table, replacements: readonly Replacement[]): Promise<void> {
+    const changing = replacements.filter(
+      ({ before, after }) => canonicalCells(before) !== canonicalCells(after),
+    );
+    const ids = new Set(changing.map(({ after }) => after.id));
+    const oneByOne = table === 'blocks' || ids.size < changing.length;
+    if (oneByOne) for (const { before, after } of changing) await this.replace(table, before, after);
+    else
+      for (let i = 0; i < changing.length; i += CHUNK)
+        await this.overwrite(table, changing.slice(i, i + CHUNK));
+  }
+
+  private async overwrite(table: Table, replacements: readonly Replacement[]): Promise<void> {
+    const target = DB_TABLES[table];
+    const values = replacements.map(({ after }) => ({
+      ...toColumns(table, after),
+      project_id: this.projectId,
+    }));
+    const set = Object.fromEntries(
+      Object.keys(values[0]!)
+        .filter((column) => column !== 'id' && column !== 'project_id')
+        .map((column) => [column, sql`excluded.${sql.identifier(column)}`]),
+    );
+    const pathOf = (read: string) =>
+      this.pathById.get(
+        (replacements.find(({ after }) => Object.values(after).includes(read)) ?? replacements[0]!).after.id,
+      );
+    await this.guarded(pathOf, () =>
+      this.tx.insert(target).values(values).onConflictDoUpdate({ target: target.id, set }),
+    );
+    for (const { before, after } of replacements)
+      this.changed.push({ entity: table, entity_id: after.id, before, after });
   }
 
   /** Writes `after` over `before`; a block's new code carries its rows, those that refer to it and the project's choice along. */
-  async replace(table: Table, before: LogRow, after: LogRow): Promise<void> {
+  private async replace(table: Table, before: LogRow, after: LogRow): Promise<void> {
     if (canonicalCells(before) === canonicalCells(after)) return;
     const target = DB_TABLES[table];
     const { id, ...fields } = after;
@@ -232,6 +273,11 @@ export class Draft {
       throw constraint ? new Problem(constraint.name, constraint.facts) : error;
     }
   }
+}
+
+interface Replacement {
+  readonly before: LogRow;
+  readonly after: LogRow;
 }
 
 interface Placed<Op extends Edit['op']> {

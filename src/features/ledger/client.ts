@@ -55,17 +55,28 @@ export class EditRefused extends Error {
   }
 }
 
-async function post<T>(address: string, revision: number | null, body?: unknown): Promise<T> {
-  const answer = await fetch(address, {
-    method: 'POST',
-    headers: {
-      ...(body === undefined ? {} : { 'content-type': 'application/json' }),
-      ...(revision === null ? {} : { 'if-match': `"${revision}"` }),
-    },
-    ...(body === undefined ? {} : { body: JSON.stringify(body) }),
-  });
+async function post<T>(address: string, headers: Record<string, string>, body?: unknown): Promise<T> {
+  const answer = await fetch(
+    address,
+    body === undefined
+      ? { method: 'POST', headers }
+      : {
+          method: 'POST',
+          headers: { 'content-type': 'application/json', ...headers },
+          body: JSON.stringify(body),
+        },
+  );
   if (answer.ok) return (await answer.json()) as T;
   throw new EditRefused(answer.status, (await answer.json().catch(() => ({}))) as ProblemBody);
+}
+
+const SIGNED_OUT = [401, 403, 404];
+
+/** Whether a refusal comes of a session that has ended meanwhile. */
+export async function isSignedOut({ status }: EditRefused): Promise<boolean> {
+  if (!SIGNED_OUT.includes(status)) return false;
+  const me = await fetch('/api/me').catch(() => null);
+  return me?.status === 401;
 }
 
 const base = (slug: string): string => `/api/projects/${encodeURIComponent(slug)}`;
@@ -101,27 +112,38 @@ function tellsAll({ changes, revision }: EditRefused, since: number): boolean {
   );
 }
 
+export interface EditRequest {
+  readonly edits: readonly Edit[];
+  /** What the edits were made on. */
+  readonly revision: number;
+  /** The same each time the same edits are sent, so that they are made once whatever becomes of the answers. */
+  readonly key: string;
+  readonly label?: string | undefined;
+  /** Revisions that this page made itself: they are nobody else's changes. */
+  readonly own: ReadonlySet<number>;
+}
+
 /**
- * Sends edits. Where the draft has moved on but none of these cells was touched, they are sent again on the new revision.
+ * Sends edits. Where the draft has moved on but nobody else touched these cells, they are sent again on the new revision.
  * @throws EditRefused
  */
 export async function sendEdits(
   slug: string,
-  revision: number,
-  edits: readonly Edit[],
-  label?: string,
+  { edits, revision, key, label, own }: EditRequest,
 ): Promise<BatchAnswer> {
+  const send = (on: number): Promise<BatchAnswer> =>
+    post(
+      `${base(slug)}/edits`,
+      { 'if-match': `"${on}"`, 'idempotency-key': key },
+      { edits, ...(label ? { label } : {}) },
+    );
   try {
-    return await post<BatchAnswer>(`${base(slug)}/edits`, revision, { edits, ...(label ? { label } : {}) });
+    return await send(revision);
   } catch (error) {
-    if (
-      !(error instanceof EditRefused) ||
-      error.revision === null ||
-      !tellsAll(error, revision) ||
-      overlap(edits, error.changes).length > 0
-    )
-      throw error;
-    return post<BatchAnswer>(`${base(slug)}/edits`, error.revision, { edits, ...(label ? { label } : {}) });
+    if (!(error instanceof EditRefused) || error.revision === null || !tellsAll(error, revision)) throw error;
+    const theirs = error.changes.filter((entry) => !own.has(entry.revision));
+    if (overlap(edits, theirs).length > 0) throw error;
+    return send(error.revision);
   }
 }
 
@@ -133,5 +155,6 @@ export async function lastLabel(slug: string): Promise<string | null> {
   return items[0]?.label ?? null;
 }
 
-export const sendUndo = (slug: string, which: 'undo' | 'redo', revision: number): Promise<BatchAnswer> =>
-  post<BatchAnswer>(`${base(slug)}/changes/${which}`, revision);
+/** Takes back one's own last step, whatever others did meanwhile to other rows. */
+export const sendUndo = (slug: string, which: 'undo' | 'redo'): Promise<BatchAnswer> =>
+  post(`${base(slug)}/changes/${which}`, {});

@@ -3,8 +3,10 @@ import { database, type Queryable } from '~/db/client';
 import { change, user } from '~/db/schema';
 import { demand, type Access } from '~/server/access';
 import { Problem } from '~/server/problem';
-import type { ChangeEntry } from './contract';
+import type { Changed } from './apply';
+import type { ChangeEntry, Table } from './contract';
 import { stacks, type Step } from './history-rules';
+import type { LogRow } from './tables';
 
 /** Transactions of a draft, one row each, newest first. */
 function transactions(db: Queryable) {
@@ -94,6 +96,21 @@ export async function changesSince(
     projectId,
     since.map((one) => one.revision),
   );
+}
+
+/** Every row that a revision changed, in its order. */
+export async function changedAt(db: Queryable, projectId: string, revision: number): Promise<Changed[]> {
+  const rows = await db
+    .select()
+    .from(change)
+    .where(and(eq(change.project_id, projectId), eq(change.revision, revision)))
+    .orderBy(change.position);
+  return rows.map(({ entity, entity_id, before, after }) => ({
+    entity: entity as Table,
+    entity_id,
+    before: before as LogRow | null,
+    after: after as LogRow | null,
+  }));
 }
 
 const MOST_ROWS = 1000;

@@ -7,10 +7,11 @@ import type { ProjectAction } from '~/server/policy';
 import { Problem } from '~/server/problem';
 import { Draft, type Changed } from './apply';
 import type { Edit } from './contract';
-import { changesSince } from './history';
+import { changedAt, changesSince } from './history';
 import { labelOf } from './history-rules';
 import { integrityErrors } from './integrity';
 import { refuse } from './parse';
+import { madeBy, remember } from './repeats';
 
 /** `*` edits whatever revision there is: right only for rows that build on nothing read before. */
 export type ExpectedRevision = number | '*';
@@ -23,6 +24,8 @@ export interface DraftChange {
   readonly reverts_revision?: number;
   /** Where the edit at an index stands in the request, for errors. */
   readonly pathOf?: (index: number) => string;
+  /** The sender's own name of the edit: a second one of the same name answers what the first has made. */
+  readonly key?: string | null;
   /** Further writes that belong to the same transaction; gets the revision that it makes. */
   readonly alongside?: (tx: Transaction, revision: number) => Promise<void>;
 }
@@ -58,16 +61,27 @@ export async function changeDraft(
   const { id: projectId } = access.project;
   const user = access.actor.user!;
   const result = await database().transaction(async (tx) => {
-    await requireRevision(tx, projectId, how.expected);
+    const standing = await lockRevision(tx, projectId);
+    const repeated = how.key ? await madeBy(tx, access, how.key) : null;
+    if (repeated !== null)
+      return {
+        revision: repeated,
+        changed: await changedAt(tx, projectId, repeated),
+        label: '',
+        again: true,
+      };
+    await requireRevision(tx, projectId, how.expected, standing);
     await tx.execute(sql`set constraints all deferred`);
     const draft = new Draft(tx, projectId, how.pathOf ?? ((index) => `edits.${index}.fields`));
     await work(draft, tx);
     const touched = new Set(draft.changed.map(({ entity }) => entity));
     refuse(await integrityErrors(tx, projectId, touched, (id) => draft.pathById.get(id)));
     await tx.execute(sql`set constraints all immediate`);
-    return record(tx, access, how, draft.changed);
+    const made = await record(tx, access, how, draft.changed);
+    if (how.key && made.changed.length > 0) await remember(tx, access, how.key, made.revision);
+    return { ...made, again: false };
   });
-  if (result.changed.length > 0) {
+  if (result.changed.length > 0 && !result.again) {
     const actor = { id: user.id, name: user.name };
     publish(projectId, { revision: result.revision, action: how.action, label: result.label, actor });
   }
@@ -75,22 +89,28 @@ export async function changeDraft(
 }
 
 /** Locks the project's row until the end of the transaction: edits of one draft come one after the other. */
-async function requireRevision(
-  tx: Transaction,
-  projectId: string,
-  expected: ExpectedRevision,
-): Promise<void> {
+async function lockRevision(tx: Transaction, projectId: string): Promise<number> {
   const [row] = await tx
     .select({ revision: project.revision })
     .from(project)
     .where(eq(project.id, projectId))
     .for('update');
   if (!row) throw new Problem('NotFound');
-  if (expected === '*' || expected === row.revision) return;
+  return row.revision;
+}
+
+/** @throws Problem `StaleRevision` */
+async function requireRevision(
+  tx: Transaction,
+  projectId: string,
+  expected: ExpectedRevision,
+  revision: number,
+): Promise<void> {
+  if (expected === '*' || expected === revision) return;
   throw new Problem('StaleRevision', {
-    detail: `The draft is at revision ${row.revision}, not ${expected}. Look at what changed and send the edit again.`,
-    headers: { ETag: `"${row.revision}"` },
-    members: { revision: row.revision, changes: await changesSince(tx, projectId, expected) },
+    detail: `The draft is at revision ${revision}, not ${expected}. Look at what changed and send the edit again.`,
+    headers: { ETag: `"${revision}"` },
+    members: { revision, changes: await changesSince(tx, projectId, expected) },
   });
 }
 

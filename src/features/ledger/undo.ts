@@ -4,11 +4,9 @@ import { change, user } from '~/db/schema';
 import { demand, type Access } from '~/server/access';
 import { inBrief, Problem, type FieldError } from '~/server/problem';
 import type { Changed, Draft } from './apply';
-import type { Table } from './contract';
-import { ownStacks } from './history';
+import { changedAt, ownStacks } from './history';
 import { canonicalCells } from './order';
 import { changeDraft, type DraftResult, type ExpectedRevision } from './server';
-import type { LogRow } from './tables';
 
 /** Takes back the caller's last step that is not yet taken back. @throws Problem `StaleRevision`, `NothingToUndo` or `ChangedSince` */
 export const undo = (access: Access, expected: ExpectedRevision = '*'): Promise<DraftResult> =>
@@ -33,10 +31,10 @@ async function step(
     const still = (await ownStacks(tx, access))[action];
     if (still?.revision !== target.revision)
       throw new Problem(action === 'undo' ? 'NothingToUndo' : 'NothingToRedo');
-    const made = await rowsOf(tx, access, target.revision);
+    const made = await changedAt(tx, access.project.id, target.revision);
     const wanted = action === 'redo' ? made : made.reverse().map(inverse);
     await requireUnchanged(tx, access, draft, wanted, target.revision);
-    for (const one of wanted) await applyOne(draft, one);
+    await applyAll(draft, wanted);
     await requireNothingLeftBehind(tx, access, draft, wanted, target.revision);
   });
 }
@@ -64,26 +62,42 @@ async function requireNothingLeftBehind(
 
 const inverse = ({ before, after, ...rest }: Changed): Changed => ({ ...rest, before: after, after: before });
 
-async function rowsOf(tx: Transaction, access: Access, revision: number): Promise<Changed[]> {
-  const rows = await tx
-    .select()
-    .from(change)
-    .where(and(eq(change.project_id, access.project.id), eq(change.revision, revision)))
-    .orderBy(change.position);
-  return rows.map(({ entity, entity_id, before, after }) => ({
-    entity: entity as Table,
-    entity_id,
-    before: before as LogRow | null,
-    after: after as LogRow | null,
-  }));
+/** In their order, runs of one kind at once. */
+async function applyAll(draft: Draft, wanted: readonly Changed[]): Promise<void> {
+  const kind = ({ entity, before, after }: Changed): string =>
+    `${entity} ${before ? (after ? 'replace' : 'delete') : 'insert'}`;
+  for (let start = 0; start < wanted.length;) {
+    let end = start + 1;
+    while (end < wanted.length && kind(wanted[end]!) === kind(wanted[start]!)) end++;
+    await applyRun(draft, wanted.slice(start, end));
+    start = end;
+  }
 }
 
-async function applyOne(draft: Draft, { entity, entity_id, before, after }: Changed): Promise<void> {
-  if (!before) return draft.insert(entity, [after!]);
-  if (!after) return draft.delete(entity, [before]);
+async function applyRun(draft: Draft, run: readonly Changed[]): Promise<void> {
+  const { entity, before, after } = run[0]!;
+  if (!before)
+    return draft.insertAll(
+      entity,
+      run.flatMap((one) => one.after ?? []),
+    );
+  if (!after)
+    return draft.delete(
+      entity,
+      run.flatMap((one) => one.before ?? []),
+    );
   // A rename carries rows along, which then stand as wanted already.
-  const current = (await draft.rowsById(entity, [entity_id])).get(entity_id);
-  if (current) await draft.replace(entity, current, after);
+  const current = await draft.rowsById(
+    entity,
+    run.map(({ entity_id }) => entity_id),
+  );
+  await draft.replaceAll(
+    entity,
+    run.flatMap((one) => {
+      const standing = current.get(one.entity_id);
+      return standing && one.after ? [{ before: standing, after: one.after }] : [];
+    }),
+  );
 }
 
 /** Each row must stand as the step left it. @throws Problem `ChangedSince` naming who changed what */

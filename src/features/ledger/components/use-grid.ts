@@ -10,7 +10,7 @@ import {
   type RefObject,
 } from 'react';
 import { readCells, writeCells } from '../grid/clipboard';
-import { pasteAt } from '../grid/pending';
+import { pasteAt } from '../grid/paste';
 import { move, START, within, type Place, type Selection } from '../grid/selection';
 import type { GridProps } from './grid-props';
 

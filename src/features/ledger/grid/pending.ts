@@ -9,9 +9,12 @@ export interface PendingCell {
   readonly text: string;
   /** Null while it is only waiting to be saved with the rest of its row. */
   readonly problem: string | null;
+  /** The revision on the page when the cell was opened: what others changed since is not overwritten unseen. */
+  readonly since: number;
 }
 
 export interface PendingRow {
+  readonly table: Table;
   /** True for a row that the server does not know yet. */
   readonly isNew: boolean;
   /** Fields of a new row that no column has set. */
@@ -27,34 +30,72 @@ export interface CellChange {
   readonly text: string;
 }
 
-const KNOWN: PendingRow = { isNew: false, base: {}, cells: {} };
+const known = (table: Table): PendingRow => ({ table, isNew: false, base: {}, cells: {} });
+
+/** Where and on what revision cells are typed. */
+export interface Typing {
+  readonly table: Table;
+  readonly columns: readonly Column[];
+  readonly since: number;
+}
 
 /** Adds typed cells, each read by its column. */
 export function withChanges(
   pending: Pending,
   changes: readonly CellChange[],
-  columns: readonly Column[],
+  { table, columns, since }: Typing,
 ): Pending {
   const next = new Map(pending);
   for (const { row, key, text } of changes) {
     const column = columns.find((c) => c.key === key);
     if (!column) continue;
     const typed = column.read(text);
-    const there = next.get(row) ?? KNOWN;
+    const there = next.get(row) ?? known(table);
+    const first = Math.min(since, there.cells[key]?.since ?? since);
     next.set(row, {
       ...there,
-      cells: { ...there.cells, [key]: { text, problem: typed.ok ? null : typed.problem } },
+      cells: { ...there.cells, [key]: { text, problem: typed.ok ? null : typed.problem, since: first } },
     });
   }
   return next;
 }
 
-export const withNewRow = (pending: Pending, id: string, base: Readonly<Record<string, unknown>>): Pending =>
-  new Map(pending).set(id, { isNew: true, base, cells: {} });
+export const withNewRow = (
+  pending: Pending,
+  table: Table,
+  { id, base }: { readonly id: string; readonly base: Readonly<Record<string, unknown>> },
+): Pending => new Map(pending).set(id, { table, isNew: true, base, cells: {} });
+
+/** What is left once rows have been saved as they stood in `sent`: cells typed anew meanwhile stay. */
+export function settled(pending: Pending, sent: Pending, rows: Iterable<string>): Pending {
+  const next = new Map(pending);
+  for (const id of rows) {
+    const row = next.get(id);
+    if (!row) continue;
+    const saved = sent.get(id)?.cells ?? {};
+    const anew = Object.entries(row.cells).filter(([key, { text }]) => saved[key]?.text !== text);
+    if (anew.length === 0) next.delete(id);
+    else next.set(id, { ...known(row.table), cells: Object.fromEntries(anew) });
+  }
+  return next;
+}
 
 export function without(pending: Pending, rows: Iterable<string>): Pending {
   const next = new Map(pending);
   for (const row of rows) next.delete(row);
+  return next;
+}
+
+/** Cells of these rows as typed on a revision that the reader has seen. */
+export function rebased(pending: Pending, rows: Iterable<string>, since: number): Pending {
+  const next = new Map(pending);
+  for (const id of rows) {
+    const row = next.get(id);
+    if (!row) continue;
+    const cells: Record<string, PendingCell> = {};
+    for (const [key, cell] of Object.entries(row.cells)) cells[key] = { ...cell, since };
+    next.set(id, { ...row, cells });
+  }
   return next;
 }
 
@@ -81,6 +122,8 @@ export interface Ready {
   readonly edits: Edit[];
   /** Rows that the edits are made of, in the same order. */
   readonly rows: string[];
+  /** The oldest revision that one of their cells was opened on; null where none names one. */
+  readonly since: number | null;
   /** Cells that hold others back. */
   readonly problems: number;
 }
@@ -89,8 +132,10 @@ export interface Ready {
 export function readyEdits(pending: Pending, table: Table, columns: readonly Column[]): Ready {
   const edits: Edit[] = [];
   const rows: string[] = [];
+  let since: number | null = null;
   let problems = 0;
   for (const [id, row] of pending) {
+    if (row.table !== table) continue;
     const wrong = Object.values(row.cells).filter((cell) => cell.problem !== null).length;
     problems += wrong;
     if (wrong > 0 || missingIn(row, columns).length > 0) continue;
@@ -102,32 +147,7 @@ export function readyEdits(pending: Pending, table: Table, columns: readonly Col
         : { op: 'update', table, id, fields },
     );
     rows.push(id);
+    for (const cell of Object.values(row.cells)) since = Math.min(since ?? cell.since, cell.since);
   }
-  return { edits, rows, problems };
-}
-
-/** A pasted block of cells from an anchor on: cells beyond the last row make new rows, beyond the last column are dropped. */
-export function pasteAt(
-  cells: readonly (readonly string[])[],
-  anchor: { readonly row: number; readonly column: number },
-  rowIds: readonly string[],
-  columns: readonly Column[],
-  makeId: () => string,
-): { readonly changes: CellChange[]; readonly newRows: string[]; readonly dropped: number } {
-  const changes: CellChange[] = [];
-  const newRows: string[] = [];
-  let dropped = 0;
-  cells.forEach((line, i) => {
-    let row = rowIds[anchor.row + i];
-    if (row === undefined) {
-      row = makeId();
-      newRows.push(row);
-    }
-    line.forEach((text, j) => {
-      const column = columns[anchor.column + j];
-      if (column) changes.push({ row, key: column.key, text });
-      else dropped++;
-    });
-  });
-  return { changes, newRows, dropped };
+  return { edits, rows, since, problems };
 }

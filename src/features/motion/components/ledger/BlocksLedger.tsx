@@ -49,7 +49,7 @@ export function BlocksLedger({ draft, readOnly }: Props) {
   };
   const add = (): void => {
     const id = crypto.randomUUID();
-    draft.change('blocks', BLOCK_COLUMNS, [], [{ id, base: BLANK_BLOCK }]);
+    draft.change({ table: 'blocks', columns: BLOCK_COLUMNS, changes: [], made: [{ id, base: BLANK_BLOCK }] });
     setStart(id);
   };
   const display = (column: Column, value: unknown): ReactNode => {
@@ -91,12 +91,12 @@ export function BlocksLedger({ draft, readOnly }: Props) {
           </>
         }
         onChanges={(changes, ids) =>
-          draft.change(
-            'blocks',
-            BLOCK_COLUMNS,
+          draft.change({
+            table: 'blocks',
+            columns: BLOCK_COLUMNS,
             changes,
-            ids.map((id) => ({ id, base: BLANK_BLOCK })),
-          )
+            made: ids.map((id) => ({ id, base: BLANK_BLOCK })),
+          })
         }
         onEditing={(cell) => {
           draft.onCell(cell !== null);

@@ -50,7 +50,8 @@ function Standing({ draft, readOnly }: { readonly draft: Draft; readonly readOnl
     return (
       <span className="text-madder">{`${count(waiting.length, 'cell')} not saved: ${waiting[0]!.problem}.`}</span>
     );
-  if (pending.size > 0) return <>A new row is saved once its block, reference, age and pole are filled in.</>;
+  if ([...pending.values()].some((row) => row.isNew))
+    return <>A new row is saved once its block, reference, age and pole are filled in.</>;
   if (step) return <>{step}</>;
   return <span className="text-ink-2">{readOnly ?? 'Type in a cell, or paste from a spreadsheet.'}</span>;
 }
@@ -63,10 +64,16 @@ function Ways({ draft, add, addLabel }: Pick<Props, 'draft' | 'add' | 'addLabel'
           Keep mine
         </button>
       )}
-      {(draft.pending.size > 0 || draft.conflict !== null || draft.refused !== null) && (
-        <button className="button min-h-6 px-2" onClick={draft.putBack}>
-          {draft.conflict ? 'Keep theirs' : 'Put back'}
+      {draft.conflict ? (
+        <button className="button min-h-6 px-2" onClick={draft.takeTheirs}>
+          Keep theirs
         </button>
+      ) : (
+        (draft.pending.size > 0 || draft.refused !== null) && (
+          <button className="button min-h-6 px-2" onClick={draft.putBack}>
+            Put back
+          </button>
+        )
       )}
       <button className="button min-h-6 px-2" onClick={add}>
         {addLabel}

@@ -58,7 +58,7 @@ export function RotationsLedger({ draft, readOnly }: Props) {
         relative_to: like?.relative_to ?? '',
         evidence: like?.evidence ?? 'unconstrained',
       };
-      draft.change('rotations', columns, [], [{ id, base }]);
+      draft.change({ table: 'rotations', columns, changes: [], made: [{ id, base }] });
       setStart(id);
     },
     [draft, code, columns],
@@ -107,12 +107,12 @@ export function RotationsLedger({ draft, readOnly }: Props) {
         }
         empty={<Empty name={block?.name ?? null} canAdd={readOnly === null} onAdd={() => add(null)} />}
         onChanges={(changes, made) =>
-          draft.change(
-            'rotations',
+          draft.change({
+            table: 'rotations',
             columns,
             changes,
-            made.map((id) => ({ id, base: { ...BLANK_ROTATION, block: code ?? '' } })),
-          )
+            made: made.map((id) => ({ id, base: { ...BLANK_ROTATION, block: code ?? '' } })),
+          })
         }
         onEditing={(cell) => {
           draft.onCell(cell !== null);

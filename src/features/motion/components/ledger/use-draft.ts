@@ -4,29 +4,24 @@
  */
 import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { compileModel } from '../../../../kernel/rotations';
 import type { Model } from '../../../../kernel/rotations/types';
-import { EditRefused, lastLabel, overlap, sendEdits, sendUndo } from '../../../ledger/client';
+import { lastLabel, sendUndo, type EditRefused } from '../../../ledger/client';
 import type { BatchAnswer, Block, Edit, Rotation, Table } from '../../../ledger/contract';
-import type { Column } from '../../../ledger/grid/column';
 import {
   readyEdits,
+  rebased,
+  settled,
   withChanges,
   withNewRow,
   without,
-  type CellChange,
   type Pending,
 } from '../../../ledger/grid/pending';
+import { typedStep, withoutStep, type Typed, type TypedStep } from '../../../ledger/grid/typed-steps';
 import type { MotionsAnswer } from '../../contract';
 import { keys, useMotions, useTable } from '../../client';
+import { adoptAnswer } from './adopt';
+import { useSending, type Conflict, type Parcel } from './use-sending';
 import { useUnsent } from './use-unsent';
-
-export interface Conflict {
-  /** Rows that someone else changed meanwhile, with who it was. */
-  readonly rows: ReadonlySet<string>;
-  readonly words: string;
-  readonly revision: number;
-}
 
 export interface Draft {
   readonly blocks: readonly Block[];
@@ -40,24 +35,22 @@ export interface Draft {
   /** What the server said of the last save; null after a good one. */
   readonly refused: string | null;
   readonly conflict: Conflict | null;
-  readonly change: (
-    table: Table,
-    columns: readonly Column[],
-    changes: readonly CellChange[],
-    made: readonly NewRow[],
-  ) => void;
+  readonly change: (typed: Typed) => void;
   readonly remove: (table: Table, rows: readonly string[]) => void;
   readonly run: (edits: readonly Edit[], label?: string) => Promise<boolean>;
   readonly undo: (which: 'undo' | 'redo') => void;
   /** Told whenever a cell is opened, typed in, or left. */
   readonly onCell: (open: boolean) => void;
   readonly putBack: () => void;
+  /** The two ways out of a conflict. */
   readonly takeMine: () => void;
+  readonly takeTheirs: () => void;
 }
 
-export interface NewRow {
-  readonly id: string;
-  readonly base: Readonly<Record<string, unknown>>;
+/** Rows of one table that go together, as they stood when they were sent. */
+interface TypedParcel extends Parcel {
+  readonly rows: readonly string[];
+  readonly sent: Pending;
 }
 
 export function useDraft(slug: string, version: 'draft' | number = 'draft'): Draft {
@@ -65,81 +58,28 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
   const motions = useMotions(slug, version);
   const blocks = useTable<Block>(slug, version, 'blocks');
   const rotations = useTable<Rotation>(slug, version, 'rotations');
-  const [pending, setPending] = useState<Pending>(new Map());
-  const [saving, setSaving] = useState(false);
-  const [refused, setRefused] = useState<string | null>(null);
-  const [conflict, setConflict] = useState<(Conflict & { readonly edits: readonly Edit[] }) | null>(null);
 
+  const [pending, setPending] = useState<Pending>(new Map());
   const latest = useRef(pending);
-  useEffect(() => {
-    latest.current = pending;
-  }, [pending]);
+  const put = useCallback((next: Pending) => {
+    latest.current = next;
+    setPending(next);
+  }, []);
+  const [conflict, showConflict] = useState<Conflict | null>(null);
+  const held = useRef<Conflict | null>(null);
+  const setConflict = useCallback((next: Conflict | null) => {
+    held.current = next;
+    showConflict(next);
+  }, []);
+
+  const adopt = useCallback((answer: BatchAnswer) => adoptAnswer(client, slug, answer), [client, slug]);
+  const { saving, refused, forgive, inTurn, sendParcel, sendStep } = useSending(slug, adopt);
   const unsent = useUnsent(pending.size > 0);
 
-  /** Of what the page holds at the moment of sending, which may be later than when the cell was typed. */
   const revisionNow = useCallback(
     () => client.getQueryData<MotionsAnswer>(keys.table(slug, version, 'motions'))?.revision ?? 0,
     [client, slug, version],
   );
-
-  /** Puts an answer into what every part of the page reads, and compiles the model anew. */
-  const adopt = useCallback(
-    (answer: BatchAnswer) => {
-      for (const table of new Set([...answer.items, ...answer.deleted].map((item) => item.table))) {
-        client.setQueryData<readonly { id: string }[]>(keys.table(slug, 'draft', table), (rows) =>
-          merged(rows ?? [], answer, table),
-        );
-      }
-      const [b, r] = (['blocks', 'rotations'] as const).map((t) =>
-        client.getQueryData(keys.table(slug, 'draft', t)),
-      );
-      client.setQueryData<MotionsAnswer>(keys.table(slug, 'draft', 'motions'), {
-        ...compileModel(b as Block[], r as Rotation[]),
-        version: 'draft',
-        revision: answer.revision,
-      });
-      void client.invalidateQueries({ queryKey: keys.project(slug), exact: true });
-    },
-    [client, slug],
-  );
-
-  const send = useCallback(
-    async ({ edits, work, again, onRefused }: Sending): Promise<boolean> => {
-      setSaving(true);
-      try {
-        adopt(await work());
-        setRefused(null);
-        setConflict(null);
-        if (again) unsent.forget(again.key);
-        return true;
-      } catch (error) {
-        if (!(error instanceof EditRefused)) {
-          setRefused(
-            again
-              ? 'The server did not answer. What you typed is kept here and sent again.'
-              : 'The server did not answer. Try again.',
-          );
-          if (again) unsent.keep(again.key, again.send);
-          return false;
-        }
-        if (again) unsent.forget(again.key);
-        if (error.revision !== null) {
-          const found = conflictOf(error, edits);
-          setConflict({ ...found, revision: error.revision, edits });
-          await client.invalidateQueries({ queryKey: keys.project(slug) });
-        } else {
-          setRefused(error.message);
-          onRefused?.(error);
-        }
-        return false;
-      } finally {
-        setSaving(false);
-      }
-    },
-    [adopt, client, slug, unsent],
-  );
-
-  /** The revision on the page when the cell under edit was opened: what others changed since is not overwritten unseen. */
   const editedSince = useRef<number | null>(null);
   const onCell = useCallback(
     (open: boolean) => {
@@ -149,85 +89,154 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
     [revisionNow],
   );
 
+  /** Parcels without an answer, by table: sent again as they were before anything typed since. */
+  const lost = useRef(new Map<Table, TypedParcel>());
+
   const save = useCallback(
-    (next: Pending, table: Table, columns: readonly Column[]): Promise<boolean> => {
-      const attempt = async (now: Pending): Promise<boolean> => {
-        const { edits, rows } = readyEdits(now, table, columns);
-        if (edits.length === 0) return true;
-        const done = await send({
-          edits,
-          work: () => sendEdits(slug, since ?? revisionNow(), edits),
-          again: { key: table, send: () => attempt(latest.current) },
-          onRefused: (error) => setPending((map) => marked(map, rows, error)),
-        });
-        if (done) setPending((map) => without(map, rows));
-        return done;
-      };
-      const since = editedSince.current;
-      setPending(next);
-      latest.current = next;
-      return attempt(next);
-    },
-    [send, slug, revisionNow],
-  );
-
-  const change = useCallback<Draft['change']>(
-    (table, columns, changes, made) => {
-      const started = made.reduce<Pending>((map, row) => withNewRow(map, row.id, row.base), pending);
-      void save(withChanges(started, changes, columns), table, columns);
-    },
-    [pending, save],
-  );
-
-  const run = useCallback(
-    (given: readonly Edit[], label?: string): Promise<boolean> => {
-      // Rows are named here, so that an edit whose answer was lost is not made twice.
-      const edits = given.map((edit) =>
-        edit.op === 'create' && edit.id === undefined ? { ...edit, id: crypto.randomUUID() } : edit,
-      );
-      const key = crypto.randomUUID();
+    (typed: Pick<Typed, 'table' | 'columns'>): Promise<boolean> => {
+      const { table } = typed;
       const attempt = (): Promise<boolean> =>
-        send({
-          edits,
-          work: () => sendEdits(slug, revisionNow(), edits, label),
-          again: { key, send: attempt },
+        inTurn(async () => {
+          for (let whole = true; ;) {
+            const parcel =
+              lost.current.get(table) ?? parcelOf(latest.current, typed, held.current, revisionNow());
+            if (!parcel) {
+              unsent.forget(table);
+              return whole;
+            }
+            const outcome = await sendParcel(parcel);
+            if (outcome.is === 'lost') {
+              lost.current.set(table, parcel);
+              unsent.keep(table, attempt);
+              return false;
+            }
+            lost.current.delete(table);
+            if (outcome.is === 'taken') put(settled(latest.current, parcel.sent, parcel.rows));
+            else whole = false;
+            if (outcome.is === 'refused') {
+              const told = marked(latest.current, parcel.rows, outcome.error);
+              if (!told) return false;
+              put(told);
+            }
+            if (outcome.is === 'conflict') {
+              setConflict(joined(held.current, outcome.conflict));
+              void client.invalidateQueries({ queryKey: keys.project(slug) });
+            }
+          }
         });
       return attempt();
     },
-    [send, slug, revisionNow],
+    [client, inTurn, put, revisionNow, sendParcel, setConflict, slug, unsent],
+  );
+
+  const columnsOf = useRef(new Map<Table, Typed['columns']>());
+  const steps = useRef<TypedStep[]>([]);
+  const undone = useRef<TypedStep[]>([]);
+  const type = useCallback(
+    (typed: Typed) => {
+      const { table, columns, changes, made } = typed;
+      columnsOf.current.set(table, columns);
+      steps.current.push(typedStep(latest.current, typed));
+      const since = editedSince.current ?? revisionNow();
+      const started = made.reduce((map, row) => withNewRow(map, table, row), latest.current);
+      put(withChanges(started, changes, { table, columns, since }));
+      void save(typed);
+    },
+    [put, revisionNow, save],
+  );
+  const change = useCallback<Draft['change']>(
+    (typed) => {
+      undone.current = [];
+      type(typed);
+    },
+    [type],
+  );
+
+  const heldRun = useRef<Parcel | null>(null);
+  const run = useCallback(
+    (given: readonly Edit[], label?: string): Promise<boolean> => {
+      const edits = given.map((edit) =>
+        edit.op === 'create' && edit.id === undefined ? { ...edit, id: crypto.randomUUID() } : edit,
+      );
+      const parcel: Parcel = { edits, label, since: revisionNow(), key: crypto.randomUUID() };
+      const attempt = (): Promise<boolean> =>
+        inTurn(async () => {
+          const outcome = await sendParcel(parcel);
+          if (outcome.is === 'lost') unsent.keep(parcel.key, attempt);
+          else unsent.forget(parcel.key);
+          if (outcome.is === 'conflict') {
+            heldRun.current = parcel;
+            setConflict(joined(held.current, outcome.conflict));
+            void client.invalidateQueries({ queryKey: keys.project(slug) });
+          }
+          return outcome.is === 'taken';
+        });
+      return attempt();
+    },
+    [client, inTurn, revisionNow, sendParcel, setConflict, slug, unsent],
   );
 
   const remove = useCallback<Draft['remove']>(
     (table, ids) => {
-      const known = ids.filter((id) => !pending.get(id)?.isNew);
-      setPending((now) => without(now, ids));
+      const known = ids.filter((id) => !latest.current.get(id)?.isNew);
+      put(without(latest.current, ids));
       if (known.length > 0) void run(known.map((id) => ({ op: 'delete', table, id })));
     },
-    [pending, run],
+    [put, run],
   );
 
   const putBack = useCallback(() => {
-    setPending(new Map());
+    put(new Map());
+    lost.current.clear();
+    steps.current = [];
     unsent.clear();
-    setRefused(null);
+    forgive();
     setConflict(null);
-  }, [unsent]);
+  }, [forgive, put, setConflict, unsent]);
 
-  const [step, setStep] = useState<string | null>(null);
-  /** Names the step that was taken back or done again: nobody should have to guess. */
-  const tellStep = useCallback(
-    (which: 'undo' | 'redo') => async (done: boolean) => {
-      if (!done) return;
-      const label = await lastLabel(slug).catch(() => null);
-      setStep(label === null ? null : `${which === 'undo' ? 'Undone' : 'Done again'}: ${label}.`);
-    },
-    [slug],
+  const takeTheirs = useCallback(() => {
+    heldRun.current = null;
+    if (held.current) put(without(latest.current, held.current.rows));
+    setConflict(null);
+  }, [put, setConflict]);
+
+  const takeMine = useCallback(() => {
+    const now = held.current;
+    if (!now) return;
+    setConflict(null);
+    put(rebased(latest.current, now.rows, now.revision));
+    const tables = new Set([...now.rows].flatMap((id) => latest.current.get(id)?.table ?? []));
+    for (const table of tables) void save({ table, columns: columnsOf.current.get(table) ?? [] });
+    const { edits, label } = heldRun.current ?? { edits: [] };
+    heldRun.current = null;
+    if (edits.length > 0) void run(edits, label);
+  }, [put, run, save, setConflict]);
+
+  const [step, tellStep] = useStepWords(slug);
+  /** What is typed and not saved is the last thing done: it goes first, step by step. */
+  const undo = useCallback<Draft['undo']>(
+    (which) =>
+      void inTurn(async () => {
+        if (which === 'redo') {
+          const again = undone.current.pop();
+          if (again) return type(again);
+        }
+        while (which === 'undo' && latest.current.size > 0) {
+          const typed = steps.current.pop();
+          if (!typed) return putBack();
+          const left = withoutStep(latest.current, typed);
+          if (!left) continue;
+          undone.current.push(typed);
+          lost.current.delete(typed.table);
+          put(left);
+          forgive();
+          return undefined;
+        }
+        if (await sendStep(() => sendUndo(slug, which))) tellStep(which);
+        return undefined;
+      }),
+    [forgive, inTurn, put, putBack, sendStep, slug, tellStep, type],
   );
-  useEffect(() => {
-    if (step === null) return undefined;
-    const timer = window.setTimeout(() => setStep(null), STEP_SHOWN_MS);
-    return () => window.clearTimeout(timer);
-  }, [step]);
 
   return useMemo(
     () => ({
@@ -242,21 +251,11 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       change,
       remove,
       run,
-      undo: (which) => {
-        // What is typed and not saved is the last thing done: it goes first.
-        if (which === 'undo' && pending.size > 0) putBack();
-        else void send({ edits: [], work: () => sendUndo(slug, which, revisionNow()) }).then(tellStep(which));
-      },
+      undo,
       onCell,
       putBack,
-      takeMine: () => {
-        if (!conflict) return;
-        const { edits, revision: now } = conflict;
-        const rows = edits.flatMap((edit) => edit.id ?? []);
-        void send({ edits, work: () => sendEdits(slug, now, edits) }).then((done) => {
-          if (done) setPending((map) => without(map, rows));
-        });
-      },
+      takeMine,
+      takeTheirs,
     }),
     [
       blocks.data,
@@ -269,58 +268,69 @@ export function useDraft(slug: string, version: 'draft' | number = 'draft'): Dra
       change,
       remove,
       run,
-      send,
-      slug,
-      revisionNow,
+      undo,
       onCell,
       putBack,
+      takeMine,
+      takeTheirs,
       step,
-      tellStep,
     ],
   );
 }
 
 const STEP_SHOWN_MS = 8_000;
 
-interface Sending {
-  readonly edits: readonly Edit[];
-  readonly work: () => Promise<BatchAnswer>;
-  /** How to send the same once more when no answer came; without it the sender has to ask again. */
-  readonly again?: { readonly key: string; readonly send: () => Promise<boolean> };
-  readonly onRefused?: (error: EditRefused) => void;
-}
-
-function conflictOf(error: EditRefused, edits: readonly Edit[]): Pick<Conflict, 'rows' | 'words'> {
-  const rows = new Set(overlap(edits, error.changes));
-  const last = error.changes.findLast((entry) => entry.changes?.some(({ entity_id }) => rows.has(entity_id)));
-  if (!last) return { rows, words: 'The draft has moved on. Yours is kept beside it.' };
-  const at = new Date(last.at).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
-  return { rows, words: `Changed by ${last.actor?.name ?? 'someone'} at ${at}. Yours is kept beside it.` };
-}
-
-function merged(rows: readonly { id: string }[], answer: BatchAnswer, table: string): { id: string }[] {
-  const gone = new Set(answer.deleted.filter((d) => d.table === table).map((d) => d.id));
-  const fresh = new Map(
-    answer.items
-      .filter((i) => i.table === table)
-      .map((i) => [i.row['id'] as string, i.row as { id: string }]),
+/** Names the step that was taken back or done again: nobody should have to guess. */
+function useStepWords(slug: string): [string | null, (which: 'undo' | 'redo') => void] {
+  const [step, setStep] = useState<string | null>(null);
+  const tell = useCallback(
+    (which: 'undo' | 'redo') =>
+      void lastLabel(slug)
+        .catch(() => null)
+        .then((label) =>
+          setStep(label === null ? null : `${which === 'undo' ? 'Undone' : 'Done again'}: ${label}.`),
+        ),
+    [slug],
   );
-  const kept = rows.filter((row) => !gone.has(row.id)).map((row) => fresh.get(row.id) ?? row);
-  const known = new Set(rows.map((row) => row.id));
-  return [...kept, ...[...fresh.values()].filter((row) => !known.has(row.id))];
+  useEffect(() => {
+    if (step === null) return undefined;
+    const timer = window.setTimeout(() => setStep(null), STEP_SHOWN_MS);
+    return () => window.clearTimeout(timer);
+  }, [step]);
+  return [step, tell];
 }
 
-/** The server's problems, put beside the cells that they are about. */
-function marked(pending: Pending, rows: readonly string[], error: EditRefused): Pending {
+/** What can be saved now; rows in conflict wait for the reader. */
+function parcelOf(
+  pending: Pending,
+  { table, columns }: Pick<Typed, 'table' | 'columns'>,
+  held: Conflict | null,
+  now: number,
+): TypedParcel | null {
+  const free = held ? without(pending, held.rows) : pending;
+  const { edits, rows, since } = readyEdits(free, table, columns);
+  if (edits.length === 0) return null;
+  return { edits, rows, sent: pending, since: since ?? now, key: crypto.randomUUID() };
+}
+
+const joined = (before: Conflict | null, now: Conflict): Conflict => ({
+  ...now,
+  rows: new Set([...(before?.rows ?? []), ...now.rows]),
+});
+
+/** The server's problems, put beside the cells that they are about; null where they are about none. */
+function marked(pending: Pending, rows: readonly string[], error: EditRefused): Pending | null {
   const next = new Map(pending);
+  let told = 0;
   for (const { edit, field, problem } of error.cells) {
     const id = rows[edit];
     const row = id === undefined ? undefined : next.get(id);
     if (!id || !row) continue;
     const key = field ?? Object.keys(row.cells)[0];
     if (key === undefined) continue;
-    const text = row.cells[key]?.text ?? '';
-    next.set(id, { ...row, cells: { ...row.cells, [key]: { text, problem } } });
+    const cell = row.cells[key] ?? { text: '', since: 0 };
+    told++;
+    next.set(id, { ...row, cells: { ...row.cells, [key]: { ...cell, problem } } });
   }
-  return next;
+  return told > 0 ? next : null;
 }

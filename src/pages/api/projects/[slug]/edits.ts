@@ -1,6 +1,7 @@
 import { batchAnswerOf, expectedRevision } from '~/features/ledger/answers';
 import { batchAnswer, editBatch } from '~/features/ledger/contract';
 import { EDIT_LIMIT_BYTES, withRevision } from '~/features/ledger/routes';
+import { requestKey } from '~/features/ledger/repeats';
 import { editDraft } from '~/features/ledger/server';
 import { projectRoute } from '~/server/route';
 
@@ -18,6 +19,7 @@ export const POST = projectRoute(
       expected: expectedRevision(request),
       action: 'edit',
       label,
+      key: requestKey(request),
     });
     return withRevision(await batchAnswerOf(access, result), result);
   },
