@@ -13,7 +13,7 @@ export const test = base.extend<{ page: Page }>({
     // A refused form answers 4xx on purpose, and a test takes the network away on purpose: the browser reports both.
     const unexpected = errors.filter(
       (text) =>
-        !/Failed to load resource: (the server responded with a status of 4\d\d|net::ERR_INTERNET_DISCONNECTED)/.test(
+        !/Failed to load resource: (the server responded with a status of 4\d\d|net::ERR_(INTERNET_DISCONNECTED|CONNECTION_RESET))/.test(
           text,
         ),
     );
