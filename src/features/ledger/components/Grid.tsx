@@ -142,18 +142,19 @@ function templateOf(slots: readonly Slot[], rows: readonly GridRow[]): string {
       if (!column?.numeric) return of.width;
       const longest = rows
         .slice(0, MEASURED)
-        .reduce(
-          (most, row) =>
-            Math.max(most, shownLength(row.fields[column.key], /age|_ma$/.test(column.key) ? 1 : 2)),
-          0,
-        );
+        .reduce((most, row) => Math.max(most, shownLength(row, column.key)), 0);
       return `max(${of.width}, ${Math.ceil(longest * DIGIT + PADDING)}px)`;
     })
     .join(' ');
 }
 
-const shownLength = (value: unknown, decimals: number): number =>
-  typeof value !== 'number' ? 0 : Math.max(String(value).length, value.toFixed(decimals).length);
+/** A computed value is shown rounded, an entered one as it was entered. */
+function shownLength({ fields, computed }: GridRow, key: string): number {
+  const value = fields[key];
+  if (typeof value !== 'number') return 0;
+  const rounded = value.toFixed(/age|_ma$/.test(key) ? 1 : 2).length;
+  return computed ? rounded : Math.max(String(value).length, rounded);
+}
 
 function rowClass(row: GridRow): string {
   const base = 'absolute inset-x-0 top-0 grid grid-cols-(--columns) border-b border-rule';
