@@ -676,9 +676,35 @@ describe('the database itself refuses', () => {
         disappears_ma: 20,
       }),
     ).rejects.toThrow();
-    await expect(
-      app.db.update(geometry).set({ vertices: 3 }).where(eq(geometry.sha256, 'x')),
-    ).resolves.toBeDefined();
     await expect(app.db.execute(sql`update project set revision = -1`)).rejects.toThrow();
+  });
+
+  it('any change of a stored geometry, and its going while something is drawn with it', async () => {
+    await add(app, team, 'blocks', terrane('sable'));
+    await add(app, team, 'outlines', { block: 'sable', geometry: square(10, 10) });
+    const stored = await app.db.select().from(geometry);
+    expect(stored).toHaveLength(1);
+    const { sha256 } = stored[0]!;
+    const refusal = (query: PromiseLike<unknown>) => query.then(() => 'changed', (error: { cause: { code: string; constraint: string } }) => `${error.cause.code} ${error.cause.constraint}`); // prettier-ignore
+    // PostgreSQL 15 manual, appendix A: 23000 integrity constraint violation, 23503 foreign key violation.
+    const own = eq(geometry.sha256, sha256);
+    for (const set of [
+      { vertices: stored[0]!.vertices + 1 },
+      { sha256: 'f'.repeat(64) },
+      { geojson: { type: 'Point', coordinates: [0, 0] } as never },
+    ])
+      expect(await refusal(app.db.update(geometry).set(set).where(own))).toBe('23000 geometry_immutable');
+    const kept = '23503 block_outline_sha256_geometry_sha256_fk';
+    expect(await refusal(app.db.delete(geometry).where(own))).toBe(kept);
+    expect(await app.db.select().from(geometry)).toEqual(stored);
+
+    const [{ id }] = (await list('outlines')).items;
+    const released = await app.call('POST', team.at('versions'), { as: team.lead, body: { title: 'First' } });
+    expect(released.status).toBe(201);
+    await app.call('DELETE', team.at(`outlines/${id}`), { as: team.lead, revision: '*' });
+    expect(await refusal(app.db.delete(geometry).where(own))).toBe(
+      '23503 version_geometry_sha256_geometry_sha256_fk',
+    );
+    expect(await app.db.select().from(geometry)).toEqual(stored);
   });
 });

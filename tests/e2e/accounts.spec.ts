@@ -1,4 +1,4 @@
-import { DEMO, expect, signInAs, test, type DemoRole } from './support';
+import { DEMO, expect, ownProject, signInAs, test, type DemoRole } from './support';
 
 for (const [role, name] of [
   ['lead', 'Mara Kell'],
@@ -57,9 +57,30 @@ test('a forgotten password is set anew by the link in the outbox', async ({ page
   await page.waitForURL('**/projects');
 });
 
-test('another team’s project is not to be found', async ({ page }) => {
-  await page.goto('/projects/none-of-yours/workbench');
-  await expect(page.getByRole('heading', { name: 'Nothing here' })).toBeVisible();
+test('another team’s project is not to be found', async ({ page, browser }) => {
+  const slug = 'theirs-alone';
+  const theirs = await browser.newContext();
+  const owner = await theirs.newPage();
+  await ownProject(owner, slug);
+  const places = [`/projects/${slug}`, `/projects/${slug}/workbench`, `/api/projects/${slug}`, `/api/projects/${slug}/blocks`, `/api/projects/${slug}/motions?version=draft`]; // prettier-ignore
+  for (const place of places) expect((await owner.request.get(place)).status(), place).toBe(200);
+
+  for (const standing of ['visitor', 'member of another team']) {
+    if (standing !== 'visitor') await ownProject(page, 'mine-alone');
+    for (const place of places)
+      expect((await page.request.get(place)).status(), `${place} as ${standing}`).toBe(404);
+    const shown = await page.goto(`/projects/${slug}/workbench`);
+    expect(shown!.status()).toBe(404);
+    await expect(page.getByRole('heading', { name: 'Nothing here' })).toBeVisible();
+    await expect(page.getByText('Two blocks')).toHaveCount(0);
+    const origin = new URL(page.url()).origin;
+    const gone = await page.request.delete(`/api/projects/${slug}`, { headers: { origin } });
+    expect(gone.status()).toBe(404);
+  }
+  await page.goto('/projects');
+  await expect(page.getByRole('link', { name: 'Two blocks' })).toHaveCount(1);
+  expect((await owner.request.get(`/api/projects/${slug}`)).status()).toBe(200);
+  await theirs.close();
 });
 
 test('an instructor sees no way to edit, and is told why', async ({ page }) => {

@@ -1,6 +1,6 @@
 /** What every browser test shares: a page whose console errors fail the test, signing in, the axe check. */
 import AxeBuilder from '@axe-core/playwright';
-import { test as base, expect, type Page } from '@playwright/test';
+import { test as base, expect, type Locator, type Page } from '@playwright/test';
 
 export const test = base.extend<{ page: Page }>({
   page: async ({ page }, use) => {
@@ -32,6 +32,15 @@ export async function signInAs(page: Page, role: DemoRole, next = '/projects'): 
   const name = role === 'admin' ? /site admin$|, admin$/ : new RegExp(`, ${role}$`);
   await page.getByRole('button', { name }).click();
   await page.waitForURL((url) => url.pathname === next.split('?')[0]);
+}
+
+/** Presses Tab until the focus is on an element or within it. */
+export async function tabTo(page: Page, target: Locator, most = 80): Promise<void> {
+  for (let i = 0; i < most; i++) {
+    await page.keyboard.press('Tab');
+    if (await target.evaluate((element) => element.contains(document.activeElement))) return;
+  }
+  throw new Error(`not reached by ${most} presses of Tab: ${String(target)}`);
 }
 
 /** WCAG 2.2 A and AA by axe. */

@@ -1,6 +1,8 @@
 /** The workbench in a real browser, on the demo: age, held still, drift path, ledger and undo, by mouse and by keyboard only. */
+import { readFileSync } from 'node:fs';
 import type { Page } from '@playwright/test';
-import { DEMO, expect, signInAs, test } from './support';
+import type { Feature, FeatureCollection, LineString, Point, Position } from 'geojson';
+import { DEMO, expect, signInAs, tabTo, test } from './support';
 
 const LINK = `${DEMO}/workbench?age=62.4&frame=spin-axis&block=sable`;
 const slider = (page: Page) => page.getByRole('slider', { name: /age/i });
@@ -48,28 +50,120 @@ test.describe('reading', () => {
     await expect(page.getByText('21.1° S, 36.6° E', { exact: true })).toHaveCount(0);
   });
 
+  const panel = (page: Page) => page.getByRole('tabpanel');
+  const keep = async (page: Page, label: string, value: string): Promise<void> => {
+    const field = panel(page).getByLabel(label, { exact: true });
+    await field.fill(value);
+    await field.press('Enter');
+  };
+  const pathTable = (page: Page) => panel(page).getByRole('region', { name: 'Drift path' });
+
+  /** Rows of the table as numbers: "21.1° S, 36.6° E" is −21.1, 36.6. */
+  async function tableRows(page: Page): Promise<{ age: number; lat: number; lon: number }[]> {
+    const rows = await pathTable(page).locator('tbody tr').all();
+    return Promise.all(
+      rows.map(async (row) => {
+        const [age = '', at = ''] = await row.getByRole('cell').allInnerTexts();
+        const read = /([\d.]+)°\s*([NS]),\s*([\d.]+)°\s*([EW])/.exec(at);
+        if (!read) return { age: Number(age.replace('▏', '').trim()), lat: NaN, lon: NaN };
+        return {
+          age: Number(age.replace('▏', '').trim()),
+          lat: Number(read[1]) * (read[2] === 'S' ? -1 : 1),
+          lon: Number(read[3]) * (read[4] === 'W' ? -1 : 1),
+        };
+      }),
+    );
+  }
+
+  async function download(page: Page, name: string): Promise<string> {
+    const waiting = page.waitForEvent('download');
+    await panel(page).getByRole('link', { name }).click();
+    return readFileSync(await (await waiting).path(), 'utf8');
+  }
+
   test('a drift path is set, read as a table and exported', async ({ page }) => {
     await page.goto(LINK);
     await page.getByRole('tab', { name: /Drift path/ }).click();
-    const panel = page.getByRole('tabpanel');
-    await panel.getByLabel('From, Ma').fill('100');
-    await panel.getByLabel('From, Ma').press('Enter');
-    await panel.getByLabel('Step, Myr').fill('20');
-    await panel.getByLabel('Step, Myr').press('Enter');
+    await keep(page, 'From, Ma', '100');
+    await keep(page, 'Step, Myr', '20');
     await expect(page).toHaveURL(/path=/);
-    const rows = panel.getByRole('row');
-    await expect(rows.filter({ hasText: /^▏?100/ })).toHaveCount(1);
-    const waiting = page.waitForEvent('download');
-    await panel.getByRole('link', { name: 'CSV' }).click();
-    const path = await (await waiting).path();
-    const { readFileSync } = await import('node:fs');
-    const csv = readFileSync(path, 'utf8');
-    expect(csv.split(/\r?\n/)[0]).toContain('age_ma');
-    expect(csv).toMatch(/sable,spin-axis,draft,100,/);
-    const reopened = page.url();
-    await page.goto(reopened);
+    await expect(
+      panel(page)
+        .getByRole('row')
+        .filter({ hasText: /^▏?100/ }),
+    ).toHaveCount(1);
+    const shown = await tableRows(page);
+
+    const csv = (await download(page, 'CSV')).trim().split(/\r?\n/);
+    expect(csv[0]).toContain('block,relative_to,version,age_ma,lat,lon');
+    expect(csv).toHaveLength(shown.length + 1);
+    expect(csv.some((line) => line.startsWith('sable,spin-axis,draft,100,'))).toBe(true);
+
+    const file = JSON.parse(await download(page, 'GeoJSON')) as FeatureCollection<Point | LineString>;
+    const marks = file.features.filter((one): one is Feature<Point> => one.geometry.type === 'Point');
+    const line = file.features.find((one): one is Feature<LineString> => one.geometry.type === 'LineString')!;
+    expect(marks).toHaveLength(shown.length);
+    const rounded = ([lon = 0, lat = 0]: Position) => ({
+      lat: Number(lat.toFixed(1)),
+      lon: Number(lon.toFixed(1)),
+    });
+    for (const [i, at] of [marks[0]!, marks.at(-1)!].entries()) {
+      const { age, ...place } = (i === 0 ? shown[0] : shown.at(-1))!;
+      expect(at.properties).toMatchObject({ block: 'sable', relative_to: 'spin-axis' });
+      expect(Number((at.properties as { age_ma: number }).age_ma.toFixed(1))).toBe(age);
+      expect(rounded(at.geometry.coordinates)).toEqual(place);
+      const end = i === 0 ? line.geometry.coordinates[0]! : line.geometry.coordinates.at(-1)!;
+      expect(rounded(end)).toEqual(place);
+    }
+    expect(new Set([shown[0]!.age, shown.at(-1)!.age])).toEqual(new Set([0, 100]));
+
+    await page.goto(page.url());
     await page.getByRole('tab', { name: /Drift path/ }).click();
     await expect(page.getByLabel('Step, Myr')).toHaveValue('20');
+  });
+
+  test('a drift path’s point is typed', async ({ page }) => {
+    await page.goto(`${LINK}&path=0,60,20`);
+    await page.getByRole('tab', { name: /Drift path/ }).click();
+    await keep(page, 'Today, °N', '\u221228.5');
+    await keep(page, '°E', '42,5');
+    await expect(page).toHaveURL(/lat=-28\.5&lon=42\.5/);
+    await expect(panel(page)).toContainText('28.5° S, 42.5° E today');
+    // At 0 Ma a point lies where it lies, in whatever frame.
+    expect((await tableRows(page)).find(({ age }) => age === 0)).toEqual({ age: 0, lat: -28.5, lon: 42.5 });
+    const asked = await page.request.get('/api/projects/lantern-sea/drift-path?version=draft&block=sable&lat=-28.5&lon=42.5&older_ma=60&younger_ma=0&step_ma=20&relative_to=spin-axis'); // prettier-ignore
+    const { points } = (await asked.json()) as { points: { age_ma: number; lat: number; lon: number }[] };
+    const figures = (rows: { age: number; lat: number; lon: number }[]) =>
+      rows.map(({ age, lat, lon }) => [age, lat, lon].map((n) => n.toFixed(1)).join(' ')).sort();
+    expect(figures(await tableRows(page))).toEqual(
+      figures(points.map(({ age_ma, lat, lon }) => ({ age: age_ma, lat, lon }))),
+    );
+    await keep(page, 'Today, °N', '91');
+    await expect(panel(page).getByLabel('Today, °N', { exact: true })).toHaveAttribute(
+      'aria-invalid',
+      'true',
+    );
+    await expect(page).toHaveURL(/lat=-28\.5&lon=42\.5/);
+  });
+
+  test('a drift path’s point is clicked on the globe', async ({ page }) => {
+    // At 0 Ma blocks lie at their present places: what is clicked in the middle of the globe is the centre of the view.
+    await page.goto(`${DEMO}/workbench?age=0&frame=spin-axis&block=quill&centre=-29.6,41.2`);
+    await page.getByRole('tab', { name: /Drift path/ }).click();
+    const before = await pathTable(page).innerText();
+    const box = (await page.getByRole('application').first().boundingBox())!;
+    await page.mouse.click(box.x + box.width / 2, box.y + box.height / 2);
+    await expect(page).toHaveURL(/block=sable/);
+    await expect(page).toHaveURL(/lat=/);
+    const clicked = new URL(page.url()).searchParams;
+    const [lat, lon] = [Number(clicked.get('lat')), Number(clicked.get('lon'))];
+    // A pixel is some 0.2° at this size.
+    expect(Math.abs(lat + 29.6)).toBeLessThan(0.25);
+    expect(Math.abs(lon - 41.2)).toBeLessThan(0.25);
+    await expect(panel(page)).toContainText(`${(-lat).toFixed(1)}° S, ${lon.toFixed(1)}° E today`);
+    expect(await pathTable(page).innerText()).not.toBe(before);
+    const present = (await tableRows(page)).find(({ age }) => age === 0)!;
+    expect(present).toEqual({ age: 0, lat: Number(lat.toFixed(1)), lon: Number(lon.toFixed(1)) });
   });
 
   test('then and now, and the map', async ({ page }) => {
@@ -205,9 +299,14 @@ test.describe('editing', () => {
   });
 
   test('by keyboard only: age, jump, cell, undo', async ({ page }) => {
-    await signInAs(page, 'researcher', `${DEMO}/workbench?age=60&frame=spin-axis&block=sable`);
+    const bench = `${DEMO}/workbench?age=60&frame=spin-axis&block=sable`;
+    await page.goto(`/sign-in?next=${encodeURIComponent(bench)}`);
+    await tabTo(page, page.getByRole('button', { name: /, researcher$/ }));
+    await page.keyboard.press('Enter');
+    await page.waitForURL((url) => url.pathname === `${DEMO}/workbench`);
     await expect(grid(page)).toBeVisible();
-    await page.getByRole('heading', { name: 'What rests on it' }).click();
+    // The address is completed by the script that listens for keys.
+    await expect(page).toHaveURL(/centre=/);
     await page.keyboard.press('Shift+ArrowDown');
     await expect(page).toHaveURL(/age=70/);
     await page.keyboard.press('Alt+ArrowUp');
@@ -216,7 +315,7 @@ test.describe('editing', () => {
     await page.keyboard.type('66');
     await page.keyboard.press('Enter');
     await expect(page).toHaveURL(/age=66(&|$)/);
-    await grid(page).focus();
+    await tabTo(page, grid(page));
     await page.keyboard.press('Control+Home');
     for (let i = 0; i < 7; i++) await page.keyboard.press('ArrowDown');
     await page.keyboard.press('End');

@@ -9,7 +9,7 @@ import type { Link, Model, Status, Vector3 } from './types';
 import { windowedVelocity } from './velocity-window';
 
 /** Worst error of a speed, mm/yr, for rates up to 10°/Myr. */
-export const SPEED_ERROR_MM_YR = 1e-9;
+export const SPEED_ERROR_MM_YR = 2e-12;
 /** Slower than this, mm/yr, a motion has no azimuth. */
 export const STILL_MM_YR = 1e-9;
 

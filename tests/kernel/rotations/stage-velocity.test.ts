@@ -1,18 +1,14 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import morvel from '../../cases/nnr-morvel56.json';
 import {
   add,
   angularVelocity,
   compileModel,
   cross,
-  distanceKm,
   EARTH_RADIUS_KM,
-  exp,
   fromPole,
   halfStage,
   IDENTITY,
-  inverse,
   LINK_ERROR_RAD,
   log,
   multiply,
@@ -309,53 +305,5 @@ describe('velocities', () => {
     expect(angularVelocity(one, 'eider', 20, 'spin')).toEqual({ status: 'outside rotations', at: 'eider' });
     expect(angularVelocity(one, 'eider', 20, 'spin', { window_myr: 4 }).status).toBe('outside rotations');
     expect(() => angularVelocity(model, 'avon', 5, 'spin', { window_myr: NaN })).toThrow(/window_myr/);
-  });
-});
-
-describe(`NNR-MORVEL56 (${morvel.source})`, () => {
-  /** One row at 1 Ma for each plate: motion forward in time at ω °/Myr is a total rotation of −ω to 1 Ma. */
-  const plates = morvel.plates.map(({ plate }) => plate);
-  const model = compileModel(
-    [...plates.map((plate) => block(plate)), frame('no-net-rotation')],
-    morvel.plates.map(({ plate, lat, lon, deg_myr }) =>
-      row([plate, 'no-net-rotation', 1, lat, lon, -deg_myr]),
-    ),
-  );
-  const omegaOf = (plate: string, seenFrom: string): Vector3 =>
-    placed(angularVelocity(model, plate, 0, seenFrom)).omega;
-
-  it.each(morvel.plates)('gives the angular velocity of $plate back', ({ plate, lat, lon, deg_myr }) => {
-    expect(
-      difference(omegaOf(plate, 'no-net-rotation'), scale(toVector(lat, lon), toRadians(deg_myr))),
-    ).toBeLessThan(1e-15);
-  });
-
-  it.each(morvel.relative_to_pacific)(
-    'gives MORVEL’s published motion of $plate as seen from the Pacific',
-    ({ plate, lat, lon, deg_myr }) => {
-      const omega = omegaOf(plate, 'pacific');
-      const km = distanceKm(toVector(lat, lon), scale(omega, 1 / norm(omega)));
-      expect(km / 111.2).toBeLessThan(morvel.rounding.pole_deg);
-      expect(Math.abs(toDegrees(norm(omega)) - deg_myr)).toBeLessThan(morvel.rounding.deg_myr);
-    },
-  );
-
-  it.each(morvel.relative_to_pacific)(
-    'gives its rates: $plate 90° from that pole moves ω·R',
-    ({ plate, lat, lon, deg_myr }) => {
-      const far = toVector(lat - 90, lon);
-      const { speed_mm_yr } = velocityAt(far, omegaOf(plate, 'pacific'));
-      expect(Math.abs(speed_mm_yr - deg_myr * 111.195)).toBeLessThan(morvel.rounding.mm_yr);
-    },
-  );
-
-  it('moves points along small circles of the poles: a million years carries a point as far as its speed says', () => {
-    const p = toVector(20, -156);
-    const omega = omegaOf('pacific', 'no-net-rotation');
-    const moved = rotate(exp(omega), p);
-    expect(
-      turnBetween(exp(omega), inverse(placed(poseAt(model, 'pacific', 1, 'no-net-rotation')).quaternion)),
-    ).toBeLessThan(1e-15);
-    expect(Math.abs(distanceKm(p, moved) - velocityAt(p, omega).speed_mm_yr)).toBeLessThan(1e-3);
   });
 });
