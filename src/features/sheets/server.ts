@@ -15,7 +15,8 @@ import type { RenderJob } from './render.task';
 import renderTask from './render.task.ts?nodeworker';
 import { carry } from './slice/carried';
 import { sliceGeojson } from './slice/geojson';
-import { sliceFileName, slicePage, type Page } from './slice/page';
+import { sliceFileName } from './slice/file-name';
+import { slicePage, type Page } from './slice/page';
 import type { SliceSubject } from './slice/subject';
 
 export const SLICE_FORMATS = {

@@ -5,7 +5,7 @@
 import type { Feature, FeatureCollection, Geometry } from 'geojson';
 import { flatten } from '../../motion/plate-carree';
 import type { Carried } from './carried';
-import { CAUTION_LINE } from './page';
+import { CAUTION_LINE } from './caution';
 import type { SliceQuery } from '../contract';
 import type { SliceSubject } from './subject';
 
