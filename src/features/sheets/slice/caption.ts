@@ -3,7 +3,7 @@ import { allowedCentre, PROJECTIONS, type MapCentre } from '../../../kernel/cart
 import { age, coordinates, latitude, list, longitude, number } from '../../motion/format';
 import { inText } from '../../motion/names';
 import type { SliceQuery } from '../contract';
-import type { Carried } from './carried';
+import type { Drawn } from './drawn';
 import { CAUTION_LINE } from './caution';
 import { breakLines } from './fonts';
 import type { SliceSubject } from './subject';
@@ -13,7 +13,7 @@ import { CAPTION, CAUTION } from './type';
 /** Named here at most: a sheet is a map first. */
 const MOST_MISSING = 12;
 
-function missingNames({ missing }: Carried): string[] {
+function missingNames({ missing }: Drawn): string[] {
   const named = missing.slice(0, MOST_MISSING).map((m) => `${m.name} (${m.status})`);
   const more = missing.length - named.length;
   return more > 0 ? [...named, `${more} more`] : named;
@@ -26,26 +26,18 @@ export function centreWords({ lat, lon }: MapCentre): string {
   return `${latitude(lat, digits)}, meridian ${longitude(lon, digits)} ${lat > 0 ? 'down' : 'up'}`;
 }
 
-export function captionLines(
-  subject: SliceSubject,
-  carried: Carried,
-  query: SliceQuery,
-  pathName: string | null,
-  width: number,
-): Line[] {
+export function captionLines(subject: SliceSubject, drawn: Drawn, query: SliceQuery, width: number): Line[] {
   const kind = PROJECTIONS[query.projection];
   const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
   const sentences = [
     query.caption.trim(),
     `Positions at ${age(query.age_ma)} in the ${inText({ ...subject.frame, kind: 'frame' })} frame.`,
     `${kind.label} projection${kind.property === 'equal-area' && !kind.label.includes('equal-area') ? ' (equal-area)' : ''}, centred on ${centreWords(centre)}.`,
-    pathName && query.layers.includes('path')
-      ? `Ochre: drift path of ${pathName}, bars at rows, dots each ${number(query.path_step_ma)} Myr${query.layers.includes('ellipse') ? ', with the 95 % ellipse at this age' : ''}.`
+    drawn.path
+      ? `Ochre: drift path of ${drawn.path.name}, bars at rows, dots each ${number(query.path_step_ma)} Myr${query.layers.includes('ellipse') ? ', with the 95 % ellipse at this age' : ''}.`
       : '',
-    query.layers.includes('coasts') && carried.coasts.length > 0
-      ? 'Dashed: present coast, for location only.'
-      : '',
-    carried.missing.length > 0 ? `Without a place at this age: ${list(missingNames(carried))}.` : '',
+    drawn.coasts.length > 0 ? 'Dashed: present coast, for location only.' : '',
+    drawn.missing.length > 0 ? `Without a place at this age: ${list(missingNames(drawn))}.` : '',
   ];
   const text = sentences.filter((s) => s !== '').join(' ');
   return [

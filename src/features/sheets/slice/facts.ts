@@ -1,14 +1,14 @@
 /** What stands under the map on the right in small type: frame, version, date, sources, chart and licence. */
 import { CHRONOSTRATIGRAPHIC_CHART } from '../../../kernel/timescale';
 import { inText } from '../../motion/names';
-import type { Carried } from './carried';
+import type { Drawn } from './drawn';
 import { breakLines } from './fonts';
 import type { SliceSubject } from './subject';
 import type { Line } from './text-lines';
 import { SMALL } from './type';
 
-export function factLines(subject: SliceSubject, carried: Carried, width: number): Line[] {
-  const sources = carried.sources.length > 0 ? carried.sources.join('; ') : 'none named';
+export function factLines(subject: SliceSubject, { sources: names }: Drawn, width: number): Line[] {
+  const sources = names.length > 0 ? names.join('; ') : 'none named';
   const facts = [
     `Frame: ${inText({ ...subject.frame, kind: 'frame' })}. ${subject.version}. Drawn ${subject.date}.`,
     `Sources: ${sources}.`,

@@ -1,7 +1,7 @@
 /** The legend: only what is on the map. */
 import { EVIDENCE } from '../../../kernel/rotations/types';
 import type { SliceQuery } from '../contract';
-import type { Carried } from './carried';
+import type { Drawn } from './drawn';
 import { textWidth } from './fonts';
 import { COAST, INK, OCHRE, OUTLINE } from './palette';
 import { element, textElement } from './svg';
@@ -14,9 +14,9 @@ export interface LegendEntry {
 }
 
 /** Only what is on the map: the kinds of evidence drawn, the drift path, the coasts. */
-export function legendEntries(carried: Carried, query: SliceQuery, path: boolean): LegendEntry[] {
-  const drawn = EVIDENCE.filter((evidence) => carried.blocks.some((block) => block.evidence === evidence));
-  const entries: LegendEntry[] = drawn.map((evidence) => {
+export function legendEntries(drawn: Drawn, query: SliceQuery): LegendEntry[] {
+  const kinds = EVIDENCE.filter((evidence) => drawn.blocks.some((block) => block.evidence === evidence));
+  const entries: LegendEntry[] = kinds.map((evidence) => {
     const dash = evidence === 'unconstrained' ? '3 1.8' : undefined;
     const look = {
       fill: `url(#ev-${evidence})`,
@@ -29,7 +29,7 @@ export function legendEntries(carried: Carried, query: SliceQuery, path: boolean
       sample: (x, y) => element('rect', { x, y: y - 6, width: 17, height: 9, ...look }),
     };
   });
-  if (path && query.layers.includes('path')) {
+  if (drawn.path) {
     const sample = (x: number, y: number): string =>
       element('path', {
         d: `M${x} ${y - 1.5}h17M${x + 8.5} ${y - 4.5}v6`,
@@ -44,7 +44,7 @@ export function legendEntries(carried: Carried, query: SliceQuery, path: boolean
       element('path', { d: `M${x} ${y - 1.5}h${tip}m-3 -1.6l3 1.6l-3 1.6`, ...look });
     entries.push({ text: '  100 mm/yr', sample });
   }
-  if (carried.coasts.length > 0 && query.layers.includes('coasts')) {
+  if (drawn.coasts.length > 0) {
     const look = { fill: 'none', stroke: COAST, 'stroke-width': 0.6, 'stroke-dasharray': '1.8 1.5' };
     entries.push({
       text: 'present coast',

@@ -1,8 +1,10 @@
 /** The map itself: sphere, graticule, blocks with their evidence, present coasts, names, a drift path. */
 import { geoPath, type GeoProjection } from 'd3-geo';
+import type { MultiLineString } from 'geojson';
 import { shortName } from '../../motion/names';
 import type { Layer } from '../choices';
-import type { Carried, CarriedBlock } from './carried';
+import type { CarriedBlock, CarriedCoast } from './carried';
+import type { Drawn } from './drawn';
 import { pathSvg, type DrawnPath } from './drift';
 import { graticuleLabels, graticuleSvg } from './graticule';
 import { COAST, INK, OUTLINE, PAPER } from './palette';
@@ -12,14 +14,14 @@ import { arrowSvg, type Arrow } from './velocity';
 import { visible } from './visible';
 
 export interface MapRequest {
-  readonly carried: Carried;
+  readonly drawn: Drawn;
   readonly projection: GeoProjection;
   readonly layers: readonly Layer[];
   readonly path: DrawnPath | null;
   readonly arrows: readonly Arrow[];
 }
 
-export function mapSvg({ carried, projection, layers, path, arrows }: MapRequest): string {
+export function mapSvg({ drawn, projection, layers, path, arrows }: MapRequest): string {
   const draw = geoPath(projection).digits(2);
   const outline = pathWriter(projection);
   const has = (layer: Layer): boolean => layers.includes(layer);
@@ -27,12 +29,12 @@ export function mapSvg({ carried, projection, layers, path, arrows }: MapRequest
   const parts = [
     element('path', { class: 'sphere', d: sphere, fill: PAPER }),
     has('graticule') ? graticuleSvg(projection) : '',
-    ...carried.blocks.map((block) => blockSvg(block, outline(block.area))),
-    has('coasts') ? coastsSvg(carried, (line) => draw(line) ?? '') : '',
-    has('velocity') ? arrows.map((arrow) => arrowSvg(arrow, projection)).join('') : '',
-    path && has('path') ? pathSvg(path, projection, has('ellipse')) : '',
+    ...drawn.blocks.map((block) => blockSvg(block, outline(block.area))),
+    coastsSvg(drawn.coasts, (line) => draw(line) ?? ''),
+    arrows.map((arrow) => arrowSvg(arrow, projection)).join(''),
+    path ? pathSvg(path, projection, has('ellipse')) : '',
     element('path', { class: 'limb', d: sphere, fill: 'none', stroke: INK, 'stroke-width': 0.9 }),
-    has('names') ? namesSvg(carried.blocks, projection) : '',
+    has('names') ? namesSvg(drawn.blocks, projection) : '',
     has('graticule') ? graticuleLabels(projection) : '',
   ];
   return parts.join('');
@@ -57,8 +59,8 @@ function blockSvg({ code, evidence, name }: CarriedBlock, d: string): string {
   );
 }
 
-function coastsSvg(carried: Carried, draw: (line: Carried['coasts'][number]) => string): string {
-  const d = carried.coasts.map(draw).join('');
+function coastsSvg(coasts: readonly CarriedCoast[], draw: (line: MultiLineString) => string): string {
+  const d = coasts.map(({ line }) => draw(line)).join('');
   if (d === '') return '';
   return element('path', {
     class: 'coast',

@@ -1,7 +1,6 @@
 /** One printed page: title, map, caption, legend, scale, frame, version, date, sources and the caution line. */
 import { EARTH_RADIUS_KM } from '../../../kernel/sphere';
 import { EVIDENCE } from '../../../kernel/rotations/types';
-import type { DriftPoint } from '../../../kernel/rotations';
 import { allowedCentre, fitProjection, kmPerUnit } from '../../../kernel/cartography/projections';
 import { age } from '../../motion/format';
 import { inText } from '../../motion/names';
@@ -10,6 +9,7 @@ import type { SliceQuery } from '../contract';
 import { captionLines } from './caption';
 import type { Carried } from './carried';
 import { CAUTION_LINE } from './caution';
+import { drawnOf, type SlicePath } from './drawn';
 import { factLines } from './facts';
 import { embeddedFontRules } from './fonts';
 import { subtitle } from './heading';
@@ -32,12 +32,10 @@ export interface PageRequest {
   readonly subject: SliceSubject;
   readonly carried: Carried;
   readonly query: SliceQuery;
-  readonly path: {
-    readonly name: string;
-    readonly points: readonly DriftPoint[];
-    readonly here: DriftPoint | null;
-  } | null;
+  readonly path: SlicePath | null;
 }
+
+type Box = Parameters<typeof fitProjection>[2];
 
 export interface Page {
   readonly svg: string;
@@ -58,23 +56,25 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
   const { width, height } = pageSize(query);
   const inner = width - 2 * MARGIN;
   const left = (inner - GUTTER) * 0.56;
-  const words = captionLines(subject, carried, query, path?.name ?? null, left);
-  const facts = factLines(subject, carried, inner - GUTTER - left);
-  const entries = legendRows(legendEntries(carried, query, path !== null), inner - GUTTER - left);
+  const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
+  const fit = (box: Box) => fitProjection(query.projection, centre, box, query.reach_deg ?? null);
+  const drawn = drawnOf(carried, path, query.layers, fit({ x: 0, y: 0, width, height }));
+  const words = captionLines(subject, drawn, query, left);
+  const facts = factLines(subject, drawn, inner - GUTTER - left);
+  const entries = legendRows(legendEntries(drawn, query), inner - GUTTER - left);
   const legendHeight = entries.length * LEGEND_ROW;
   const foot = Math.max(linesHeight(words), legendHeight + 22 + linesHeight(facts)) + 14;
   const top = MARGIN + 44;
   const box = { x: MARGIN + 26, y: top, width: inner - 52, height: height - MARGIN - foot - top - 22 };
-  const centre = allowedCentre(query.projection, { lat: query.centre_lat, lon: query.centre_lon });
-  const projection = fitProjection(query.projection, centre, box, query.reach_deg ?? null);
-  const drawnPath = path && {
-    points: path.points,
-    here: path.here,
+  const projection = fit(box);
+  const drawnPath = drawn.path && {
+    points: drawn.path.points,
+    here: drawn.path.here,
     age_ma: query.age_ma,
     label_step_ma: 2 * query.path_step_ma,
   };
   const arrows = query.layers.includes('velocity')
-    ? carried.blocks.flatMap((block) => blockArrows(subject.model, block, query.age_ma, subject.frame.code))
+    ? drawn.blocks.flatMap((block) => blockArrows(subject.model, block, query.age_ma, subject.frame.code))
     : [];
   const footTop = height - MARGIN - foot;
   const right = MARGIN + left + GUTTER;
@@ -83,7 +83,7 @@ export function slicePage({ subject, carried, query, path }: PageRequest): Page 
     element('rect', { width, height, fill: PAPER }),
     textElement(MARGIN, MARGIN + 14, title, TITLE),
     textElement(MARGIN, MARGIN + 30, subtitle(subject, query.age_ma), SUBTITLE),
-    `<g class="map">${mapSvg({ carried, projection, layers: query.layers, path: drawnPath, arrows })}</g>`,
+    `<g class="map">${mapSvg({ drawn, projection, layers: query.layers, path: drawnPath, arrows })}</g>`,
     element('path', { d: `M${MARGIN} ${footTop}H${width - MARGIN}`, stroke: INK, 'stroke-width': 0.8 }),
     writeLines(words, MARGIN, footTop + 14),
     legendSvg(entries, right, footTop + 14),
