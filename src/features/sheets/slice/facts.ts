@@ -2,17 +2,15 @@
 import { CHRONOSTRATIGRAPHIC_CHART } from '../../../kernel/timescale';
 import { inText } from '../../motion/names';
 import type { Drawn } from './drawn';
-import { breakLines } from './fonts';
+import { shortList } from './short-list';
 import type { SliceSubject } from './subject';
-import type { Line } from './text-lines';
-import { SMALL } from './type';
 
-export function factLines(subject: SliceSubject, { sources: names }: Drawn, width: number): Line[] {
-  const sources = names.length > 0 ? names.join('; ') : 'none named';
-  const facts = [
+/** @param shown how many sources are named. */
+export function factParagraphs(subject: SliceSubject, { sources }: Drawn, shown: number): string[] {
+  const names = sources.length > 0 ? shortList(sources, shown, ';') : 'none named';
+  return [
     `Frame: ${inText({ ...subject.frame, kind: 'frame' })}. ${subject.version}. Drawn ${subject.date}.`,
-    `Sources: ${sources}.`,
+    `Sources: ${names}.`,
     `Ages: ${CHRONOSTRATIGRAPHIC_CHART.edition}.${subject.licence ? ` Licence ${subject.licence}.` : ' No licence stated.'}`,
   ];
-  return facts.flatMap((fact) => breakLines(fact, SMALL, width).map((text) => ({ text, style: SMALL })));
 }

@@ -2,19 +2,20 @@
 import { EVIDENCE } from '../../../kernel/rotations/types';
 import type { SliceQuery } from '../contract';
 import type { Drawn } from './drawn';
-import { textWidth } from './fonts';
+import { textWidth } from './text-width';
 import { COAST, INK, OCHRE, OUTLINE } from './palette';
-import { element, textElement } from './svg';
-import { SMALL } from './type';
+import { element, textElement, type TextStyle } from './svg';
 import { ARROW_PT_PER_100_MM_YR } from './velocity';
 
-export interface LegendEntry {
+interface LegendEntry {
   readonly text: string;
+  /** Of the sample, where it is wider than the others. */
+  readonly width?: number;
   readonly sample: (x: number, y: number) => string;
 }
 
 /** Only what is on the map: the kinds of evidence drawn, the drift path, the coasts. */
-export function legendEntries(drawn: Drawn, query: SliceQuery): LegendEntry[] {
+function legendEntries(drawn: Drawn, query: SliceQuery): LegendEntry[] {
   const kinds = EVIDENCE.filter((evidence) => drawn.blocks.some((block) => block.evidence === evidence));
   const entries: LegendEntry[] = kinds.map((evidence) => {
     const dash = evidence === 'unconstrained' ? '3 1.8' : undefined;
@@ -38,11 +39,11 @@ export function legendEntries(drawn: Drawn, query: SliceQuery): LegendEntry[] {
       });
     entries.push({ text: 'drift path', sample });
   }
-  if (query.layers.includes('velocity')) {
+  if (query.layers.includes('velocity') && drawn.blocks.length > 0) {
     const [tip, look] = [ARROW_PT_PER_100_MM_YR, { fill: 'none', stroke: INK, 'stroke-width': 0.8 }];
     const sample = (x: number, y: number): string =>
       element('path', { d: `M${x} ${y - 1.5}h${tip}m-3 -1.6l3 1.6l-3 1.6`, ...look });
-    entries.push({ text: '  100 mm/yr', sample });
+    entries.push({ text: '100 mm/yr', width: tip, sample });
   }
   if (drawn.coasts.length > 0) {
     const look = { fill: 'none', stroke: COAST, 'stroke-width': 0.6, 'stroke-dasharray': '1.8 1.5' };
@@ -54,36 +55,43 @@ export function legendEntries(drawn: Drawn, query: SliceQuery): LegendEntry[] {
   return entries;
 }
 
-export const LEGEND_ROW = 14;
-const entryWidth = (entry: LegendEntry): number => 22 + textWidth(entry.text, SMALL) + 12;
+/** Samples do not shrink with the text. */
+const ROW = 14;
+const SAMPLE = 17;
+const BETWEEN = 5;
+const GAP = 12;
+
+export interface Legend {
+  readonly height: number;
+  readonly svg: (x: number, y: number) => string;
+}
 
 /** Entries in rows no wider than `width`. */
-export function legendRows(entries: readonly LegendEntry[], width: number): LegendEntry[][] {
-  const rows: LegendEntry[][] = [[]];
-  let used = 0;
-  for (const entry of entries) {
-    if (used > 0 && used + entryWidth(entry) - 12 > width) {
+export function legend(drawn: Drawn, query: SliceQuery, style: TextStyle, width: number): Legend {
+  const rows: LegendEntry[][] = [];
+  const textAt = ({ width: sample = SAMPLE }: LegendEntry): number => sample + BETWEEN;
+  const wide = (entry: LegendEntry): number => textAt(entry) + textWidth(entry.text, style) + GAP;
+  let used = Infinity;
+  for (const entry of legendEntries(drawn, query)) {
+    if (used + wide(entry) - GAP > width) {
       rows.push([]);
       used = 0;
     }
     rows.at(-1)!.push(entry);
-    used += entryWidth(entry);
+    used += wide(entry);
   }
-  return rows;
-}
-
-export function legendSvg(rows: readonly (readonly LegendEntry[])[], x: number, y: number): string {
-  const written = rows.map((row, i) => {
+  const rowSvg = (row: readonly LegendEntry[], x: number, y: number): string => {
     let at = x;
     return row
       .map((entry) => {
-        const svg =
-          entry.sample(at, y + i * LEGEND_ROW) +
-          textElement(at + 22, y + 1 + i * LEGEND_ROW, entry.text, SMALL);
-        at += entryWidth(entry);
+        const svg = entry.sample(at, y) + textElement(at + textAt(entry), y + 1, entry.text, style);
+        at += wide(entry);
         return svg;
       })
       .join('');
-  });
-  return `<g class="legend">${written.join('')}</g>`;
+  };
+  return {
+    height: rows.length * ROW,
+    svg: (x, y) => `<g class="legend">${rows.map((row, i) => rowSvg(row, x, y + i * ROW)).join('')}</g>`,
+  };
 }

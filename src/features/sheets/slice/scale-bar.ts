@@ -1,19 +1,24 @@
 import { number } from '../../motion/format';
 import { INK } from './palette';
-import { element, textElement } from './svg';
-import { SMALL } from './type';
+import { element, textElement, type TextStyle } from './svg';
+import { textWidth } from './text-width';
 
-/** A bar of a round number of kilometres, true along the horizontal at the map's centre. */
-export function scaleBar(x: number, y: number, kmPerPt: number): string {
+const MOST_PT = 80;
+const STEPS = [5, 3, 2, 1, 0.5, 0.3, 0.2, 0.1];
+
+/** A bar of a round number of kilometres, true along the horizontal at the map's centre, its text within `width`. */
+export function scaleBar(x: number, y: number, width: number, kmPerPt: number, style: TextStyle): string {
   if (!Number.isFinite(kmPerPt) || kmPerPt <= 0) return '';
-  const most = 80 * kmPerPt;
-  const power = 10 ** Math.floor(Math.log10(most));
-  const km = [5, 3, 2, 1].map((n) => n * power).find((n) => n <= most) ?? power;
+  const power = 10 ** Math.floor(Math.log10(MOST_PT * kmPerPt));
+  const words = (km: number): string => `${number(km, km < 1 ? 1 : 0)} km at the centre`;
+  const fits = (km: number): boolean =>
+    km / kmPerPt <= MOST_PT && km / kmPerPt + textWidth(words(km), style) <= width;
+  const km = STEPS.map((n) => n * power).find(fits) ?? power / 10;
   const length = km / kmPerPt;
   const d = `M${x} ${y}v3.5h${length.toFixed(2)}v-3.5`;
   return (
     element('path', { class: 'scale', d, fill: 'none', stroke: INK, 'stroke-width': 0.8 }) +
-    textElement(x, y + 11.5, '0', SMALL) +
-    textElement(x + length, y + 11.5, `${number(km)} km at the centre`, { ...SMALL, anchor: 'start' })
+    textElement(x, y + 11.5, '0', style) +
+    textElement(x + length, y + 11.5, words(km), style)
   );
 }
