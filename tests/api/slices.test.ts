@@ -3,7 +3,7 @@ import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
 import { PNG } from 'pngjs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { seedIfEmpty } from '~/db/seed';
-import { CAUTION_LINE } from '~/features/sheets/slice/page';
+import { CAUTION_LINE } from '~/features/sheets/slice/caution';
 import { closeWorkers } from '~/server/workers';
 import { createTestApp, type TestApp } from '../support/app';
 

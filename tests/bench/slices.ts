@@ -44,7 +44,7 @@ function subject(): SliceSubject {
   ];
   return {
     title: 'Bench', version: 'Draft', licence: null, date: '', model: compileModel(inputs, rows), frame: { code: 'axis', name: 'Axis' },
-    blocks: codes.map((code) => ({ code, name: code, evidence: 'fitted', source: null, outlines: [{ sha256: code, inside: 'smaller', outline_older_ma: null, outline_younger_ma: null }] })),
+    blocks: codes.map((code) => ({ code, name: code, evidence: 'fitted', source: null, outlines: [{ sha256: code, inside: 'smaller', outline_older_ma: null, outline_younger_ma: null, source: null }] })),
     coasts: [],
     geometryOf: (code) => shapes.get(code)!,
   }; // prettier-ignore

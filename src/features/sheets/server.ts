@@ -14,8 +14,11 @@ import type { SliceQuery } from './contract';
 import type { RenderJob } from './render.task';
 import renderTask from './render.task.ts?nodeworker';
 import { carry } from './slice/carried';
+import { drawnOf, type SlicePath } from './slice/drawn';
 import { sliceGeojson } from './slice/geojson';
-import { sliceFileName, slicePage, type Page } from './slice/page';
+import { sliceFileName } from './slice/file-name';
+import { slicePage, type Page } from './slice/page';
+import { pathSources } from './slice/sources';
 import type { SliceSubject } from './slice/subject';
 
 export const SLICE_FORMATS = {
@@ -51,9 +54,12 @@ export async function drawSlice(
   const subject = await subjectOf(access, state, query);
   const carried = carry(subject, query.age_ma, subject.frame.code);
   const name = sliceFileName(access.project.slug, String(state.version), query.age_ma, format);
-  if (format === 'geojson')
-    return { body: JSON.stringify(sliceGeojson(subject, carried, query)), name, state };
-  const page = slicePage({ subject, carried, query, path: pathOf(subject, query) });
+  const path = pathOf(subject, query);
+  if (format === 'geojson') {
+    const drawn = drawnOf(carried, path, query.layers, null);
+    return { body: JSON.stringify(sliceGeojson(subject, drawn, query)), name, state };
+  }
+  const page = slicePage({ subject, carried, query, path });
   if (format === 'svg') return { body: page.svg, name, state };
   return { body: await render(page, format, query, subject.title, signal), name, state };
 }
@@ -91,22 +97,15 @@ async function subjectOf(access: Access, state: State, query: SliceQuery): Promi
   };
 }
 
-function pathOf(
-  subject: SliceSubject,
-  query: SliceQuery,
-): { name: string; points: DriftPoint[]; here: DriftPoint | null } | null {
+function pathOf(subject: SliceSubject, query: SliceQuery): SlicePath | null {
   const { path_block: block, path_lat: lat, path_lon: lon, path_step_ma: step_ma } = query;
   if (block === undefined || lat === undefined || lon === undefined) return null;
-  const span = { older_ma: Math.max(subject.model.oldest_ma, step_ma), younger_ma: 0, step_ma };
-  const points = driftPath(subject.model, { block, lat, lon, ...span, relative_to: subject.frame.code });
+  const { model, frame } = subject;
+  const between = (younger_ma: number, older_ma: number): DriftPoint[] =>
+    driftPath(model, { block, lat, lon, younger_ma, older_ma, step_ma, relative_to: frame.code });
+  const points = between(0, Math.max(model.oldest_ma, step_ma));
+  const [here = null] = between(query.age_ma, query.age_ma);
   const name = subject.blocks.find((one) => one.code === block)?.name ?? block;
-  const age = { older_ma: query.age_ma, younger_ma: query.age_ma, step_ma };
-  const [here = null] = driftPath(subject.model, {
-    block,
-    lat,
-    lon,
-    ...age,
-    relative_to: subject.frame.code,
-  });
-  return { name: `${name} at ${coordinates(lat, lon)}`, points, here };
+  const sources = pathSources(model, block, points, frame.code);
+  return { block, name: `${name} at ${coordinates(lat, lon)}`, points, here, sources };
 }

@@ -5,6 +5,7 @@ import type { Evidence, Pose, Status } from '../../../kernel/rotations/types';
 import { areaKm2, boundingCap, centroid, toLatLon } from '../../../kernel/sphere';
 import { poseAt } from '../../motion/scene/tolerant';
 import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
+import { inOrder, motionSources, poseSources } from './sources';
 import { holdsAt, type SliceSubject } from './subject';
 
 export interface CarriedBlock {
@@ -15,22 +16,28 @@ export interface CarriedBlock {
   readonly area_km2: number;
   /** Where the name stands: the middle of the cap that holds the largest part. */
   readonly label: { readonly lat: number; readonly lon: number };
+  /** Of the block, its outlines and the rows that place it. */
+  readonly sources: readonly string[];
+  /** Of the rows by which it moves. */
+  readonly motion_sources: readonly string[];
+}
+
+export interface CarriedCoast {
+  readonly line: MultiLineString;
+  readonly sources: readonly string[];
 }
 
 export interface Carried {
   readonly blocks: readonly CarriedBlock[];
-  readonly coasts: readonly MultiLineString[];
+  readonly coasts: readonly CarriedCoast[];
   /** Blocks with an outline that have no place at this age, and why. */
   readonly missing: readonly { readonly name: string; readonly status: Status }[];
-  /** Names under which the rows, outlines and lines used are cited, in alphabetical order. */
-  readonly sources: readonly string[];
 }
 
 export function carry(subject: SliceSubject, age_ma: number, relative_to: string): Carried {
   const blocks: CarriedBlock[] = [];
-  const coasts: MultiLineString[] = [];
+  const coasts: CarriedCoast[] = [];
   const missing: { name: string; status: Status }[] = [];
-  const sources = new Set<string>();
   const poses = new Map<string, Pose>();
   for (const block of subject.blocks) {
     const outlines = block.outlines.filter((o) => holdsAt(age_ma, o.outline_older_ma, o.outline_younger_ma));
@@ -64,27 +71,19 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
       area,
       area_km2: sizes.reduce((a, b) => a + b, 0),
       label,
+      sources: inOrder([block.source, ...outlines.map((o) => o.source), ...poseSources(pose)]),
+      motion_sources: inOrder(motionSources(subject.model, pose)),
     });
-    cite(sources, pose, block.source);
   }
   for (const line of subject.coasts) {
     const pose = poses.get(line.block);
     if (pose?.status !== 'placed' || !holdsAt(age_ma, line.appears_ma, line.disappears_ma)) continue;
     const lines = lineVectors(subject.geometryOf(line.sha256));
     if (lines.length === 0) continue;
-    coasts.push(carryLines(lines, pose.quaternion));
-    if (line.source) sources.add(line.source);
+    coasts.push({
+      line: carryLines(lines, pose.quaternion),
+      sources: inOrder([line.source, ...poseSources(pose)]),
+    });
   }
-  return { blocks, coasts, missing, sources: [...sources].sort((a, b) => a.localeCompare(b, 'en')) };
-}
-
-function cite(
-  sources: Set<string>,
-  pose: Extract<Pose, { status: 'placed' }>,
-  outlineSource: string | null,
-): void {
-  if (outlineSource) sources.add(outlineSource);
-  for (const link of pose.links) {
-    for (const row of [link.younger, link.older]) if (row.source && !row.implied) sources.add(row.source);
-  }
+  return { blocks, coasts, missing };
 }

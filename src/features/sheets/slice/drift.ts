@@ -3,9 +3,9 @@ import { geoPath, type GeoProjection } from 'd3-geo';
 import type { Polygon } from 'geojson';
 import { destination, toLatLon, toVector } from '../../../kernel/sphere';
 import type { DriftPoint } from '../../../kernel/rotations';
-import { ageValue } from '../../motion/format';
+import { shortAge } from '../../motion/format';
 import { OCHRE, OCHRE_INK, PAPER } from './palette';
-import { element, short, textElement } from './svg';
+import { element, short, textElement, type TextStyle } from './svg';
 import { visible } from './visible';
 
 /** A path to draw, with the age of the slice and the spacing of its age labels. */
@@ -34,7 +34,7 @@ export function pathSvg(path: DrawnPath, projection: GeoProjection, ellipses: bo
       'stroke-width': 1.4,
     }),
     ...points.map((p) => mark(p, projection)),
-    ageLabels(points, path, projection),
+    ...ageLabels(path, projection).map(({ x, y, text }) => textElement(x, y, text, AGE)),
     ellipses && at ? ellipseSvg(at, (polygon) => draw(polygon) ?? '') : '',
     at ? here(at, projection) : '',
   ].join('');
@@ -54,28 +54,34 @@ function mark(point: Placed, projection: GeoProjection): string {
   return element('path', { class: 'row', d, stroke: OCHRE, 'stroke-width': 1.1 });
 }
 
+const AGE: TextStyle = {
+  family: 'Inter',
+  size: 6.5,
+  weight: 500,
+  anchor: 'end',
+  fill: OCHRE_INK,
+  halo: PAPER,
+};
+
+export interface AgeLabel {
+  /** Right end of the baseline. */
+  readonly x: number;
+  readonly y: number;
+  readonly text: string;
+}
+
 /** Ages at the label step; one that would lie on another is left out. */
-function ageLabels(points: readonly Placed[], path: DrawnPath, projection: GeoProjection): string {
+export function ageLabels(path: DrawnPath, projection: GeoProjection): AgeLabel[] {
   const placed: [number, number][] = [];
-  return points
-    .map((point) => {
-      const steps = point.age_ma / path.label_step_ma;
-      const xy = projection([point.lon, point.lat]);
-      if (!xy || Math.abs(steps - Math.round(steps)) > 1e-6 || !visible(projection, [point.lon, point.lat]))
-        return '';
-      if (placed.some(([x, y]) => Math.abs(x - xy[0]) < 16 && Math.abs(y - xy[1]) < 8)) return '';
-      placed.push(xy);
-      const style = {
-        family: 'Inter',
-        size: 6.5,
-        weight: 500,
-        anchor: 'end',
-        fill: OCHRE_INK,
-        halo: PAPER,
-      } as const;
-      return textElement(xy[0] - 5, xy[1] + 2.5, ageValue(point.age_ma).replace(/\.0$/, ''), style);
-    })
-    .join('');
+  return path.points.filter(isPlaced).flatMap((point) => {
+    const steps = point.age_ma / path.label_step_ma;
+    const xy = projection([point.lon, point.lat]);
+    if (!xy || Math.abs(steps - Math.round(steps)) > 1e-6 || !visible(projection, [point.lon, point.lat]))
+      return [];
+    if (placed.some(([x, y]) => Math.abs(x - xy[0]) < 16 && Math.abs(y - xy[1]) < 8)) return [];
+    placed.push(xy);
+    return [{ x: xy[0] - 5, y: xy[1] + 2.5, text: shortAge(point.age_ma) }];
+  });
 }
 
 function here(point: Placed, projection: GeoProjection): string {

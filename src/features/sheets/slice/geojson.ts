@@ -4,9 +4,10 @@
  */
 import type { Feature, FeatureCollection, Geometry } from 'geojson';
 import { flatten } from '../../motion/plate-carree';
-import type { Carried } from './carried';
-import { CAUTION_LINE } from './page';
+
+import { CAUTION_LINE } from './caution';
 import type { SliceQuery } from '../contract';
+import { pathLine, type Drawn } from './drawn';
 import type { SliceSubject } from './subject';
 
 /** Worst distance between a written edge and its great circle. */
@@ -14,7 +15,7 @@ export const EXPORT_ERROR_KM = 1;
 
 export function sliceGeojson(
   subject: SliceSubject,
-  carried: Carried,
+  drawn: Drawn,
   query: SliceQuery,
 ): FeatureCollection & Record<string, unknown> {
   const about = { age_ma: query.age_ma, relative_to: subject.frame.code };
@@ -23,19 +24,20 @@ export function sliceGeojson(
     const flat = flatten(geometry);
     if (flat) features.push({ type: 'Feature', properties: { ...properties, ...about }, geometry: flat });
   };
-  for (const { code, name, evidence, area, area_km2 } of carried.blocks) {
+  for (const { code, name, evidence, area, area_km2 } of drawn.blocks) {
     add(area, { block: code, name, kind: 'outline', evidence, area_km2: Math.round(area_km2) });
   }
-  if (query.layers.includes('coasts'))
-    for (const line of carried.coasts) add(line, { kind: 'layer', name: 'present coast, for location only' });
+  for (const { line } of drawn.coasts) add(line, { kind: 'layer', name: 'present coast, for location only' });
+  if (drawn.path)
+    add(pathLine(drawn.path.points), { block: drawn.path.block, name: drawn.path.name, kind: 'drift path' });
   return {
     type: 'FeatureCollection',
     title: subject.title,
     ...about,
     version: subject.version,
     licence: subject.licence,
-    sources: carried.sources,
-    missing: carried.missing,
+    sources: drawn.sources,
+    missing: drawn.missing,
     caution: CAUTION_LINE,
     features,
   };

@@ -56,6 +56,22 @@ function drawn(projection: GeoProjection, positions: readonly [number, number][]
   return points;
 }
 
+function leftmost(projection: GeoProjection, lat: number): Point | null {
+  const line = Array.from({ length: 721 }, (_, i): [number, number] => [-180 + i / 2, lat]);
+  return drawn(projection, line).reduce<Point | null>((best, p) => (best && best.x <= p.x ? best : p), null);
+}
+
+/** Half the height of a label's letters. */
+const HALF_LETTER = 2.5;
+
+/** How far the map's edge comes towards a label within the height of its letters, where the edge leans over it. */
+function slant(projection: GeoProjection, lat: number, { x, y }: Point): number {
+  const next = leftmost(projection, lat - Math.sign(lat));
+  if (!next || lat === 0) return 0;
+  const [out, down] = [x - next.x, Math.abs(y - next.y)];
+  return out <= 0 || down < 0.2 * out ? 0 : (out / down) * HALF_LETTER;
+}
+
 /** Parallels are labelled where they are leftmost, meridians where they are lowest; what would collide is left out. */
 export function graticuleLabels(projection: GeoProjection): string {
   const taken: Point[] = [];
@@ -66,12 +82,8 @@ export function graticuleLabels(projection: GeoProjection): string {
     svg += textElement(x, y, text, { ...LABEL, anchor });
   };
   for (let lat = -60; lat <= 60; lat += 30) {
-    const points = drawn(
-      projection,
-      Array.from({ length: 721 }, (_, i) => [-180 + i / 2, lat]),
-    );
-    const left = points.reduce<Point | null>((best, p) => (best && best.x <= p.x ? best : p), null);
-    if (left) put(left.x - 4, left.y + 2.5, parallel(lat), 'end');
+    const left = leftmost(projection, lat);
+    if (left) put(left.x - 4 - slant(projection, lat, left), left.y + 2.5, parallel(lat), 'end');
   }
   for (let lon = -180; lon < 180; lon += 60) {
     const points = drawn(

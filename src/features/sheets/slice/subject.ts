@@ -12,6 +12,7 @@ export interface SliceBlock {
     readonly inside: 'smaller' | 'larger';
     readonly outline_older_ma: number | null;
     readonly outline_younger_ma: number | null;
+    readonly source: string | null;
   }[];
 }
 
