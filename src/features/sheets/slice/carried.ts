@@ -2,8 +2,9 @@
 import type { MultiLineString, MultiPolygon, Polygon } from 'geojson';
 import { rotate } from '../../../kernel/rotations';
 import type { Evidence, Pose, Status } from '../../../kernel/rotations/types';
-import { areaKm2, boundingCap, centroid, toLatLon } from '../../../kernel/sphere';
+import { toLatLon } from '../../../kernel/sphere';
 import { poseAt } from '../../motion/scene/tolerant';
+import { measured } from './measured';
 import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
 import { inOrder, motionSources, poseSources } from './sources';
 import { holdsAt, type SliceSubject } from './subject';
@@ -49,27 +50,23 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
       continue;
     }
     if (outlines.length === 0) continue;
-    const sided = outlines.flatMap((o) =>
-      polygonVectors(subject.geometryOf(o.sha256) as Polygon | MultiPolygon, o.inside).map((polygon) => ({
-        polygon,
-        inside: o.inside,
-      })),
+    const parts = outlines.map(({ sha256, inside }) => {
+      const geometry = subject.geometryOf(sha256) as Polygon | MultiPolygon;
+      const polygons = polygonVectors(geometry, inside);
+      return { polygons, ...measured(geometry, polygons, inside) };
+    });
+    const { middle } = parts.reduce((most, part) => (part.largest_km2 > most.largest_km2 ? part : most));
+    const area = carryPolygons(
+      parts.flatMap(({ polygons }) => polygons),
+      pose.quaternion,
     );
-    const polygons = sided.map(({ polygon }) => polygon);
-    const sizes = sided.map(({ polygon, inside }) => areaKm2(polygon, inside));
-    const largest = sided[sizes.indexOf(Math.max(...sizes))]!;
-    const area = carryPolygons(polygons, pose.quaternion);
-    const middle =
-      largest.inside === 'larger'
-        ? centroid(largest.polygon, 'larger')
-        : boundingCap(largest.polygon[0]!).centre;
     const label = toLatLon(rotate(pose.quaternion, middle));
     blocks.push({
       code: block.code,
       name: block.name,
       evidence: block.evidence,
       area,
-      area_km2: sizes.reduce((a, b) => a + b, 0),
+      area_km2: parts.reduce((sum, part) => sum + part.area_km2, 0),
       label,
       sources: inOrder([block.source, ...outlines.map((o) => o.source), ...poseSources(pose)]),
       motion_sources: inOrder(motionSources(subject.model, pose)),

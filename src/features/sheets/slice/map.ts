@@ -87,7 +87,7 @@ const AGE_HALF = 6;
 /** Share of the map's width that a name takes at most. */
 const MOST_NAME = 0.4;
 
-/** Largest blocks first; a name that would lie over another is moved down or up a line, then left out. */
+/** Largest blocks first; a name that would lie over another is moved down or up a line or two, then left out. */
 function namesSvg(
   blocks: readonly CarriedBlock[],
   projection: GeoProjection,
@@ -104,7 +104,7 @@ function namesSvg(
       const text = shortened(shortName({ ...block, kind: 'other' }), NAME, MOST_NAME * (right - left));
       const half = textWidth(text, NAME) / 2;
       const x = Math.min(right - half, Math.max(left + half, point[0]));
-      for (const dy of [0, 11, -11]) {
+      for (const dy of [0, 11, -11, 20, -20]) {
         const box = { x, y: point[1] + dy, half: half + 1 };
         if (placed.some((p) => Math.abs(p.x - box.x) < p.half + box.half && Math.abs(p.y - box.y) < 10))
           continue;

@@ -20,6 +20,6 @@ export function svgDocument({ width, height, title, subject, age_ma }: About, bo
   const [w, h] = [width.toFixed(2), height.toFixed(2)];
   const describe = `${subject.version}, ${inText({ ...subject.frame, kind: 'frame' })} frame, ${age(age_ma)}. ${CAUTION_LINE}`;
   const head = `xmlns="http://www.w3.org/2000/svg" width="${w}pt" height="${h}pt" viewBox="0 0 ${w} ${h}" role="img"`;
-  const defs = `<defs><style>${embeddedFontRules()}</style>${EVIDENCE.map((e) => EVIDENCE_PATTERNS[e]).join('')}</defs>`;
+  const defs = `<defs><style>${embeddedFontRules(body)}</style>${EVIDENCE.map((e) => EVIDENCE_PATTERNS[e]).join('')}</defs>`;
   return `<svg ${head}><title>${escapeXml(title)}</title><desc>${escapeXml(describe)}</desc>${defs}${body}</svg>\n`;
 }

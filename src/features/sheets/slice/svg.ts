@@ -12,12 +12,18 @@ export const short = (value: number): string => String(Math.round(value * 100) /
 
 type Attributes = Readonly<Record<string, string | number | undefined>>;
 
+/** Path data are letters and numbers made here, and long: they need no escaping. */
+function written(key: string, value: string | number): string {
+  if (typeof value === 'number') return short(value);
+  return key === 'd' ? value : escapeXml(value);
+}
+
 export function element(name: string, attributes: Attributes, content = ''): string {
-  const written = Object.entries(attributes)
+  const list = Object.entries(attributes)
     .filter(([, value]) => value !== undefined)
-    .map(([key, value]) => ` ${key}="${typeof value === 'number' ? short(value) : escapeXml(value!)}"`)
+    .map(([key, value]) => ` ${key}="${written(key, value!)}"`)
     .join('');
-  return content === '' ? `<${name}${written}/>` : `<${name}${written}>${content}</${name}>`;
+  return content === '' ? `<${name}${list}/>` : `<${name}${list}>${content}</${name}>`;
 }
 
 export type Family = 'Inter' | 'Source Serif 4';
