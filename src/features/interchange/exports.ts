@@ -48,11 +48,18 @@ function featureCollection(features: readonly { properties: object; geometry: Ge
 export function blocksGeojson(blocks: readonly Block[], geometryOf: GeometryOf): string {
   const features = blocks.flatMap((block) => {
     const { code, name, kind, appears_ma, disappears_ma, evidence, source, note } = block;
-    const whole = { outline_older_ma: null, outline_younger_ma: null, inside: null, sha256: null };
+    const whole = {
+      outline_older_ma: null,
+      outline_younger_ma: null,
+      inside: null,
+      sha256: null,
+      source: null,
+    };
     const outlines = block.outlines.length > 0 ? block.outlines : [whole];
-    return outlines.map(({ outline_older_ma, outline_younger_ma, inside, sha256 }) => ({
+    return outlines.map(({ outline_older_ma, outline_younger_ma, inside, sha256, source: drawn_from }) => ({
       properties: {
         code, name, kind, appears_ma, disappears_ma, outline_older_ma, outline_younger_ma, inside, evidence, source, note,
+        ...(drawn_from === null ? {} : { outline_source: drawn_from }),
       }, // prettier-ignore
       geometry: sha256 === null ? null : geometryOf(sha256),
     }));

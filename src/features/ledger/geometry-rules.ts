@@ -1,5 +1,6 @@
 import canonicalize from 'canonicalize';
 import type { FieldError } from '~/server/problem';
+import { samePlace } from './same-place';
 import type { OutlineGeometry, Position } from '~/kernel/cartography/outline-codec';
 import { sha256 } from '~/server/secrets';
 
@@ -61,7 +62,7 @@ export function checkGeometry({ type, coordinates }: RawGeometry): CheckedGeomet
       return { path, read: `${part.length} positions`, problem: `at least ${LEAST[type]} are needed` };
     }
     const [first, last] = [part[0]!, part.at(-1)!];
-    return isRing && (first[0] !== last[0] || first[1] !== last[1])
+    return isRing && !samePlace(first, last)
       ? {
           path,
           read: shown(last),
@@ -87,6 +88,10 @@ export function checkGeometry({ type, coordinates }: RawGeometry): CheckedGeomet
 const shown = (value: unknown): string => (JSON.stringify(value) ?? '').slice(0, 80);
 
 function placeError(value: unknown, path: string): FieldError | null {
+  if (Array.isArray(value) && value.length > 2 && value.every(Number.isFinite)) {
+    const hint = 'Leave the height out: outlines lie on the sphere.';
+    return { path, read: shown(value), problem: 'a position with a height', hint };
+  }
   if (!Array.isArray(value) || value.length !== 2 || !value.every(Number.isFinite)) {
     return { path, read: shown(value), problem: 'a position is [longitude, latitude] in degrees' };
   }

@@ -11,7 +11,7 @@ type PathOf = (id: string) => string | undefined;
 
 /**
  * What must hold at the end of an edit, whatever happened within: no two rotations of one block, reference and
- * age, no two outlines of one block at one age, no two sources of one name, no row on a block that is not there. The database's own constraints, which
+ * age, no two outlines of one block at one age, none on a frame, no two sources of one name, no row on a block that is not there. The database's own constraints, which
  * are deferred until then, say the same without naming the cell.
  */
 export async function integrityErrors(
@@ -24,6 +24,8 @@ export async function integrityErrors(
   if (touched.has('rotations') || touched.has('blocks'))
     errors.push(...(await duplicateRotations(tx, projectId, pathOf)));
   if (touched.has('outlines')) errors.push(...(await overlappingOutlines(tx, projectId, pathOf)));
+  if (touched.has('outlines') || touched.has('blocks'))
+    errors.push(...(await outlinedFrames(tx, projectId, pathOf)));
   if (touched.has('sources')) errors.push(...(await duplicateSources(tx, projectId, pathOf)));
   for (const table of CARRIED) {
     if (touched.has(table) || touched.has('blocks'))
@@ -96,6 +98,25 @@ async function overlappingOutlines(
       hint: 'Say when each holds in outline_older_ma and outline_younger_ma, or join them as a MultiPolygon.',
     })),
   );
+}
+
+/** A frame is a point of view. Named at the outline where the edit made it, else at the block that became a frame. */
+async function outlinedFrames(tx: Transaction, projectId: string, pathOf: PathOf): Promise<FieldError[]> {
+  const found = await tx
+    .select({ code: block.code, block: block.id, outline: blockOutline.id })
+    .from(blockOutline)
+    .innerJoin(block, and(eq(block.project_id, blockOutline.project_id), eq(block.code, blockOutline.block)))
+    .where(and(eq(blockOutline.project_id, projectId), eq(block.kind, 'frame')))
+    .limit(100);
+  return found.map(({ code, block: id, outline }) => {
+    const made = pathOf(outline);
+    return {
+      path: made === undefined ? within(pathOf(id) ?? '', 'kind') : within(made, 'block'),
+      read: made === undefined ? 'frame' : code,
+      problem: 'a frame has no outline',
+      hint: 'Give the block another kind, or take the outline away.',
+    };
+  });
 }
 
 async function duplicateSources(tx: Transaction, projectId: string, pathOf: PathOf): Promise<FieldError[]> {

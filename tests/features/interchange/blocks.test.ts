@@ -1,8 +1,11 @@
 /** Outlines as people save them. RFC 7946 is the standard for positions, rings and their direction (section 3.1.6). */
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readBlocks } from '~/features/interchange/rules/blocks';
 import { readFeatures } from '~/features/interchange/rules/features';
-import { selfCrossing } from '~/features/interchange/rules/rings';
+import { findCrossing } from '~/features/interchange/rules/crossings';
+import { planBlocks } from '~/features/interchange/rules/plan-blocks';
+import { destination, toLatLon, toVector, type Vector3 } from '../../../src/kernel';
 
 type Ring = number[][];
 const square = (w: number, s: number, e: number, n: number): Ring => [[w, s], [e, s], [e, n], [w, n], [w, s]]; // prettier-ignore
@@ -150,13 +153,133 @@ describe('blocks.geojson', () => {
   });
 });
 
-describe('a ring that crosses itself on the sphere', () => {
-  it('is found over the antimeridian and the pole, and a star-shaped one is not', () => {
-    expect(selfCrossing([[175, 0], [-175, 10], [-175, 0], [175, 10], [175, 0]])).not.toBeNull();
-    expect(selfCrossing([[0, 80], [180, 80], [90, 80], [-90, 80], [0, 80]])).not.toBeNull();
+describe('rings that cross on the sphere', () => {
+  const crossed = (...rings: number[][][]) => findCrossing(rings) !== null;
+
+  it('are found over the antimeridian and the pole, and a star-shaped one is not', () => {
+    expect(crossed([[175, 0], [-175, 10], [-175, 0], [175, 10], [175, 0]])).toBe(true);
+    expect(crossed([[0, 80], [180, 80], [90, 80], [-90, 80], [0, 80]])).toBe(true);
     const star = Array.from({ length: 720 }, (_, i) => [i / 2, -70 + (i % 2) * 12]);
-    expect(selfCrossing([...star, star[0]!])).toBeNull();
-  }); // prettier-ignore
+    expect(crossed([...star, star[0]!])).toBe(false);
+  });
+
+  it('are found where they meet at a vertex, and may touch there', () => {
+    expect(crossed([[0, 0], [10, 10], [20, 20], [20, 0], [10, 10], [0, 20], [0, 0]])).toBe(true);
+    expect(crossed([[0, 0], [10, 10], [20, 0], [20, 20], [10, 10], [0, 20], [0, 0]])).toBe(false);
+    // A vertex on the equator, within an edge along it.
+    expect(crossed([[0, 0], [20, 0], [20, 10], [10, 0], [5, -10], [0, 0]])).toBe(true);
+    expect(crossed([[0, 0], [20, 0], [20, 10], [10, 0], [0, 10], [0, 0]])).toBe(false);
+  });
+
+  it('are found between rings', () => {
+    expect(crossed(square(0, 0, 10, 10), square(5, 5, 15, 15))).toBe(true);
+    expect(crossed(square(0, 0, 10, 10), square(10, 0, 20, 10))).toBe(false);
+    expect(crossed(square(0, 0, 30, 10), square(10, -40, 20, 40))).toBe(true);
+  });
+
+  it('agree with trying every pair of edges', () => {
+    const jitter = fc.array(fc.tuple(fc.double({ min: 0.55, max: 1, noNaN: true }), fc.double({ min: -1.5, max: 1.5, noNaN: true })), { minLength: 5, maxLength: 40 });
+    const place = fc.tuple(fc.double({ min: -180, max: 180, noNaN: true }), fc.double({ min: -80, max: 80, noNaN: true }), fc.double({ min: 0.1, max: 60, noNaN: true }));
+    let crossings = 0;
+    fc.assert(
+      fc.property(jitter, place, (radii, [lon, lat, size]) => {
+        const ring = radii.map(([r, turn], i) => {
+          const v = destination(toVector(lat, lon), ((i + turn) * 360) / radii.length, r * size * 111);
+          const at = toLatLon(v);
+          return [at.lon, at.lat];
+        });
+        const closed = [...ring, ring[0]!];
+        const slow = everyPairCrosses(closed);
+        if (slow) crossings++;
+        expect(crossed(closed)).toBe(slow);
+      }),
+      { numRuns: 400 },
+    );
+    expect(crossings).toBeGreaterThan(20);
+  });
+
+  it('of a hundred thousand vertices are looked through without trying every pair', () => {
+    const n = 100_000;
+    const ring = Array.from({ length: n }, (_, i) => {
+      const at = toLatLon(destination(toVector(40, 50), (i * 360) / n, 2000 + 30 * Math.sin(i) + 20 * Math.sin(i / 7)));
+      return [at.lon, at.lat];
+    });
+    expect(crossed([...ring, ring[0]!])).toBe(false);
+  });
+}); // prettier-ignore
+
+/** Signs of triple products alone, for edges that share no end. */
+function everyPairCrosses(ring: readonly (readonly number[])[]): boolean {
+  const v = ring.slice(0, -1).map(([lon, lat]) => toVector(lat!, lon!));
+  const det = (a: Vector3, b: Vector3, c: Vector3): number =>
+    a[0] * (b[1] * c[2] - b[2] * c[1]) -
+    a[1] * (b[0] * c[2] - b[2] * c[0]) +
+    a[2] * (b[0] * c[1] - b[1] * c[0]);
+  const n = v.length;
+  for (let i = 0; i < n; i++) {
+    for (let j = i + 2; j < n; j++) {
+      if (i === 0 && j === n - 1) continue;
+      const [a, b, c, d] = [v[i]!, v[i + 1]!, v[j]!, v[(j + 1) % n]!];
+      const [s1, s2, s3, s4] = [det(a, b, c), det(a, b, d), det(c, d, a), det(c, d, b)];
+      if (s1 > 0 !== s2 > 0 && s3 > 0 !== s4 > 0 && s1 > 0 === s4 > 0) return true;
+    }
+  }
+  return false;
+}
+
+describe('what else an outline can hold', () => {
+  const one = (geometry: object, properties: object = {}) =>
+    file({ type: 'Feature', properties: { code: 'x', ...properties }, geometry });
+  const polygon = (...coordinates: number[][][]) => ({ type: 'Polygon', coordinates });
+
+  it('heights are left out: of 0 with a note, others when told', () => {
+    const high = (z: number) => polygon(square(0, 0, 5, 5).map((p) => [...p, z]));
+    const flat = readBlocks(one(high(0)));
+    expect(flat.notes).toContain('Heights of 0 are left out.');
+    expect(ids(flat)).toEqual([]);
+    expect(flat.candidates[0]!.fields.outlines[0]!.geometry.coordinates[0]![0]).toHaveLength(2);
+    expect(ids(readBlocks(one(high(120))))).toEqual(['heights']);
+    const left = readBlocks(one(high(120)), { heights: 'leave them out' });
+    expect(left.candidates[0]!.fields.outlines[0]!.geometry.coordinates[0]![0]).toHaveLength(2);
+    const kept = planBlocks(readBlocks(one(high(120)), { heights: 'reject these features' }), []);
+    expect(kept.rejected[0]!.problem).toBe('a position with a height');
+  });
+
+  it('a ring round a pole may run on through all longitudes', () => {
+    const ring = [-180, -90, 0, 90, 180].map((lon) => [lon, -60]);
+    const plan = planBlocks(readBlocks(one(polygon(ring))), []);
+    expect([plan.accepted, plan.rejected]).toEqual([1, []]);
+  });
+
+  it('a hole lies within, and does not cross', () => {
+    const outer = square(0, 0, 20, 20);
+    expect(readBlocks(one(polygon(outer, square(5, 5, 9, 9)))).rejected).toEqual([]);
+    const problem = (hole: number[][]) => readBlocks(one(polygon(outer, hole))).rejected[0]!.problem;
+    expect(problem(square(30, 5, 34, 9))).toBe('a hole lies outside the outline that it is in');
+    expect(problem(square(15, 5, 25, 9))).toMatch(/two rings of the outline cross: 1 and 2/);
+  });
+
+  it('the larger side of several parts is refused', () => {
+    const parts = { type: 'MultiPolygon', coordinates: [[square(0, 0, 5, 5)], [square(40, 0, 45, 5)]] };
+    expect(readBlocks(one(parts)).rejected).toEqual([]);
+    expect(readBlocks(one(parts, { inside: 'larger' })).rejected[0]!.problem).toMatch(/whole globe/);
+  });
+
+  it.each(['66 30', '66 E', '12 S', "66° 30'"])('an age of %s is no age', (age) => {
+    const { rejected } = readBlocks(one(polygon(square(0, 0, 5, 5)), { appears_ma: age }));
+    expect(rejected).toMatchObject([{ column: 'appears_ma', read: age, problem: 'written as an angle' }]);
+  });
+
+  it('the line is that of the feature, whatever the collection is called', () => {
+    const text = `{"type":"FeatureCollection","name":"features",\n"features":[\n{"type":"Feature","properties":{"code":"X!"},"geometry":null}]}`;
+    expect(readBlocks(text).rejected[0]).toMatchObject({ line: 3, column: 'code' });
+    expect(readBlocks('{"type":"FeatureCollection",\n"features": nul}').rejected[0]).toMatchObject({
+      line: 2,
+    });
+    expect(readBlocks('{"type":"FeatureCollection",\n"features": [\n').rejected[0]).toMatchObject({
+      line: 3,
+    });
+  });
 });
 
 describe('features.geojson', () => {
@@ -174,5 +297,12 @@ describe('features.geojson', () => {
       [3, 'block'],
       [4, 'kind'],
     ]);
+  });
+
+  it('names the properties that it does not read', () => {
+    const point = { type: 'Feature', properties: { block: 'sable', kind: 'rock', colour: 'red' }, geometry: { type: 'Point', coordinates: [1, 2, 0] } }; // prettier-ignore
+    const { notes, candidates } = readFeatures(file(point), new Set(['sable']));
+    expect(notes).toEqual(['Heights of 0 are left out.', 'Properties not read: colour.']);
+    expect(candidates[0]!.fields.geometry).toEqual({ type: 'Point', coordinates: [1, 2] });
   });
 });

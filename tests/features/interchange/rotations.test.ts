@@ -126,7 +126,7 @@ describe('what is open is asked, once each, and never changed silently', () => {
 
   it.each([
     ["29°36'S", -29.6],
-    ['41 12 E', 41.2],
+    ['41 12 N', 41.2],
     ['-29°36′', -29.6],
     ['12°30\'36"N', 12.51],
   ])('degrees and minutes: %s', (written, value) => {
@@ -378,5 +378,48 @@ describe('two sequences of one block for the same ages', () => {
     expect(chosen.remove.map(({ id }) => id)).toEqual(['draft-0', 'draft-1', 'draft-2']);
     expect(chosen.create).toHaveLength(3);
     expect(chosen.rejected).toEqual([]);
+  });
+});
+
+describe('where a row stands and what its cells may be', () => {
+  it('is the line it begins on, with cells of several lines and blank lines before the headings', () => {
+    const text =
+      `\n\n${HEAD};note\n`.replaceAll(',', ';') + 'sable;tarn;10;1;2;3;"two\nlines"\nsable;tarn;x;1;2;3;\n';
+    const { rejected, candidates } = readRotations(text);
+    expect(candidates.map(({ line }) => line)).toEqual([4]);
+    expect(rejected).toMatchObject([{ line: 6, column: 'age_ma', read: 'x' }]);
+  });
+
+  it.each([
+    ['66 30,1,2,3', 'age_ma'],
+    ['66 E,1,2,3', 'age_ma'],
+    ['66,12,20,3 E', 'angle_deg'],
+  ])('%s is refused at %s', (cells, column) => {
+    const reading = readRotations(file(`sable,tarn,${cells}`));
+    expect(reading.rejected).toMatchObject([{ line: 2, column, problem: 'written as an angle' }]);
+    expect(ids(reading)).toEqual([]);
+  });
+
+  it.each([
+    ['66,12 E,2,3', 'pole_lat'],
+    ['66,12,20 N,3', 'pole_lon'],
+  ])('%s has its letters the wrong way round', (cells, column) => {
+    const { rejected } = readRotations(file(`sable,tarn,${cells}`));
+    expect(rejected).toMatchObject([{ line: 2, column, problem: 'the letter of the other coordinate' }]);
+  });
+
+  it('12 30 N, 20 W is asked about as ever', () => {
+    expect(ids(readRotations(file('sable,tarn,66,12 30 N,20 W,3')))).toEqual([
+      'degrees_minutes',
+      'hemisphere_letters',
+    ]);
+  });
+
+  it('radians are given their reason', () => {
+    const text = 'block,relative_to,age_ma,pole_lat_rad,pole_lon_rad,angle_deg\nsable,tarn,10,0.5,0.5,30\n';
+    const [question] = readRotations(text)
+      .asking.questions()
+      .filter(({ id }) => id === 'angle_unit');
+    expect(question?.ask).toMatch(/in radians by their heading/);
   });
 });

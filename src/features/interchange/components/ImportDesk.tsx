@@ -60,7 +60,9 @@ export default function ImportDesk({ slug, blocks }: Props) {
       setRefused(
         error instanceof ImportRefused
           ? error.message
-          : 'The server did not answer. Nothing was written; try again.',
+          : dryRun
+            ? 'The server did not answer. Nothing was written; try again.'
+            : 'The server did not answer. Whether the file was taken is not known: read it again, and rows that are there already say so.',
       );
     } finally {
       if (mine === latest.current) setBusy(null);

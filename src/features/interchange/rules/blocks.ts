@@ -4,9 +4,10 @@ import { BLOCK_KINDS, EVIDENCE } from '../../../kernel/rotations/types';
 import type { BlockFields, OutlineFields } from '../../ledger/contract';
 import type { Answers, RejectedRow } from '../contract';
 import { Asking } from './ask';
-import { readFeatureCollection, type LocatedFeature } from './geojson-text';
+import { readFeatureCollection, unreadProperties, type LocatedFeature } from './geojson-text';
+import { withoutHeights } from './heights';
 import { alongStraightLines, followsStraightLines } from './long-edges';
-import { outlineFaults, readOutline } from './outline';
+import { outlineFaults, partsFault, readOutline } from './outline';
 import { PropertyReader } from './properties';
 import type { Candidate, FileReading } from './rotations';
 import { ringFault } from './rings';
@@ -26,12 +27,13 @@ export type BlocksReading = FileReading<BlockCandidate>;
 
 const KNOWN = new Set([
   'code', 'name', 'kind', 'appears_ma', 'disappears_ma', 'outline_older_ma', 'outline_younger_ma', 'inside',
-  'evidence', 'source', 'note',
+  'evidence', 'source', 'note', 'outline_source',
 ]); // prettier-ignore
 
 export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
   const asking = new Asking(answers);
-  const { features, rejected } = readFeatureCollection(text);
+  const { features: read, rejected } = readFeatureCollection(text);
+  const { features, notes } = withoutHeights(read, asking);
   const reader = new PropertyReader(asking);
   const swapped = outlineFaults.swapped(features, asking);
   const parts = withoutHalves(
@@ -45,7 +47,7 @@ export function readBlocks(text: string, answers: Answers = {}): BlocksReading {
     asking,
   );
   const candidates = gather(straight ? parts.flatMap((part) => straightened(part, all)) : parts, all);
-  return { candidates, rejected: all, asking, notes: notesOf(features) };
+  return { candidates, rejected: all, asking, notes: [...notes, ...notesOf(features)] };
 }
 
 /** Features of one code are one block: where one of them is rejected, the others would be a part of it unasked. */
@@ -81,8 +83,13 @@ interface Part {
 function straightened(part: Part, rejected: RejectedRow[]): Part[] {
   if (!part.outline) return [part];
   const geometry = alongStraightLines(part.outline.geometry);
-  const rings = geometry.type === 'Polygon' ? geometry.coordinates : geometry.coordinates.flat();
-  const fault = rings.map(ringFault).find((found) => found !== null);
+  const polygons = geometry.type === 'Polygon' ? [geometry.coordinates] : geometry.coordinates;
+  const { inside } = part.outline;
+  const fault =
+    polygons
+      .flat()
+      .map(ringFault)
+      .find((found) => found !== null) ?? partsFault(polygons, inside);
   if (!fault) return [{ ...part, outline: { ...part.outline, geometry } }];
   rejected.push({ line: part.line, entry: part.entry, column: 'geometry', ...fault });
   return [];
@@ -157,7 +164,7 @@ function readFeature(
       line: feature.line,
       ...span,
       inside: outline.inside,
-      source: null,
+      source: reader.text(feature, 'outline_source'),
       geometry: outline.geometry,
     },
   };
@@ -208,10 +215,7 @@ function overlapping(a: OutlineCandidate, b: OutlineCandidate): boolean {
 }
 
 function notesOf(features: readonly LocatedFeature[]): string[] {
-  const ignored = new Set(
-    features.flatMap((f) => Object.keys(f.properties)).filter((key) => !KNOWN.has(key)),
-  );
-  const notes = ignored.size > 0 ? [`Properties not read: ${[...ignored].join(', ')}.`] : [];
+  const notes = unreadProperties(features, KNOWN);
   if (features.some((f) => outlineFaults.beyond180(f))) {
     notes.push('Longitudes beyond 180° are kept as they are written; they mean the same places.');
   }

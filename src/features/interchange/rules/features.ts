@@ -3,7 +3,8 @@ import type { Geometry, Position } from 'geojson';
 import { FEATURE_KINDS, type FeatureFields } from '../../ledger/contract';
 import type { Answers } from '../contract';
 import { Asking } from './ask';
-import { readFeatureCollection, type LocatedFeature } from './geojson-text';
+import { readFeatureCollection, unreadProperties, type LocatedFeature } from './geojson-text';
+import { withoutHeights } from './heights';
 import { alongStraightLines, followsStraightLines } from './long-edges';
 import { PropertyReader } from './properties';
 import type { FileReading } from './rotations';
@@ -14,6 +15,9 @@ export interface FeatureCandidate {
   readonly geometry: Geometry;
 }
 
+const KNOWN = new Set([
+  'block', 'kind', 'name', 'age_ma', 'appears_ma', 'disappears_ma', 'chron', 'side', 'source', 'note',
+]); // prettier-ignore
 const SIDES = ['left', 'right', 'north', 'south', 'east', 'west'] as const;
 const SHAPES = ['Point', 'MultiPoint', 'LineString', 'MultiLineString', 'Polygon', 'MultiPolygon'] as const;
 
@@ -24,7 +28,8 @@ export function readFeatures(
   answers: Answers = {},
 ): FileReading<FeatureCandidate> {
   const asking = new Asking(answers);
-  const { features, rejected } = readFeatureCollection(text);
+  const { features: located, rejected } = readFeatureCollection(text);
+  const { features, notes } = withoutHeights(located, asking);
   const reader = new PropertyReader(asking);
   const read = features
     .map((feature) => ({ line: feature.line, fields: readOne(feature, reader, blocks) }))
@@ -36,7 +41,12 @@ export function readFeatures(
         fields: { ...fields, geometry: alongStraightLines(fields.geometry) },
       }))
     : read;
-  return { candidates, rejected: [...rejected, ...reader.rejected], asking, notes: [] };
+  return {
+    candidates,
+    rejected: [...rejected, ...reader.rejected],
+    asking,
+    notes: [...notes, ...unreadProperties(features, KNOWN)],
+  };
 }
 
 function readOne(

@@ -24,9 +24,9 @@ export function readFeatureCollection(text: string): GeoJsonReading {
   try {
     data = JSON.parse(text);
   } catch (error) {
-    const position = Number(/position (\d+)/.exec(String(error))?.[1] ?? NaN);
-    const line = Number.isFinite(position) ? lineAt(text, position) : null;
-    const read = Number.isFinite(position) ? text.slice(Math.max(0, position - 20), position + 20) : '';
+    const position = faultAt(text, error);
+    const line = lineAt(text, position);
+    const read = text.slice(Math.max(0, position - 20), position + 20);
     return wrongFile(
       line,
       read,
@@ -72,9 +72,27 @@ export function readFeatureCollection(text: string): GeoJsonReading {
   return { features, rejected };
 }
 
+/** Names the properties that no column of the format claims. */
+export function unreadProperties(features: readonly LocatedFeature[], known: ReadonlySet<string>): string[] {
+  const unread = new Set(
+    features.flatMap(({ properties }) => Object.keys(properties)).filter((key) => !known.has(key)),
+  );
+  return unread.size > 0 ? [`Properties not read: ${[...unread].join(', ')}.`] : [];
+}
+
 /** Whatever stands there, as a few words; converting an object could run what it holds. */
 const written = (value: unknown): string =>
   typeof value === 'object' ? 'an object' : String(value).slice(0, 80);
+
+/** Where JSON stops to be JSON: the engine names the place or quotes what stands around it, or the text ends too soon. */
+function faultAt(text: string, error: unknown): number {
+  const words = String(error);
+  const place = /position (\d+)/.exec(words)?.[1];
+  if (place !== undefined) return Number(place);
+  const around = /, (?:\.\.\.)?"([\s\S]+)"(?:\.\.\.)? is not valid JSON$/.exec(words)?.[1];
+  const found = around === undefined ? -1 : text.indexOf(around);
+  return found < 0 ? text.length : found + Math.floor(around!.length / 2);
+}
 
 function lineAt(text: string, position: number): number {
   let line = 1;
@@ -93,7 +111,13 @@ export function featureLines(text: string): number[] {
     if (c === '\n') line++;
     else if (c === '"') {
       const end = stringEnd(text, i);
-      if (depth === 1 && text.slice(i + 1, end) === 'features' && listDepth < 0) listDepth = 2;
+      if (
+        depth === 1 &&
+        listDepth < 0 &&
+        text.slice(i + 1, end) === 'features' &&
+        /^\s*:/.test(text.slice(end + 1, end + 200))
+      )
+        listDepth = 2;
       i = end;
     } else if (c === '{' || c === '[') {
       depth++;

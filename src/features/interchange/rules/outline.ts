@@ -4,7 +4,8 @@ import { readRing, ringArea } from '../../../kernel/sphere';
 import type { Asking } from './ask';
 import type { LocatedFeature } from './geojson-text';
 import type { PropertyReader } from './properties';
-import { ringFault } from './rings';
+import { crossingFault, polygonFault, ringFault, type RingFault } from './rings';
+import { findCrossing } from './crossings';
 
 export interface OutlineReading {
   readonly geometry: Polygon | MultiPolygon;
@@ -39,6 +40,12 @@ export function readOutline(
       }
     }
   }
+  const settled = inside ?? askInside(feature, read, asking);
+  const fault = partsFault(polygons as Position[][][], settled);
+  if (fault) {
+    reader.reject(feature, 'geometry', fault.problem, fault.hint, fault.read);
+    return null;
+  }
   if (polygons.length === 0) {
     reader.reject(
       feature,
@@ -49,7 +56,26 @@ export function readOutline(
     );
     return null;
   }
-  return { geometry: read, inside: inside ?? askInside(feature, read, asking) };
+  return { geometry: read, inside: settled };
+}
+
+/** What is wrong between the rings of an outline and between its parts, each without fault by itself. */
+export function partsFault(
+  polygons: readonly Position[][][],
+  inside: 'smaller' | 'larger',
+): RingFault | null {
+  if (inside === 'larger' && polygons.length > 1) {
+    return {
+      read: `${polygons.length} parts`,
+      problem: 'the larger side of several parts is the whole globe',
+      hint: 'Give one outer ring with inside larger, or write the rest of the globe as parts of inside smaller.',
+    };
+  }
+  const own = polygons.map((rings) => polygonFault(rings, inside)).find((fault) => fault !== null);
+  if (own) return own;
+  const rings = polygons.flat();
+  const crossing = polygons.length > 1 ? findCrossing(rings) : null;
+  return crossing && crossingFault(rings, crossing);
 }
 
 /**

@@ -72,8 +72,8 @@ function createOutline(planner: Planner, candidate: BlockCandidate, outline: Has
 }
 
 const outlineKey = (
-  o: Pick<Hashed, 'sha256' | 'inside' | 'outline_older_ma' | 'outline_younger_ma'>,
-): string => [o.sha256, o.inside, o.outline_older_ma, o.outline_younger_ma].join(' ');
+  o: Pick<Hashed, 'sha256' | 'inside' | 'outline_older_ma' | 'outline_younger_ma' | 'source'>,
+): string => JSON.stringify([o.sha256, o.inside, o.outline_older_ma, o.outline_younger_ma, o.source]);
 
 function same(candidate: BlockCandidate, outlines: readonly Hashed[], block: Block): boolean {
   const [a, b] = [outlines, block.outlines].map((list) => list.map(outlineKey).sort().join('\n'));

@@ -13,6 +13,9 @@ export function planFeatures(
 ): ImportPlan {
   const planner = new Planner();
   const rejected: RejectedRow[] = [...reading.rejected];
+  const byShape = new Map<string, Feature[]>();
+  for (const feature of existing)
+    byShape.set(feature.sha256, [...(byShape.get(feature.sha256) ?? []), feature]);
   for (const { line, fields: candidate } of reading.candidates) {
     const checked = checkGeometry(candidate.geometry as Parameters<typeof checkGeometry>[0]);
     if (isFieldError(checked)) {
@@ -26,7 +29,7 @@ export function planFeatures(
       continue;
     }
     const fields = { ...candidate.fields, sha256: checked.sha256 };
-    const there = existing.some((feature) => sameFields(fields, feature));
+    const there = (byShape.get(checked.sha256) ?? []).some((feature) => sameFields(fields, feature));
     const { block, kind, name, age_ma, appears_ma, disappears_ma, source } = candidate.fields;
     planner.show(line, there ? 'unchanged' : 'new', {
       block,

@@ -43,6 +43,10 @@ export class PropertyReader {
       this.reject(feature, column, reading.problem, reading.hint);
       return undefined;
     }
+    if (reading.form === 'degrees-minutes' || reading.form === 'hemisphere') {
+      this.reject(feature, column, 'written as an angle', 'Write a decimal number with a point.');
+      return undefined;
+    }
     if (reading.form === 'decimal comma') {
       const ask = 'Numbers are written with commas. Are they decimal commas?';
       const choices = ['decimal commas', 'reject these rows'] as const;

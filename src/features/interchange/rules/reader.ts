@@ -28,6 +28,21 @@ const FORM_QUESTIONS: Record<Exclude<NumberForm, 'plain'>, { id: string; ask: st
 };
 const NO = 'reject these rows';
 
+/** Columns whose numbers are angles, and those that a hemisphere's letter can stand in. */
+const ANGLES = /^(?:pole_)?(?:lat|lon)$|^(?:angle_deg|declination|inclination|strike|dip)$/;
+const LETTERS: Readonly<Record<string, RegExp>> = { lat: /[NS]$/i, lon: /[EW]$/i };
+
+/** An age has no minutes, and a latitude no east: what is wrong and how to mend it, or null. */
+function unsuited(column: string, form: NumberForm, read: string): readonly [string, string] | null {
+  if (form === 'plain' || form === 'decimal comma') return null;
+  const wanted = LETTERS[column.replace('pole_', '')];
+  const lettered = /[NSEW]\s*$/i.test(read);
+  if (wanted && lettered && !wanted.test(read.trim()))
+    return ['the letter of the other coordinate', 'Are latitude and longitude exchanged in the headings?'];
+  if (ANGLES.test(column) && (wanted || !lettered)) return null;
+  return ['written as an angle', 'Write a decimal number with a point.'];
+}
+
 export class CellReader {
   readonly rejected: Rejection[] = [];
 
@@ -56,6 +71,11 @@ export class CellReader {
     const reading = readNumber(read);
     if (!reading.ok) {
       this.reject(row, column, reading.problem, reading.hint);
+      return undefined;
+    }
+    const odd = unsuited(column, reading.form, read);
+    if (odd) {
+      this.reject(row, column, ...odd);
       return undefined;
     }
     if (reading.form !== 'plain') {

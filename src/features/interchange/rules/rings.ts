@@ -1,8 +1,10 @@
 /**
- * Checks rings of [longitude, latitude] before they become outlines: enough points, closed, in range, not crossing
- * themselves. Edges are great circles. Longitudes may run past 180° or jump there; vectors do not see it.
+ * Checks rings of [longitude, latitude] before they become outlines: enough points, closed, in range, clear of
+ * themselves and one another. Edges are great circles. Longitudes may run past 180° or jump there; vectors do not see it.
  */
-import { readRing, ringArea, toVector } from '../../../kernel/sphere';
+import { contains, readRing, ringArea, toVector, type Inside } from '../../../kernel/sphere';
+import { samePlace } from '../../ledger/same-place';
+import { findCrossing, type Crossing } from './crossings';
 import type { Vector3 } from '../../../kernel/rotations/types';
 
 export type Ring = readonly (readonly number[])[];
@@ -48,20 +50,53 @@ export function ringFault(ring: unknown): RingFault | null {
       hint: 'Positions are [longitude, latitude]: latitude within 90°.',
     };
   }
-  if (!same(first, last)) {
+  if (!samePlace(first, last)) {
     return {
       read: `${point(first)} … ${point(last)}`,
       problem: 'the ring is not closed',
       hint: 'Repeat the first position at the end.',
     };
   }
-  const crossing = selfCrossing(positions);
-  if (!crossing) return degenerateFault(positions);
-  const [i, j] = crossing;
+  const crossing = findCrossing([positions]);
+  return crossing ? crossingFault([positions], crossing) : degenerateFault(positions);
+}
+
+/** Faults of a polygon whose rings have none by themselves: rings that cross, holes outside their outer ring. */
+export function polygonFault(rings: readonly Ring[], inside: Inside): RingFault | null {
+  const crossing = rings.length > 1 ? findCrossing(rings) : null;
+  if (crossing) return crossingFault(rings, crossing);
+  const [outer, ...holes] = rings.map(readRing);
+  const stray = outer
+    ? holes.findIndex((hole) => !someOf(hole).every((v) => contains([outer], v, inside)))
+    : -1;
+  if (stray < 0) return null;
   return {
-    read: point(positions[i]!),
-    problem: `the ring crosses itself: edge ${i + 1} meets edge ${j + 1} near ${point(positions[j]!)}`,
-    hint: 'Move or remove a vertex there, or split the outline into parts.',
+    read: `hole ${stray + 1}, from ${point(rings[stray + 1]![0]!)}`,
+    problem: 'a hole lies outside the outline that it is in',
+    hint: 'Make it a part of its own in a MultiPolygon, or take it out.',
+  };
+}
+
+/** Of rings that do not cross, a few corners tell where the whole lies; one alone may touch. */
+const someOf = (hole: readonly Vector3[]): Vector3[] =>
+  [0, 1 / 3, 2 / 3].flatMap((share) => {
+    const corner = hole[Math.floor(share * hole.length)];
+    return corner ? [corner] : [];
+  });
+
+export function crossingFault(rings: readonly Ring[], { first, second }: Crossing): RingFault {
+  const at = ({ ring, edge }: Crossing['first']): string => point(rings[ring]![edge]!);
+  if (first.ring === second.ring) {
+    return {
+      read: at(first),
+      problem: `the ring crosses itself: edge ${first.edge + 1} meets edge ${second.edge + 1} near ${at(second)}`,
+      hint: 'Move or remove a vertex there, or split the outline into parts.',
+    };
+  }
+  return {
+    read: at(first),
+    problem: `two rings of the outline cross: ${first.ring + 1} and ${second.ring + 1} near ${at(second)}`,
+    hint: 'Holes lie within their outer ring, and parts keep clear of one another.',
   };
 }
 
@@ -91,68 +126,4 @@ function degenerateFault(positions: Ring): RingFault | null {
 const isPosition = (p: unknown): boolean =>
   Array.isArray(p) && p.length >= 2 && Number.isFinite(p[0]) && Number.isFinite(p[1]);
 
-/** The same place on the globe: longitudes a whole turn apart, or any longitude at a pole. */
-function same(a: readonly number[], b: readonly number[]): boolean {
-  if (a[1] !== b[1]) return false;
-  return Math.abs(a[1]!) === 90 || (a[0]! - b[0]!) % 360 === 0;
-}
-
-const cross = (a: Vector3, b: Vector3): Vector3 => [
-  a[1] * b[2] - a[2] * b[1],
-  a[2] * b[0] - a[0] * b[2],
-  a[0] * b[1] - a[1] * b[0],
-];
 const dot = (a: Vector3, b: Vector3): number => a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
-/** Sines smaller than this are rounding: touching, or one edge along another. */
-const TOUCH = 1e-13;
-
-interface Edge {
-  readonly index: number;
-  readonly a: Vector3;
-  readonly b: Vector3;
-  readonly normal: Vector3;
-  readonly low: number;
-  readonly high: number;
-}
-
-/** @returns indices of the first two edges that properly cross, or null. Sorted by height above the equator's plane. */
-export function selfCrossing(ring: Ring): readonly [number, number] | null {
-  const vectors = ring.map((p) => toVector(p[1]!, p[0]!));
-  const edges: Edge[] = [];
-  for (let i = 0; i + 1 < vectors.length; i++) {
-    const a = vectors[i]!;
-    const b = vectors[i + 1]!;
-    const normal = cross(a, b);
-    const size = Math.hypot(...normal);
-    if (size < TOUCH) continue;
-    const rise = Math.hypot(normal[0], normal[1]) / size;
-    const top = peak(a, b, normal) ? rise : Math.max(a[2], b[2]);
-    const bottom = peak(a, b, [-normal[0], -normal[1], -normal[2]]) ? -rise : Math.min(a[2], b[2]);
-    edges.push({ index: i, a, b, normal, low: bottom, high: top });
-  }
-  edges.sort((p, q) => p.low - q.low);
-  for (let i = 0; i < edges.length; i++) {
-    const p = edges[i]!;
-    for (let j = i + 1; j < edges.length && edges[j]!.low <= p.high; j++) {
-      const q = edges[j]!;
-      if (properlyCross(p, q)) return p.index < q.index ? [p.index, q.index] : [q.index, p.index];
-    }
-  }
-  return null;
-}
-
-/** Whether the arc from a to b passes the highest point of its great circle (normal pointing as a × b). */
-function peak(a: Vector3, b: Vector3, normal: Vector3): boolean {
-  const top: Vector3 = [-normal[0] * normal[2], -normal[1] * normal[2], normal[0] ** 2 + normal[1] ** 2];
-  return dot(cross(normal, a), top) > 0 && dot(cross(b, normal), top) > 0;
-}
-
-function properlyCross(p: Edge, q: Edge): boolean {
-  const c = dot(p.normal, q.a);
-  const d = dot(p.normal, q.b);
-  const e = dot(q.normal, p.a);
-  const f = dot(q.normal, p.b);
-  if (Math.abs(c) < TOUCH || Math.abs(d) < TOUCH || Math.abs(e) < TOUCH || Math.abs(f) < TOUCH) return false;
-  if (c > 0 === d > 0 || e > 0 === f > 0) return false;
-  return c > 0 === f > 0;
-}

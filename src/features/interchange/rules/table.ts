@@ -21,7 +21,8 @@ export const delimiterName = (delimiter: string): string => NAMES[delimiter] ?? 
 
 /** The delimiter that splits the heading line into the most cells; a comma where none does. */
 export function sniffDelimiter(text: string): string {
-  const heading = text.slice(0, text.search(/[\r\n]|$/));
+  const body = text.replace(/^[\uFEFF\s]*[\r\n]/, '');
+  const heading = body.slice(0, body.search(/[\r\n]|$/));
   const counts = DELIMITERS.map((d) => heading.split(d).length);
   return DELIMITERS[counts.indexOf(Math.max(...counts))] ?? ',';
 }
@@ -29,7 +30,13 @@ export function sniffDelimiter(text: string): string {
 interface Parsed {
   record: string[];
   info: { lines: number };
+  /** The record as written, its line end included. */
+  raw: string;
 }
+
+/** Line ends inside a record, in its quoted cells. */
+const linesWithin = (raw: string): number =>
+  (raw.replace(/^[\r\n]+|[\r\n]+$/g, '').match(/\r\n|\r|\n/g) ?? []).length;
 
 export function readTable(text: string): Table {
   const delimiter = sniffDelimiter(text);
@@ -43,6 +50,7 @@ export function readTable(text: string): Table {
       relax_quotes: true,
       skip_empty_lines: true,
       max_record_size: 1_000_000,
+      raw: true,
     }) as unknown as Parsed[];
   } catch (error) {
     const line = (error as { lines?: number }).lines ?? 1;
@@ -60,9 +68,9 @@ export function readTable(text: string): Table {
   }
   const rows: TableRow[] = [];
   const broken: Table['broken'][number][] = [];
-  for (const { record, info } of rest) {
+  for (const { record, info, raw } of rest) {
     if (record.every((cell) => cell.trim() === '')) continue;
-    const line = info.lines;
+    const line = info.lines - linesWithin(raw);
     const unplain = record.find((cell) => !isPlain(cell));
     if (unplain !== undefined) {
       const problem = 'holds control characters or half a character';

@@ -76,8 +76,11 @@ export function settleAngles(rows: PoleValues[], units: ReadonlyMap<string, stri
     says('pole_lat') ||
     (rows.every((row) => Math.abs(row.pole_lat) <= Math.PI / 2 && Math.abs(row.pole_lon) <= 2 * Math.PI) &&
       rows.some((row) => !Number.isInteger(row.pole_lat) || !Number.isInteger(row.pole_lon)));
-  const what = polesToo ? 'Poles and angles look' : 'Rotation angles look';
-  const ask = `${what} like radians: every block would move slower than 0.03° per Myr if they were degrees. Which are they?`;
+  const what = polesToo ? 'Poles and angles' : 'Rotation angles';
+  const why = named
+    ? 'are in radians by their heading'
+    : 'look like radians: every block would move slower than 0.03° per Myr if they were degrees';
+  const ask = `${what} ${why}. Which are they?`;
   const examples = turning.map((row) => example(row, row.angle_deg));
   if (!askEach(asking, 'angle_unit', ask, ['radians', 'degrees'], examples)) return;
   for (const row of rows) {

@@ -1,7 +1,7 @@
 /** An outline under edit: its corners as unit vectors in the block's present coordinates, first not repeated. */
 import type { MultiPolygon, Polygon, Position } from 'geojson';
 import { readRing, ringArea, toLatLon } from '../../../kernel/sphere';
-import { selfCrossing } from '../../interchange/rules/rings';
+import { findCrossing } from '../../interchange/rules/crossings';
 import { turn, turnBack, unit, vectorOf, type Vec } from './matrix';
 
 export type Corners = readonly Vec[];
@@ -46,7 +46,7 @@ export const toPosition = (v: Vec): Position => {
 export function outlineFault(corners: Corners): string | null {
   if (corners.length < 3) return 'An outline needs three corners or more.';
   const ring = corners.map(toPosition);
-  return selfCrossing([...ring, ring[0]!]) ? 'The outline crosses itself.' : null;
+  return findCrossing([ring]) ? 'The outline crosses itself.' : null;
 }
 
 /** A drawn outline as GeoJSON: closed, anticlockwise. */
