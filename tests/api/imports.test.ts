@@ -219,6 +219,53 @@ describe('round trip', () => {
     }
   });
 
+  it('keeps holes, parts, the larger side, outlines by age and their sources', async () => {
+    const ring = (lon: number, lat: number, side: number) => [
+      [lon, lat], [lon + side, lat], [lon + side, lat + side], [lon, lat + side], [lon, lat],
+    ]; // prettier-ignore
+    const feature = (code: string, geometry: object, more: object = {}) => ({
+      type: 'Feature',
+      properties: { code, name: code, kind: 'terrane', ...more },
+      geometry,
+    });
+    const hole = [...ring(4.5, 4.5, 3)].reverse();
+    const features = [
+      feature('holed', { type: 'Polygon', coordinates: [ring(0, 0, 20), hole] }, { outline_source: 'Pell 2019' }),
+      feature('parts', { type: 'MultiPolygon', coordinates: [[ring(40, 0, 5)], [ring(50, 0, 5), [...ring(51, 1, 1)].reverse()]] }),
+      feature('most', { type: 'Polygon', coordinates: [ring(0, -60, 30)] }, { inside: 'larger' }),
+      feature('aged', { type: 'Polygon', coordinates: [ring(80, 0, 5)] }, { outline_older_ma: 90, outline_younger_ma: 40 }),
+      feature('aged', { type: 'Polygon', coordinates: [ring(80, 0, 8)] }, { outline_older_ma: 40, outline_source: 'Own survey, "B"' }),
+      feature('bare', { type: 'Polygon', coordinates: [ring(170, 70, 20)] }),
+    ]; // prettier-ignore
+    const text = JSON.stringify({ type: 'FeatureCollection', features });
+    expect((await send({ kind: 'blocks', text })).json).toMatchObject({ written: true, rejected: [] });
+    const out = async (slug: string) =>
+      (await app.call('GET', `/api/projects/${slug}/exports/blocks.geojson`, { as: lead })).text;
+    const first = await out(P.split('/').at(-1)!);
+    const read = JSON.parse(first).features.map((one: any) => [
+      one.properties.code, one.properties.inside, one.properties.outline_source ?? null, one.geometry,
+    ]); // prettier-ignore
+    for (const { properties, geometry } of features as any[])
+      expect(read).toContainEqual([
+        properties.code,
+        properties.inside ?? 'smaller',
+        properties.outline_source ?? null,
+        geometry,
+      ]);
+    const again = await send({ kind: 'blocks', text: first });
+    expect(again.json.preview.map((row: { change: string }) => row.change)).toEqual(
+      Array(5).fill('unchanged'),
+    );
+    await app.call('POST', '/api/projects', { as: lead, body: { title: 'Copy', slug: 'copy' } });
+    const form = new FormData();
+    form.set('kind', 'blocks');
+    form.set('file', new File([first], 'blocks.geojson'));
+    expect((await app.call('POST', '/api/projects/copy/imports', { as: lead, raw: form })).json.written).toBe(
+      true,
+    );
+    expect(await out('copy')).toBe(first);
+  });
+
   it('keeps awkward numbers and text to the last digit', async () => {
     await withBlocks();
     const text = `${ROTATIONS.trim()},source,note\r\nsable,tarn,0.1,-0.30000000000000004,359.9999999999,1e-7,"Pell, ""A"" 2016","two\nlines"\r\n`;

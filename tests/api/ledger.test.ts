@@ -127,6 +127,16 @@ describe('rows', () => {
     expect(answers).not.toMatch(/constraint|violates|_unique|insert into|project_id/);
   });
 
+  it('are no outlines of a frame, whichever comes first', async () => {
+    await add(app, team, 'blocks', [frame('axis'), terrane('tarn')]);
+    const drawn = await add(app, team, 'outlines', { block: 'axis', geometry: square(0, 0) });
+    expect([drawn.status, drawn.json.errors]).toMatchObject([422, [{ path: 'block', read: 'axis', problem: 'a frame has no outline' }]]); // prettier-ignore
+    expect((await add(app, team, 'outlines', { block: 'tarn', geometry: square(0, 0) })).status).toBe(201);
+    const { id } = (await list('blocks')).items.find(({ code }: { code: string }) => code === 'tarn');
+    const turned = await app.call('PATCH', team.at(`blocks/${id}`), { as: team.lead, body: { kind: 'frame' }, revision: '*' }); // prettier-ignore
+    expect([turned.status, turned.json.errors]).toMatchObject([422, [{ path: 'kind', problem: 'a frame has no outline' }]]); // prettier-ignore
+  });
+
   it('may refer to a frame that is still to come', async () => {
     await add(app, team, 'blocks', terrane('sable'));
     expect((await add(app, team, 'rotations', rotation(['sable', 'mantle', 20, 12, 20, 5]))).status).toBe(
