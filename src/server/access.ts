@@ -2,11 +2,10 @@ import { and, eq } from 'drizzle-orm';
 import { database } from '~/db/client';
 import { membership, project } from '~/db/schema';
 import type { Role } from '~/features/projects/contract';
+import { isSlug } from '~/slug';
 import type { Actor } from './actor';
 import { can, requireCan, type ProjectAction, type Standing } from './policy';
 import { Problem } from './problem';
-
-const isSlug = (text: string): boolean => /^[a-z0-9-]{1,64}$/.test(text);
 
 export type ProjectRow = typeof project.$inferSelect;
 

@@ -20,7 +20,6 @@ export const PROBLEMS = {
   UnknownVersion: { status: 404, title: 'No such version' },
   UnknownAccount: { status: 404, title: 'No account with this e-mail' },
   MethodNotAllowed: { status: 405, title: 'The address does not take this method' },
-  NotAcceptable: { status: 406, title: 'None of the accepted formats is offered' },
   EmailTaken: { status: 409, title: 'This e-mail already has an account' },
   SlugTaken: { status: 409, title: 'This address is taken' },
   AlreadyMember: { status: 409, title: 'Already in the team' },

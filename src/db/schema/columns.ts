@@ -1,5 +1,6 @@
 import { sql, type SQLWrapper } from 'drizzle-orm';
 import { check, customType, doublePrecision, text, timestamp } from 'drizzle-orm/pg-core';
+import { SLUG_LENGTH, SLUG_PATTERN } from '../../slug';
 
 /** Row ids are random UUIDs kept as text; they never enter a version's manifest. */
 export const id = () =>
@@ -35,4 +36,7 @@ export const older = (name: string, olderAge: SQLWrapper, youngerAge: SQLWrapper
 export const sha256 = (name: string, column: SQLWrapper) => check(name, sql`${column} ~ '^[0-9a-f]{64}$'`);
 
 export const aSlug = (name: string, column: SQLWrapper) =>
-  check(name, sql`${column} ~ '^[a-z0-9]+(-[a-z0-9]+)*$' and length(${column}) <= 64`);
+  check(
+    name,
+    sql`${column} ~ ${sql.raw(`'^${SLUG_PATTERN}$'`)} and length(${column}) <= ${sql.raw(String(SLUG_LENGTH))}`,
+  );

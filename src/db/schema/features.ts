@@ -1,21 +1,10 @@
 import { foreignKey, index, pgTable, text } from 'drizzle-orm/pg-core';
+import { FEATURE_KINDS } from '../../kernel/rotations/types';
 import { block } from './blocks';
 import { anAge, id, older, oneOf, real } from './columns';
 import { geometry } from './geometry';
 import { project } from './projects';
 
-const kinds = [
-  'ridge',
-  'trench',
-  'transform',
-  'suture',
-  'margin',
-  'isochron',
-  'fracture_zone',
-  'pick',
-  'rock',
-  'layer',
-] as const;
 const sides = ['left', 'right', 'north', 'south', 'east', 'west'] as const;
 
 /** Points and lines carried by a block: boundaries, sutures, picks, rocks, layers. */
@@ -27,7 +16,7 @@ export const feature = pgTable(
       .notNull()
       .references(() => project.id, { onDelete: 'cascade' }),
     block: text('block').notNull(),
-    kind: text('kind', { enum: kinds }).notNull(),
+    kind: text('kind', { enum: FEATURE_KINDS }).notNull(),
     name: text('name').notNull().default(''),
     sha256: text('sha256')
       .notNull()
@@ -48,7 +37,7 @@ export const feature = pgTable(
     }).onUpdate('cascade'),
     index('feature_by_block').on(table.project_id, table.block),
     index('feature_geometry').on(table.sha256),
-    oneOf('feature_kind', table.kind, kinds),
+    oneOf('feature_kind', table.kind, FEATURE_KINDS),
     oneOf('feature_side', table.side, sides),
     anAge('feature_age', table.age_ma),
     anAge('feature_appears', table.appears_ma),

@@ -1,4 +1,5 @@
 /** Sends a file to be read or taken; the same call previews (`dry_run`) and writes. */
+import { FEATURE_KINDS } from '../../kernel/rotations/types';
 import type { Answers, ColumnMapping, ImportReport } from './contract';
 import type { ImportKind } from './files';
 
@@ -41,15 +42,13 @@ export async function sendImport(request: ImportRequest): Promise<ImportReport> 
   );
 }
 
+const OF_FEATURES = new RegExp(`"(age_ma|side|chron)"|"kind"\\s*:\\s*"(${FEATURE_KINDS.join('|')})"`);
+
 /** What a file most likely holds, by its name and first characters; the user can say otherwise. */
 export function guessKind(name: string, head: string): ImportKind {
   const lower = name.toLowerCase();
   if (/^\s*\uFEFF?\s*[{[]/.test(head) || /\.(geo)?json$/.test(lower)) {
-    return /"(age_ma|side|chron)"|"kind"\s*:\s*"(layer|ridge|trench|transform|suture|margin|isochron|fracture_zone|pick|rock)"/.test(
-      head,
-    )
-      ? 'features'
-      : 'blocks';
+    return OF_FEATURES.test(head) ? 'features' : 'blocks';
   }
   return /inclination|declination|alpha95|site/i.test(head.split(/\r?\n/, 1)[0] ?? '')
     ? 'directions'

@@ -1,12 +1,13 @@
 /** Shapes of the ledger's rows and edits, shared by server and client. Names and units are those of the files. */
 import { z } from 'zod';
-import { BLOCK_KINDS, EVIDENCE } from '../../kernel/rotations/types';
+import { BLOCK_KINDS, EVIDENCE, FEATURE_KINDS } from '../../kernel/rotations/types';
+import { SLUG_LENGTH, SLUG_PATTERN } from '../../slug';
 
 export const slug = z
   .string()
   .min(1)
-  .max(64)
-  .regex(/^[a-z0-9]+(?:-[a-z0-9]+)*$/, 'lower-case letters, digits and single hyphens');
+  .max(SLUG_LENGTH)
+  .regex(new RegExp(`^${SLUG_PATTERN}$`), 'lower-case letters, digits and single hyphens');
 
 const age = z.number().min(0, 'a negative age').max(4600, 'older than the Earth');
 const latitude = z.number().min(-90, 'latitude beyond 90°').max(90, 'latitude beyond 90°');
@@ -63,19 +64,6 @@ export const rotationFields = z.object({
   source: nullable(text),
   note: nullable(text),
 });
-
-export const FEATURE_KINDS = [
-  'ridge',
-  'trench',
-  'transform',
-  'suture',
-  'margin',
-  'isochron',
-  'fracture_zone',
-  'pick',
-  'rock',
-  'layer',
-] as const;
 
 /** Points and lines carried by a block; the geometry is stored once by hash. */
 export const featureFields = z.object({

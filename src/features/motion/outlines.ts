@@ -1,7 +1,7 @@
 import type { MultiPolygon, Polygon } from 'geojson';
 import type { Ledger } from '~/features/ledger/read';
 import { loadShapes } from '~/features/ledger/shapes';
-import { existenceAt } from '~/kernel/rotations/circuit';
+import { holdsAt } from '~/kernel/rotations/circuit';
 import type { Vector3 } from '~/kernel/rotations/types';
 import { boundingCap, type Cap } from '~/kernel/sphere/cap';
 import { contains } from '~/kernel/sphere/contains';
@@ -37,12 +37,17 @@ async function read(outlines: Ledger['outlines']): Promise<LoadedOutline[]> {
   return outlines.map(({ block, sha256, inside, outline_older_ma, outline_younger_ma }) => {
     const { type, coordinates } = shapeOf(sha256) as Polygon | MultiPolygon;
     const polygons = type === 'Polygon' ? [coordinates] : coordinates;
-    const life = { appears_ma: outline_older_ma, disappears_ma: outline_younger_ma };
     const parts = polygons.map((rings): Part => {
       const vectors = rings.map((ring) => readRing(ring));
       return { rings: vectors, cap: inside === 'smaller' ? boundingCap(vectors[0] ?? []) : null };
     });
-    return { block, sha256, inside, parts, holdsAt: (age_ma) => existenceAt(life, age_ma) === 'placed' };
+    return {
+      block,
+      sha256,
+      inside,
+      parts,
+      holdsAt: (age_ma) => holdsAt(outline_older_ma, outline_younger_ma, age_ma),
+    };
   });
 }
 

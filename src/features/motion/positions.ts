@@ -3,7 +3,7 @@ import { requireAge } from '~/kernel/errors';
 import { requireBlock } from '~/kernel/rotations/model-index';
 import { rotate } from '~/kernel/rotations/quaternion';
 import type { Quaternion, Vector3 } from '~/kernel/rotations/types';
-import { ringArea } from '~/kernel/sphere/area';
+import { woundRing } from '~/kernel/sphere/area';
 import { writeRing } from '~/kernel/sphere/ring';
 import { outlinesOf, type LoadedOutline } from './outlines';
 import { flatten } from './plate-carree';
@@ -37,8 +37,8 @@ export async function positionsOf(
 function carried({ parts, inside }: LoadedOutline, q: Quaternion): MultiPolygon {
   const coordinates = parts.map(({ rings }) =>
     rings.map((ring, i): Position[] => {
-      const clockwise = ringArea(ring) > 0 === (i === 0 && inside === 'smaller') ? ring.toReversed() : ring;
-      return writeRing(clockwise.map((v: Vector3) => rotate(q, v)));
+      const wound = woundRing(ring, i === 0 && inside === 'smaller' ? 'clockwise' : 'anticlockwise');
+      return writeRing(wound.map((v: Vector3) => rotate(q, v)));
     }),
   );
   return { type: 'MultiPolygon', coordinates };

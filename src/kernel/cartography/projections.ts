@@ -80,9 +80,6 @@ export type ProjectionName = keyof typeof PROJECTIONS;
 export const PROJECTION_NAMES = Object.keys(PROJECTIONS) as ProjectionName[];
 export const DEFAULT_PROJECTION: ProjectionName = 'equal-earth';
 
-/** Latitude at which Mercator maps end; the square world map. From the formula: 2 atan(e^π) − 90°. */
-export const MERCATOR_LIMIT_DEG = 85.0511;
-
 export interface MapCentre {
   readonly lat: number;
   readonly lon: number;

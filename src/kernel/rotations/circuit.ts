@@ -45,6 +45,10 @@ export function existenceAt(
   return disappears_ma && age_ma <= disappears_ma ? 'younger than block' : 'placed';
 }
 
+/** Whether an age lies in a life or a part of it, by the rule of {@link existenceAt}; null: no such end. */
+export const holdsAt = (appears_ma: number | null, disappears_ma: number | null, age_ma: number): boolean =>
+  existenceAt({ appears_ma, disappears_ma }, age_ma) === 'placed';
+
 /** As {@link poseAt}, whether or not the block exists at that age. */
 export function circuitAt(
   model: Model,

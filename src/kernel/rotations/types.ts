@@ -16,6 +16,20 @@ export type Covariance = readonly [xx: number, xy: number, xz: number, yy: numbe
 export const BLOCK_KINDS = ['craton', 'terrane', 'arc', 'ocean', 'frame', 'other'] as const;
 export type BlockKind = (typeof BLOCK_KINDS)[number];
 
+/** What blocks carry: boundaries, lines, places, areas. */
+export const FEATURE_KINDS = [
+  'ridge',
+  'trench',
+  'transform',
+  'suture',
+  'margin',
+  'isochron',
+  'fracture_zone',
+  'pick',
+  'rock',
+  'layer',
+] as const;
+
 export const EVIDENCE = ['published', 'fitted', 'posed', 'unconstrained'] as const;
 export type Evidence = (typeof EVIDENCE)[number];
 

@@ -59,6 +59,10 @@ function fanOrigin(ring: Ring): Vector3 {
   return AXES.reduce((best, axis) => (clearance(axis) > clearance(best) ? axis : best), first);
 }
 
+/** The ring, turned over where it does not run round its smaller side as wanted. */
+export const woundRing = (ring: Ring, round: 'anticlockwise' | 'clockwise'): Ring =>
+  ringArea(ring) > 0 === (round === 'anticlockwise') ? ring : ring.toReversed();
+
 /** True for a ring whose two sides are equal within {@link TIE_TOLERANCE_SR}. */
 export const halvesSphere = (signedArea: number): boolean =>
   Math.abs(signedArea - SPHERE_SR / 2) <= TIE_TOLERANCE_SR;

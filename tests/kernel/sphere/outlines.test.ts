@@ -26,6 +26,7 @@ import {
   toLatLon,
   toVector,
   type Vector3,
+  woundRing,
   writeRing,
 } from '../../../src/kernel';
 import { place, rotation } from '../support';
@@ -101,6 +102,16 @@ describe('areas', () => {
         const tolerance = AREA_ERROR_SR_PER_EDGE * r.length;
         expect(Math.abs(ringArea(r.map((v) => rotate(q, v))) - area)).toBeLessThan(tolerance);
         expect(Math.abs(ringArea(reversed(r)) + area)).toBeLessThan(tolerance);
+      }),
+    );
+  });
+
+  it('turn a ring over where it does not run as wanted, and only there', () => {
+    fc.assert(
+      fc.property(outline, ({ ring: r }) => {
+        expect(ringArea(woundRing(r, 'anticlockwise'))).toBeGreaterThan(0);
+        expect(ringArea(woundRing(r, 'clockwise'))).toBeLessThan(0);
+        expect(woundRing(r, ringArea(r) > 0 ? 'anticlockwise' : 'clockwise')).toBe(r);
       }),
     );
   });

@@ -11,7 +11,8 @@ import { outlineFaults, partsFault, readOutline } from './outline';
 import { PropertyReader } from './properties';
 import type { Candidate, FileReading } from './rotations';
 import { ringFault } from './rings';
-import { isSlug, toSlug } from './slug';
+import { isSlug } from '../../../slug';
+import { toSlug } from './slug';
 
 export interface OutlineCandidate extends Omit<OutlineFields, 'block' | 'sha256'> {
   readonly line: number;

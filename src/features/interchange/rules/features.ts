@@ -1,6 +1,7 @@
 /** Reads features.geojson: points and lines carried by a block. */
 import type { Geometry, Position } from 'geojson';
-import { FEATURE_KINDS, type FeatureFields } from '../../ledger/contract';
+import { FEATURE_KINDS } from '../../../kernel/rotations/types';
+import type { FeatureFields } from '../../ledger/contract';
 import type { Answers } from '../contract';
 import { Asking } from './ask';
 import { readFeatureCollection, unreadProperties, type LocatedFeature } from './geojson-text';
@@ -8,7 +9,8 @@ import { withoutHeights } from './heights';
 import { alongStraightLines, followsStraightLines } from './long-edges';
 import { PropertyReader } from './properties';
 import type { FileReading } from './rotations';
-import { isSlug, toSlug } from './slug';
+import { isSlug } from '../../../slug';
+import { toSlug } from './slug';
 
 export interface FeatureCandidate {
   readonly fields: Omit<FeatureFields, 'sha256'>;

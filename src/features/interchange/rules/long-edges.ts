@@ -6,8 +6,10 @@ import type { Geometry, Position } from 'geojson';
 import {
   angularDistance,
   densifyStraight,
+  EARTH_RADIUS_KM,
   interpolateArc,
   STRAIGHT_EDGE_STRAY_DEG,
+  toRadians,
   toVector,
 } from '../../../kernel/sphere';
 import type { Asking } from './ask';
@@ -19,7 +21,7 @@ export const STRAIGHT = 'straight in longitude and latitude';
 /** Edges that part by less than this are not worth an offer: a line's width on a map of a continent. */
 const WORTH_ASKING_DEG = 0.05;
 const LONGEST_EDGE_DEG = 1;
-const KM_PER_DEG = 6371.0088 * (Math.PI / 180);
+const KM_PER_DEG = toRadians(EARTH_RADIUS_KM);
 
 interface Placed {
   readonly line: number;

@@ -6,7 +6,8 @@ import type { Answers, ColumnMapping, RejectedRow } from '../contract';
 import { Asking } from './ask';
 import { matchColumns } from './columns';
 import { CellReader } from './reader';
-import { isSlug, toSlug } from './slug';
+import { isSlug } from '../../../slug';
+import { toSlug } from './slug';
 import { delimiterName, readTable, type TableRow } from './table';
 import { settleAges, settleAngles, settleSwap, type PoleValues } from './units-asked';
 

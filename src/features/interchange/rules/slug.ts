@@ -1,5 +1,4 @@
-/** Codes of blocks are slugs: lower-case letters, digits and single hyphens, 64 at most. */
-export const isSlug = (text: string): boolean => text.length <= 64 && /^[a-z0-9]+(?:-[a-z0-9]+)*$/.test(text);
+import { SLUG_LENGTH } from '../../../slug';
 
 /** The nearest slug to a name, for a hint; empty where nothing is left of it. */
 export const toSlug = (text: string): string =>
@@ -9,4 +8,4 @@ export const toSlug = (text: string): string =>
     .toLowerCase()
     .replace(/[^a-z0-9]+/g, '-')
     .replace(/^-+|-+$/g, '')
-    .slice(0, 64);
+    .slice(0, SLUG_LENGTH);

@@ -1,5 +1,6 @@
 /** How one column of a ledger is shown, read from what is typed, and filled. */
 import { EVIDENCE } from '../../../kernel/rotations/types';
+import { isSlug } from '../../../slug';
 
 export type Typed =
   { readonly ok: true; readonly value: unknown } | { readonly ok: false; readonly problem: string };
@@ -71,8 +72,6 @@ export const textColumn = (key: string, heading: string, width: string, most = 2
     text.length > most ? no(`more than ${most} characters`) : ok(text.trim() === '' ? null : text.trim()),
 });
 
-const SLUG = /^[a-z0-9]+(?:-[a-z0-9]+)*$/;
-
 export const codeColumn = (
   key: string,
   heading: string,
@@ -84,10 +83,7 @@ export const codeColumn = (
   width,
   choices,
   write: plainText,
-  read: (text) =>
-    SLUG.test(text.trim()) && text.trim().length <= 64
-      ? ok(text.trim())
-      : no('a code: lower-case letters, digits, hyphens'),
+  read: (text) => (isSlug(text.trim()) ? ok(text.trim()) : no('a code: lower-case letters, digits, hyphens')),
 });
 
 export const wordColumn = (

@@ -1,4 +1,5 @@
 /** Points of an ellipse on the sphere around a place, its axes measured along great circles. */
+import { EARTH_RADIUS_KM } from '../../../kernel/sphere/angles';
 import { unit, type Vec } from './matrix';
 
 interface Axes {
@@ -7,7 +8,6 @@ interface Axes {
   readonly azimuth_deg: number;
 }
 
-const EARTH_KM = 6371.0088;
 export const ELLIPSE_POINTS = 48;
 
 /** East and north at a place; at a pole along the meridian of longitude 0. */
@@ -32,8 +32,8 @@ export function ellipsePoints(
   const [s, c] = [Math.sin(az), Math.cos(az)];
   return Array.from({ length: n }, (_, i) => {
     const t = (2 * Math.PI * i) / n;
-    const a = (semi_major_km / EARTH_KM) * Math.cos(t);
-    const b = (semi_minor_km / EARTH_KM) * Math.sin(t);
+    const a = (semi_major_km / EARTH_RADIUS_KM) * Math.cos(t);
+    const b = (semi_minor_km / EARTH_RADIUS_KM) * Math.sin(t);
     const [e, m] = [a * s + b * c, a * c - b * s];
     const r = Math.hypot(e, m);
     if (r === 0) return v;

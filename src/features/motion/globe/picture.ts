@@ -1,7 +1,8 @@
 /** One picture: what is drawn, where, and how. */
 import type { Frame } from '../scene/frame';
 import type { NamedPoint } from '../scene/points';
-import { holdsAt, outlineAt, type Scene } from '../scene/scene';
+import { holdsAt } from '../../../kernel/rotations/circuit';
+import { outlineAt, type Scene } from '../scene/scene';
 import type { Separation } from '../scene/separation';
 import type { Track } from '../scene/track';
 import type { Layer } from '../store/state';

@@ -2,7 +2,8 @@
 import { arrowsAt } from '../scene/arrows';
 import { matrixOf, type Frame } from '../scene/frame';
 import { mapName } from '../names';
-import { holdsAt, outlineAt } from '../scene/scene';
+import { holdsAt } from '../../../kernel/rotations/circuit';
+import { outlineAt } from '../scene/scene';
 import { extentOf } from './block-extent';
 import { Clipper } from './clip';
 import type { Ground } from './ground';

@@ -1,4 +1,5 @@
 /** Velocities of blocks at places spread evenly over them. */
+import { EARTH_RADIUS_KM } from '../../../kernel/sphere/angles';
 import { angularVelocity } from './tolerant';
 import { contains } from '../globe/contains';
 import { cross, turn, unit, type Vec } from '../globe/matrix';
@@ -14,7 +15,6 @@ export interface Arrow {
   readonly v: Vec;
 }
 
-const EARTH_KM = 6371.0088;
 /** Points of the whole sphere that feet are taken from; about 13 degrees apart. */
 const LATTICE = fibonacci(260);
 const feet = new WeakMap<Shape, readonly Vec[]>();
@@ -56,7 +56,7 @@ export function arrowsAt(scene: Scene, frame: Frame): Arrow[] {
     if (!shape || !matrix) return [];
     const turning = angularVelocity(frame.model, block.code, frame.age, frame.heldStill);
     if (turning.status !== 'placed') return [];
-    const omega = turning.omega.map((x) => x * EARTH_KM) as unknown as Vec;
+    const omega = turning.omega.map((x) => x * EARTH_RADIUS_KM) as unknown as Vec;
     return feetOf(shape).map((foot) => {
       const from = turn(matrix, foot);
       return { block: block.code, from, v: cross(omega, from) };

@@ -1,4 +1,5 @@
 /** Everything a workbench draws from, made once from what the server answered. */
+import { holdsAt } from '../../../kernel/rotations/circuit';
 import type { Evidence, Model } from '../../../kernel/rotations/types';
 import type { Direction } from '../../ledger/contract';
 import type { Shape } from '../globe/shape';
@@ -84,10 +85,6 @@ export function sceneOf(input: SceneInput): Scene {
 
 export const findSceneBlock = (scene: Scene, code: string | null): SceneBlock | undefined =>
   scene.blocks.find((block) => block.code === code);
-
-/** Whether something that appears and disappears is there at an age; an outline's span follows the same rule. */
-export const holdsAt = (older_ma: number | null, younger_ma: number | null, age: number): boolean =>
-  (older_ma === null || age <= older_ma) && (!younger_ma || age > younger_ma);
 
 /** The outline a block has at an age, if any. */
 export const outlineAt = (block: SceneBlock, age: number): Shape | null =>

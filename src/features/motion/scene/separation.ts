@@ -1,4 +1,5 @@
 /** Least distance between the outlines of two blocks at an age, for the line drawn between them. */
+import { EARTH_RADIUS_KM } from '../../../kernel/sphere/angles';
 import { angleBetween, cross, dot, turn, turnBack, unit, type Vec } from '../globe/matrix';
 import { vertex, type Points, type Shape } from '../globe/shape';
 import { matrixOf, type Frame } from './frame';
@@ -12,7 +13,6 @@ export interface Separation {
   readonly other: string;
 }
 
-const EARTH_KM = 6371.0088;
 /** Pairs of vertices looked at in one search; larger outlines are searched in a coarser copy. */
 const MOST_PAIRS = 2e6;
 const COARSE_PAIRS = 6e4;
@@ -56,7 +56,7 @@ export function separationAt(
   if (!between) return null;
   const from = turn(ma, between.a);
   const to = turn(mb, between.b);
-  return { km: EARTH_KM * angleBetween(from, to), from, to, other };
+  return { km: EARTH_RADIUS_KM * angleBetween(from, to), from, to, other };
 }
 
 interface Pair {

@@ -1,13 +1,13 @@
 /** Everything of a subject that has a place at an age, carried there: the same for maps and for GeoJSON. */
 import type { MultiLineString, MultiPolygon, Polygon } from 'geojson';
-import { rotate } from '../../../kernel/rotations';
+import { holdsAt, rotate } from '../../../kernel/rotations';
 import type { Evidence, Pose, Status } from '../../../kernel/rotations/types';
 import { toLatLon } from '../../../kernel/sphere';
 import { poseAt } from '../../motion/scene/tolerant';
 import { measured } from './measured';
 import { carryLines, carryPolygons, lineVectors, polygonVectors } from './shapes';
 import { inOrder, motionSources, poseSources } from './sources';
-import { holdsAt, type SliceSubject } from './subject';
+import type { SliceSubject } from './subject';
 
 export interface CarriedBlock {
   readonly code: string;
@@ -41,7 +41,7 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
   const missing: { name: string; status: Status }[] = [];
   const poses = new Map<string, Pose>();
   for (const block of subject.blocks) {
-    const outlines = block.outlines.filter((o) => holdsAt(age_ma, o.outline_older_ma, o.outline_younger_ma));
+    const outlines = block.outlines.filter((o) => holdsAt(o.outline_older_ma, o.outline_younger_ma, age_ma));
     const pose = poseAt(subject.model, block.code, age_ma, relative_to);
     poses.set(block.code, pose);
     if (block.outlines.length === 0) continue;
@@ -74,7 +74,7 @@ export function carry(subject: SliceSubject, age_ma: number, relative_to: string
   }
   for (const line of subject.coasts) {
     const pose = poses.get(line.block);
-    if (pose?.status !== 'placed' || !holdsAt(age_ma, line.appears_ma, line.disappears_ma)) continue;
+    if (pose?.status !== 'placed' || !holdsAt(line.appears_ma, line.disappears_ma, age_ma)) continue;
     const lines = lineVectors(subject.geometryOf(line.sha256));
     if (lines.length === 0) continue;
     coasts.push({

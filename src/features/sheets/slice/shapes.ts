@@ -2,8 +2,8 @@
  * Outlines and lines of a state, carried to an age: present positions in, GeoJSON on the sphere out. Rings are wound
  * as d3-geo reads them (clockwise round the inside), whichever way they were entered.
  */
-import type { Feature, Geometry, MultiLineString, MultiPolygon, Polygon, Position } from 'geojson';
-import { readRing, ringArea, toLatLon, toVector } from '../../../kernel/sphere';
+import type { Geometry, MultiLineString, MultiPolygon, Polygon, Position } from 'geojson';
+import { readRing, toLatLon, toVector, woundRing } from '../../../kernel/sphere';
 import { rotate } from '../../../kernel/rotations';
 import type { Quaternion, Vector3 } from '../../../kernel/rotations/types';
 
@@ -13,12 +13,10 @@ type Rings = readonly (readonly Vector3[])[];
 export function polygonVectors(geometry: Polygon | MultiPolygon, inside: 'smaller' | 'larger'): Rings[] {
   const polygons = geometry.type === 'Polygon' ? [geometry.coordinates] : geometry.coordinates;
   return polygons.map((rings) =>
-    rings.map((ring, i) => wound(readRing(ring), i === 0 ? inside === 'larger' : true)),
+    rings.map((ring, i) =>
+      woundRing(readRing(ring), i === 0 && inside === 'smaller' ? 'clockwise' : 'anticlockwise'),
+    ),
   );
-}
-
-function wound(ring: Vector3[], anticlockwise: boolean): Vector3[] {
-  return ringArea(ring) > 0 === anticlockwise ? ring : ring.reverse();
 }
 
 const position = (v: Vector3, q: Quaternion): Position => {
@@ -56,12 +54,3 @@ export function lineVectors(geometry: Geometry): Vector3[][] {
 export function carryLines(lines: readonly (readonly Vector3[])[], q: Quaternion): MultiLineString {
   return { type: 'MultiLineString', coordinates: lines.map((line) => line.map((v) => position(v, q))) };
 }
-
-export const asFeature = <G extends Geometry>(
-  geometry: G,
-  properties: Record<string, unknown> = {},
-): Feature<G> => ({
-  type: 'Feature',
-  properties,
-  geometry,
-});

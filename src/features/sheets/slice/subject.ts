@@ -37,9 +37,3 @@ export interface SliceSubject {
   readonly coasts: readonly SliceLine[];
   readonly geometryOf: (sha256: string) => Geometry;
 }
-
-/** Whether an outline or line holds at an age: younger < age ≤ older, and at 0 where it has not ended. */
-export function holdsAt(age_ma: number, older_ma: number | null, younger_ma: number | null): boolean {
-  if (older_ma !== null && age_ma > older_ma) return false;
-  return !younger_ma || age_ma > younger_ma;
-}

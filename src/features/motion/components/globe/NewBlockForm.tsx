@@ -1,6 +1,7 @@
 /** What a block that has just been drawn is called. */
 import { useState } from 'react';
 import { BLOCK_KINDS, EVIDENCE, type BlockKind, type Evidence } from '../../../../kernel/rotations/types';
+import { SLUG_LENGTH, SLUG_PATTERN } from '../../../../slug';
 import { toSlug } from '../../../interchange/rules/slug';
 
 export interface NewBlock {
@@ -50,9 +51,9 @@ export function NewBlockForm({ busy, refused, onKeep, onPutBack }: Props) {
         <input
           className={FIELD}
           value={code}
-          maxLength={64}
+          maxLength={SLUG_LENGTH}
           required
-          pattern="[a-z0-9]+(-[a-z0-9]+)*"
+          pattern={SLUG_PATTERN}
           onChange={(event) => setTyped(event.target.value)}
         />
       </label>

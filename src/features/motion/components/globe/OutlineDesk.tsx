@@ -26,7 +26,7 @@ import {
 import { select } from '../../store/actions';
 import { useBench, useFrame, useWorkbench } from '../bench';
 import { matrixOf } from '../../scene/frame';
-import { holdsAt } from '../../scene/scene';
+import { holdsAt } from '../../../../kernel/rotations/circuit';
 import { useDraft } from '../ledger/use-draft';
 import { useSize } from '../use-size';
 import { NewBlockForm, type NewBlock } from './NewBlockForm';
