@@ -166,6 +166,31 @@ test.describe('reading', () => {
     expect(present).toEqual({ age: 0, lat: Number(lat.toFixed(1)), lon: Number(lon.toFixed(1)) });
   });
 
+  test('the address keeps the version that is shown, whatever moves', async ({ page }) => {
+    await page.goto(`${DEMO}/workbench?version=7&age=62.4&block=sable`);
+    await page.keyboard.press('2');
+    await expect(page).toHaveURL(/version=7&.*view=map/);
+    await page.reload();
+    await expect(page.getByText('v7').first()).toBeVisible();
+    await expect(page).toHaveURL(/version=7&.*view=map/);
+  });
+
+  test('an age beyond the rotations is not taken for another', async ({ page }) => {
+    await page.goto(LINK);
+    await page.getByRole('button', { name: /Age, 62\.4 Ma: change/ }).click();
+    const field = page.getByRole('textbox', { name: 'Age in Ma' });
+    await field.fill('999');
+    await field.press('Enter');
+    await expect(page.getByText('The rotations go back to 200 Ma.')).toBeVisible();
+    await expect(field).toHaveAttribute('aria-invalid', 'true');
+    await field.fill('80,5');
+    await field.press('Enter');
+    await expect(page.getByRole('button', { name: /Age, 80\.5 Ma: change/ })).toBeVisible();
+    await page.keyboard.press('/');
+    await page.keyboard.type('300');
+    await expect(page.getByText('The rotations go back to 200 Ma.')).toBeVisible();
+  });
+
   test('then and now, and the map', async ({ page }) => {
     await page.goto(LINK);
     await page

@@ -32,7 +32,9 @@ describe('a link', () => {
   it('restores age, view and selection', () => {
     fc.assert(
       fc.property(linked, (state) => {
-        expect({ ...LINKED, ...fromQuery(toQuery(state)) }).toEqual(state);
+        expect({ ...LINKED, ...fromQuery(toQuery(state, 7)) }).toEqual(state);
+        expect(new URLSearchParams(toQuery(state, 7)).get('version')).toBe('7');
+        expect(new URLSearchParams(toQuery(state, 'draft')).get('version')).toBe('draft');
       }),
       { numRuns: 300, seed: 11 },
     );

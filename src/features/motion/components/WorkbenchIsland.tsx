@@ -107,7 +107,7 @@ function Ready({
   tools: ReactNode;
 }) {
   const [store] = useState(() => createWorkbench(complete(scene, stated)));
-  useEffect(() => followInAddress(store, window), [store]);
+  useEffect(() => followInAddress(store, window, head.shown), [store, head.shown]);
   // Without a centre in the link the first one is a guess until the outlines are there.
   const guessed = useRef(stated.centre ? null : store.getState().centre);
   useEffect(() => {

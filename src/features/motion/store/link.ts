@@ -1,14 +1,15 @@
 /**
- * A link restores age, view and selection: `?age=62.4&frame=spin-axis&block=sable&lat=-29.6&lon=41.2&view=globe
+ * A link restores version, age, view and selection: `?version=7&age=62.4&frame=spin-axis&block=sable&lat=-29.6&lon=41.2&view=globe
  * &centre=-16,34&zoom=1.5&off=velocity,coast&path=0,178,10`. What is left out takes the project's own value.
  */
 import { LAYERS, LINKED, VIEWS, ZOOM, type Layer, type Linked, type View } from './state';
 
 const text = (value: number, digits: number): string => String(Number(value.toFixed(digits)));
 
-/** Query string without its question mark; keys stand in a fixed order. */
-export function toQuery(state: Linked): string {
+/** Query string without its question mark; keys stand in a fixed order. The version is named: who may see the draft opens it otherwise. */
+export function toQuery(state: Linked, version: 'draft' | number): string {
   const query = new URLSearchParams();
+  query.set('version', String(version));
   query.set('age', text(state.age, 4));
   if (state.heldStill) query.set('frame', state.heldStill);
   if (state.block) query.set('block', state.block);
@@ -72,10 +73,11 @@ const DELAY_MS = 250;
 export function followInAddress(
   store: { getState: () => Linked; subscribe: (listener: () => void) => () => void },
   page: Window,
+  version: 'draft' | number,
 ): () => void {
   let timer: number | undefined;
   const write = () => {
-    const query = toQuery(store.getState());
+    const query = toQuery(store.getState(), version);
     if (`?${query}` !== page.location.search) {
       page.history.replaceState(
         page.history.state,

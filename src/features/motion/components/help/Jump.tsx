@@ -2,8 +2,12 @@
 import { useState } from 'react';
 import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
 import { open, select, setAge } from '../../store/actions';
-import { jumpsFor, type Jump as Target } from '../../store/jump';
+import { shortAge } from '../../format';
+import { jumpsFor, parseAge, type Jump as Target } from '../../store/jump';
 import { useBench, useWorkbench } from '../bench';
+
+const nothingFor = (typed: string, oldest: number): string =>
+  parseAge(typed) === null ? 'Nothing by that name.' : `The rotations go back to ${shortAge(oldest)} Ma.`;
 
 const keyOf = (jump: Target): string => (jump.kind === 'age' ? `age ${jump.label}` : `block ${jump.code}`);
 
@@ -29,6 +33,7 @@ export function Jump() {
         aria-label="Jump to an age or a block"
         menuTrigger="focus"
         allowsCustomValue
+        allowsEmptyCollection
         items={jumps.map((jump) => ({ id: keyOf(jump), jump }))}
         inputValue={typed}
         onInputChange={setTyped}
@@ -56,7 +61,9 @@ export function Jump() {
         <Popover isNonModal offset={2} className="border-frame bg-paper w-(--trigger-width) border py-1">
           <ListBox<{ id: string; jump: Target }>
             className="outline-none"
-            renderEmptyState={() => <p className="t-body text-ink-2 px-3 py-1">Nothing by that name.</p>}
+            renderEmptyState={() => (
+              <p className="t-body text-ink-2 px-3 py-1">{nothingFor(typed, scene.oldest)}</p>
+            )}
           >
             {({ jump }) => (
               <ListBoxItem

@@ -1,6 +1,6 @@
 /** The age as text; pressed, it is a field. Enter keeps, Escape puts back. */
 import { useState } from 'react';
-import { age as ageText, ageValue } from '../../format';
+import { age as ageText, ageValue, shortAge } from '../../format';
 import { setAge } from '../../store/actions';
 import { parseAge } from '../../store/jump';
 import { useBench, useWorkbench } from '../bench';
@@ -22,26 +22,39 @@ export function AgeField() {
     );
   }
   const read = parseAge(typed);
+  const beyond = read !== null && read > scene.oldest;
+  const wrong = read === null || beyond;
   const keep = () => {
-    if (read !== null) setAge(store, read, scene.oldest);
+    if (!wrong) setAge(store, read, scene.oldest);
     setTyped(null);
   };
   return (
-    <input
-      className="tabular border-ochre bg-sheet text-ink w-[62px] border px-1"
-      aria-label="Age in Ma"
-      inputMode="decimal"
-      autoFocus
-      aria-invalid={read === null}
-      value={typed}
-      onChange={(event) => setTyped(event.target.value)}
-      onFocus={(event) => event.target.select()}
-      onBlur={keep}
-      onKeyDown={(event) => {
-        if (event.key === 'Enter') keep();
-        else if (event.key === 'Escape') setTyped(null);
-        event.stopPropagation();
-      }}
-    />
+    <span className="relative">
+      <input
+        className="tabular border-ochre bg-sheet text-ink w-[62px] border px-1"
+        aria-label="Age in Ma"
+        inputMode="decimal"
+        autoFocus
+        aria-invalid={wrong}
+        aria-describedby="age-span"
+        value={typed}
+        onChange={(event) => setTyped(event.target.value)}
+        onFocus={(event) => event.target.select()}
+        onBlur={keep}
+        onKeyDown={(event) => {
+          if (event.key === 'Enter' && !wrong) keep();
+          else if (event.key === 'Escape') setTyped(null);
+          event.stopPropagation();
+        }}
+      />
+      <span
+        id="age-span"
+        role="status"
+        className="t-label text-madder bg-paper absolute top-full left-0 z-30 mt-1 px-1 font-normal whitespace-nowrap empty:hidden"
+      >
+        {wrong &&
+          (beyond ? `The rotations go back to ${shortAge(scene.oldest)} Ma.` : 'An age in Ma, 0 is today.')}
+      </span>
+    </span>
   );
 }

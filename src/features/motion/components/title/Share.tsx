@@ -5,11 +5,11 @@ import { useBench } from '../bench';
 
 const SAID_MS = 2500;
 
-export function Share() {
+export function Share({ version }: { readonly version: 'draft' | number }) {
   const { store } = useBench();
   const [said, setSaid] = useState<string | null>(null);
   const share = async () => {
-    const link = `${window.location.origin}${window.location.pathname}?${toQuery(store.getState())}`;
+    const link = `${window.location.origin}${window.location.pathname}?${toQuery(store.getState(), version)}`;
     try {
       await navigator.clipboard.writeText(link);
       setSaid('Link copied');

@@ -147,7 +147,7 @@ export function TitleBlock({ head }: { readonly head: Head }) {
       <AgeCell />
       <SelectedCell />
       <div className="ml-auto flex shrink-0 items-center gap-2 px-5 whitespace-nowrap">
-        <Share />
+        <Share version={head.shown} />
         <PrintLink href={head.print} />
         <AccountCell account={head.account} signIn={head.signIn} />
       </div>

@@ -12,6 +12,8 @@ export interface Head {
   readonly home: string;
   readonly pages: readonly Choice[];
   readonly version: { readonly value: string; readonly detail: string; readonly choices: readonly Choice[] };
+  /** The version that is shown. */
+  readonly shown: 'draft' | number;
   /** A released version: its title block is sunk over a double rule. */
   readonly frozen: boolean;
   readonly print: string;

@@ -49,6 +49,7 @@ export function headOf(project: Project, version: 'draft' | number, user: User |
         { id: 'versions', label: 'All versions', href: paths.versions(slug) },
       ],
     },
+    shown: version,
     frozen: version !== 'draft',
     print: paths.print(slug),
     signIn: paths.signIn(here),
