@@ -264,7 +264,6 @@ export function CaptionControls({ settings, change }: Props) {
         <input
           className="input"
           value={settings.title}
-          maxLength={160}
           placeholder="Title, unless the project's"
           onChange={(e) => change({ title: e.target.value })}
         />
@@ -274,7 +273,6 @@ export function CaptionControls({ settings, change }: Props) {
         <textarea
           className="input font-serif"
           rows={4}
-          maxLength={600}
           value={settings.caption}
           placeholder="What the map shows"
           onChange={(e) => change({ caption: e.target.value })}
