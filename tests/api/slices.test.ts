@@ -1,11 +1,10 @@
 /** Time slices over HTTP: what stands on the page, in each format. */
-import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
-import { PNG } from 'pngjs';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { seedIfEmpty } from '~/db/seed';
 import { CAUTION_LINE } from '~/features/sheets/slice/caution';
 import { closeWorkers } from '~/server/workers';
 import { createTestApp, type TestApp } from '../support/app';
+import { readPdf, readPng } from '../support/picture';
 
 let app: TestApp;
 const slice = (format: string, query: string) =>
@@ -108,48 +107,68 @@ describe('SVG', () => {
     expect((await slice('svg', 'age_ma=10&projection=flat')).status).toBe(400);
     expect((await slice('svg', 'age_ma=10&relative_to=nobody')).status).toBe(404);
     expect((await slice('gif', 'age_ma=10')).status).toBe(404);
+    expect((await slice('svg', 'age_ma=10&path_block=sable&path_lat=-29')).status).toBe(400);
     const older = words(await (await slice('svg', 'age_ma=190&relative_to=mantle')).text());
     expect(older).toContain('Without a place at this age');
     expect(older).toContain('outside rotations');
   });
 });
 
-describe('PNG and PDF', () => {
-  it('PNG has the page’s proportions, ink and blocks', async () => {
-    const answer = await slice('png', 'age_ma=62.4&dpi=100');
-    const png = PNG.sync.read(Buffer.from(await answer.arrayBuffer()));
-    // A4 landscape (ISO 216, 297 mm × 210 mm) at 100 dots an inch.
-    expect(png.width).toBe(Math.round((297 / 25.4) * 100));
-    expect(Math.abs(png.height - (210 / 25.4) * 100)).toBeLessThanOrEqual(1);
-    let ink = 0;
-    for (let i = 0; i < png.data.length; i += 4) if (png.data[i]! < 80) ink++;
-    expect(ink).toBeGreaterThan(3000);
-  }, 60_000);
+/** ISO 216, millimetres, long side first. */
+const PAPERS = { a3: [420, 297], a4: [297, 210], a5: [210, 148] } as const;
+const SHEETS = (['a3', 'a4', 'a5'] as const).flatMap((paper) =>
+  (['landscape', 'portrait'] as const).map((orientation) => {
+    const [long, short] = PAPERS[paper];
+    return { paper, orientation, mm: orientation === 'landscape' ? [long, short] : [short, long] };
+  }),
+);
+/** Where the map lies on every sheet, and where nothing is printed. */
+const MAP = { left: 0.2, right: 0.8, top: 0.3, bottom: 0.5 };
+const MARGIN = { left: 0.005, right: 0.02, top: 0.02, bottom: 0.97 };
 
-  it('PDF keeps its text, with the fonts inside', async () => {
-    const answer = await slice('pdf', `age_ma=62.4&version=7&${PATH}`);
-    const bytes = new Uint8Array(await answer.arrayBuffer());
-    const raw = Buffer.from(bytes).toString('latin1');
-    expect(raw.includes('/FontFile2')).toBe(true);
-    const document = await getDocument({ data: bytes, useSystemFonts: false, verbosity: 0 }).promise;
-    const page = await document.getPage(1);
-    const content = await page.getTextContent();
-    const text = content.items
-      .map((item) => ('str' in item ? item.str : ''))
-      .join(' ')
-      .replace(/[\u00a0\u2009]/g, ' ');
-    for (const part of [
-      'Closing of the Lantern Sea, 62.4 Ma',
-      'Version 7',
-      'Merrow 2014',
-      'A reconstruction is a model',
-      'Equal Earth',
-    ])
-      expect(text).toContain(part);
-    const [, , width, height] = page.view;
-    expect(Math.abs(width! - 841.89)).toBeLessThan(0.1);
-    expect(Math.abs(height! - 595.28)).toBeLessThan(0.1);
-  }, 60_000);
+describe('PNG and PDF', () => {
+  it.each(SHEETS)(
+    'PNG on $paper $orientation has the size of the paper and colours in the map',
+    async (sheet) => {
+      const answer = await slice(
+        'png',
+        `age_ma=62.4&dpi=72&paper=${sheet.paper}&orientation=${sheet.orientation}`,
+      );
+      const png = readPng(new Uint8Array(await answer.arrayBuffer()));
+      const [width, height] = sheet.mm.map((mm) => (mm / 25.4) * 72);
+      expect(png.width).toBe(Math.round(width!));
+      expect(Math.abs(png.height - height!)).toBeLessThanOrEqual(1);
+      expect(png.colours(MAP)).toBeGreaterThan(20);
+      expect(png.colours(MARGIN)).toBe(1);
+    },
+    60_000,
+  );
+
+  it.each(SHEETS)(
+    'PDF on $paper $orientation has the size of the paper and its text',
+    async (sheet) => {
+      const answer = await slice(
+        'pdf',
+        `age_ma=62.4&version=7&paper=${sheet.paper}&orientation=${sheet.orientation}&${PATH}`,
+      );
+      const bytes = new Uint8Array(await answer.arrayBuffer());
+      expect(Buffer.from(bytes).toString('latin1').includes('/FontFile2')).toBe(true);
+      const { width, height, text } = await readPdf(bytes);
+      const [w, h] = sheet.mm.map((mm) => (mm / 25.4) * 72);
+      expect(Math.abs(width - w!)).toBeLessThan(0.1);
+      expect(Math.abs(height - h!)).toBeLessThan(0.1);
+      for (const part of [
+        'Closing of the Lantern Sea, 62.4 Ma',
+        'Version 7',
+        'Merrow 2014',
+        'A reconstruction is a model',
+        'Equal Earth',
+        'Old Harrow',
+      ])
+        expect(text).toContain(part);
+    },
+    60_000,
+  );
 });
 
 describe('GeoJSON', () => {

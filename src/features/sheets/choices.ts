@@ -6,3 +6,7 @@ export const USUAL_LAYERS: readonly Layer[] = ['graticule', 'coasts', 'names', '
 /** Paper sizes in millimetres, long side first (ISO 216). */
 export const PAPERS = { a3: [420, 297], a4: [297, 210], a5: [210, 148] } as const;
 export type Paper = keyof typeof PAPERS;
+
+/** Characters of a title and of a caption. */
+export const MOST_TITLE = 160;
+export const MOST_CAPTION = 600;

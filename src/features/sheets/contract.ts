@@ -6,7 +6,7 @@ import {
   type ProjectionName,
 } from '../../kernel/cartography/projections';
 import { slug } from '../ledger/contract';
-import { LAYERS, USUAL_LAYERS, type Layer } from './choices';
+import { LAYERS, MOST_CAPTION, MOST_TITLE, USUAL_LAYERS, type Layer } from './choices';
 
 /** Other spellings of projection names that people try. */
 const ALIASES: ReadonlyMap<string, ProjectionName> = new Map([
@@ -47,11 +47,22 @@ const layers = z
 /** A number in an address: a blank is missing, not 0. */
 const number = (least: number, most: number) =>
   z
-    .union([z.number(), z.string().trim().min(1, 'missing').transform(Number)])
-    .refine(
-      (value) => Number.isFinite(value) && value >= least && value <= most,
-      `a number from ${least} to ${most}`,
-    );
+    .union([z.number(), z.string().trim().min(1).transform(Number)], { error: 'missing' })
+    .refine((value) => Number.isFinite(value) && value >= least && value <= most, {
+      error: `a number from ${least} to ${most} is meant, with a decimal point`,
+    });
+
+/** Words on a sheet. */
+const words = (most: number) =>
+  z.string().superRefine((text, context) => {
+    const length = [...text].length;
+    if (length <= most) return;
+    const message = `has ${length} characters, and a sheet takes ${most} at most: shorten it by ${length - most}`;
+    context.addIssue({ code: 'custom', message });
+  });
+
+const oneOf = <const T extends readonly [string, ...string[]]>(names: T) =>
+  z.enum(names, { error: ({ input }) => `"${String(input)}" is not known here: ${names.join(', ')}` });
 
 export const sliceQuery = z.object({
   version: z
@@ -71,10 +82,10 @@ export const sliceQuery = z.object({
   /** Degrees from the centre to the edge of an azimuthal map. */
   reach_deg: number(1, 175).optional(),
   layers,
-  paper: z.enum(['a3', 'a4', 'a5']).default('a4'),
-  orientation: z.enum(['landscape', 'portrait']).default('landscape'),
-  title: z.string().max(160).optional(),
-  caption: z.string().max(600).default(''),
+  paper: oneOf(['a3', 'a4', 'a5']).default('a4'),
+  orientation: oneOf(['landscape', 'portrait']).default('landscape'),
+  title: words(MOST_TITLE).optional(),
+  caption: words(MOST_CAPTION).default(''),
   /** Drift path to draw: a block, a point of it in present coordinates, and a step. */
   path_block: slug.optional(),
   path_lat: number(-90, 90).optional(),

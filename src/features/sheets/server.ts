@@ -8,6 +8,7 @@ import { shortHash } from '~/features/versions/hash';
 import type { DriftPoint } from '~/kernel/rotations';
 import { createIndex, requireBlock } from '~/kernel/rotations/model-index';
 import { demand, type Access } from '~/server/access';
+import { Problem } from '~/server/problem';
 import { runInWorker } from '~/server/workers';
 import { coordinates } from '~/features/motion/format';
 import type { SliceQuery } from './contract';
@@ -99,7 +100,13 @@ async function subjectOf(access: Access, state: State, query: SliceQuery): Promi
 
 function pathOf(subject: SliceSubject, query: SliceQuery): SlicePath | null {
   const { path_block: block, path_lat: lat, path_lon: lon, path_step_ma: step_ma } = query;
-  if (block === undefined || lat === undefined || lon === undefined) return null;
+  if (block === undefined && lat === undefined && lon === undefined) return null;
+  if (block === undefined || lat === undefined || lon === undefined) {
+    const path = block === undefined ? 'path_block' : lat === undefined ? 'path_lat' : 'path_lon';
+    const problem =
+      'missing: a drift path takes a block and a point of it, path_block, path_lat and path_lon';
+    throw new Problem('InvalidQuery', { detail: problem, errors: [{ path, read: '', problem }] });
+  }
   const { model, frame } = subject;
   const between = (younger_ma: number, older_ma: number): DriftPoint[] =>
     driftPath(model, { block, lat, lon, younger_ma, older_ma, step_ma, relative_to: frame.code });

@@ -2,7 +2,10 @@
 import type { ReactNode } from 'react';
 import { PROJECTION_NAMES, PROJECTIONS, type ProjectionName } from '../../../kernel/cartography/projections';
 import type { SliceSettings } from '../address';
+import type { KnownPoint } from '../known-points';
+import { pointWords } from '../point-words';
 import { LAYERS, PAPERS, type Layer, type Paper } from '../choices';
+import { NumberField } from './NumberField';
 
 export interface Choice {
   readonly code: string;
@@ -43,31 +46,27 @@ function Line({ label, children }: { readonly label: string; readonly children: 
 
 const quiet = 'min-h-7 max-w-44 bg-transparent text-right t-value';
 
-interface NumberProps {
-  readonly value: number | null;
-  readonly least: number;
-  readonly most: number;
-  readonly step?: number;
-  readonly name: string;
-  readonly onChange: (value: number | null) => void;
-}
-
-function NumberInput({ value, least, most, step = 1, name, onChange }: NumberProps) {
-  const take = (text: string): void => {
-    const read = Number(text);
-    onChange(text === '' || !Number.isFinite(read) ? null : Math.min(most, Math.max(least, read)));
-  };
+export function VersionControl({
+  version,
+  versions,
+  choose,
+}: {
+  readonly version: string;
+  readonly versions: readonly Choice[];
+  readonly choose: (version: string) => void;
+}) {
   return (
-    <input
-      className={`${quiet} tabular w-24`}
-      type="number"
-      name={name}
-      value={value ?? ''}
-      min={least}
-      max={most}
-      step={step}
-      onChange={(e) => take(e.target.value)}
-    />
+    <Group title="State">
+      <Line label="Version">
+        <select className={quiet} value={version} onChange={(e) => choose(e.target.value)}>
+          {versions.map(({ code, name }) => (
+            <option key={code} value={code}>
+              {name}
+            </option>
+          ))}
+        </select>
+      </Line>
+    </Group>
   );
 }
 
@@ -110,16 +109,17 @@ export function MapControls({
   const kind = PROJECTIONS[settings.projection];
   return (
     <Group title="Map">
-      <Line label="Age, Ma">
-        <NumberInput
-          name="age_ma"
-          value={settings.age_ma}
-          least={0}
-          most={Math.max(1, oldest_ma)}
-          step={0.1}
-          onChange={(age) => change({ age_ma: age ?? 0 })}
-        />
-      </Line>
+      <NumberField
+        label="Age, Ma"
+        name="age_ma"
+        what="an age"
+        unit="Ma"
+        value={settings.age_ma}
+        least={0}
+        most={Math.max(1, oldest_ma)}
+
+        onChange={(age_ma) => age_ma !== null && change({ age_ma })}
+      />
       <Line label="Held still">
         <select
           className={quiet}
@@ -147,35 +147,41 @@ export function MapControls({
         </select>
       </Line>
       {kind.centre !== 'equator' && (
-        <Line label={kind.centre === 'pole' ? 'Pole, °N' : 'Centre, °N'}>
-          <NumberInput
-            name="centre_lat"
-            value={settings.centre_lat}
-            least={-90}
-            most={90}
-            onChange={(lat) => change({ centre_lat: lat ?? 0 })}
-          />
-        </Line>
-      )}
-      <Line label="Centre, °E">
-        <NumberInput
-          name="centre_lon"
-          value={settings.centre_lon}
-          least={-180}
-          most={180}
-          onChange={(lon) => change({ centre_lon: lon ?? 0 })}
+        <NumberField
+          label={kind.centre === 'pole' ? 'Pole, °N' : 'Centre, °N'}
+          name="centre_lat"
+          what="a latitude"
+          unit="°"
+          value={settings.centre_lat}
+          least={-90}
+          most={90}
+
+          onChange={(centre_lat) => centre_lat !== null && change({ centre_lat })}
         />
-      </Line>
+      )}
+      <NumberField
+        label="Centre, °E"
+        name="centre_lon"
+        what="a longitude"
+        unit="°"
+        value={settings.centre_lon}
+        least={-360}
+        most={360}
+
+        onChange={(centre_lon) => centre_lon !== null && change({ centre_lon })}
+      />
       {kind.reach && (
-        <Line label={`Reach, ° (${kind.reach.usual} unless given)`}>
-          <NumberInput
-            name="reach_deg"
-            value={settings.reach_deg}
-            least={5}
-            most={kind.reach.most}
-            onChange={(reach_deg) => change({ reach_deg })}
-          />
-        </Line>
+        <NumberField
+          label={`Reach, ° (${kind.reach.usual} unless given)`}
+          name="reach_deg"
+          what="a reach"
+          unit="°"
+          value={settings.reach_deg}
+          least={5}
+          most={kind.reach.most}
+          optional
+          onChange={(reach_deg) => change({ reach_deg })}
+        />
       )}
     </Group>
   );
@@ -201,15 +207,22 @@ export function LayerControls({ settings, change }: Props) {
   );
 }
 
-export function PathControls({ settings, change, blocks }: Props & { readonly blocks: readonly Choice[] }) {
+interface PathProps extends Props {
+  readonly blocks: readonly Choice[];
+  readonly points: Readonly<Record<string, KnownPoint>>;
+  /** As the page was opened. */
+  readonly opened: SliceSettings;
+}
+
+export function PathControls({ settings, change, blocks, points, opened }: PathProps) {
+  const choose = (path_block: string): void => {
+    const point = points[path_block];
+    change({ path_block, path_lat: point?.lat ?? null, path_lon: point?.lon ?? null });
+  };
   return (
     <Group title="Drift path">
       <Line label="Block">
-        <select
-          className={quiet}
-          value={settings.path_block}
-          onChange={(e) => change({ path_block: e.target.value })}
-        >
+        <select className={quiet} value={settings.path_block} onChange={(e) => choose(e.target.value)}>
           <option value="">none</option>
           {blocks.map(({ code, name }) => (
             <option key={code} value={code}>
@@ -220,36 +233,40 @@ export function PathControls({ settings, change, blocks }: Props & { readonly bl
       </Line>
       {settings.path_block !== '' && (
         <>
-          <Line label="Point today, °N">
-            <NumberInput
-              name="path_lat"
-              value={settings.path_lat}
-              least={-90}
-              most={90}
-              step={0.1}
-              onChange={(path_lat) => change({ path_lat })}
-            />
-          </Line>
-          <Line label="Point today, °E">
-            <NumberInput
-              name="path_lon"
-              value={settings.path_lon}
-              least={-180}
-              most={180}
-              step={0.1}
-              onChange={(path_lon) => change({ path_lon })}
-            />
-          </Line>
-          <Line label="Step, Myr">
-            <NumberInput
-              name="path_step_ma"
-              value={settings.path_step_ma}
-              least={0.1}
-              most={500}
-              step={0.1}
-              onChange={(step) => change({ path_step_ma: step || 10 })}
-            />
-          </Line>
+          <p className="hint">{pointWords(settings, opened, points[settings.path_block])}</p>
+          <NumberField
+            label="Point today, °N"
+            name="path_lat"
+            what="a latitude"
+            unit="°"
+            value={settings.path_lat}
+            least={-90}
+            most={90}
+            optional
+            onChange={(path_lat) => change({ path_lat })}
+          />
+          <NumberField
+            label="Point today, °E"
+            name="path_lon"
+            what="a longitude"
+            unit="°"
+            value={settings.path_lon}
+            least={-360}
+            most={360}
+            optional
+            onChange={(path_lon) => change({ path_lon })}
+          />
+          <NumberField
+            label="Step, Myr"
+            name="path_step_ma"
+            what="a step"
+            unit="Myr"
+            value={settings.path_step_ma}
+            least={0.1}
+            most={500}
+
+            onChange={(path_step_ma) => path_step_ma !== null && change({ path_step_ma })}
+          />
         </>
       )}
     </Group>
@@ -264,7 +281,6 @@ export function CaptionControls({ settings, change }: Props) {
         <input
           className="input"
           value={settings.title}
-          maxLength={160}
           placeholder="Title, unless the project's"
           onChange={(e) => change({ title: e.target.value })}
         />
@@ -274,7 +290,6 @@ export function CaptionControls({ settings, change }: Props) {
         <textarea
           className="input font-serif"
           rows={4}
-          maxLength={600}
           value={settings.caption}
           placeholder="What the map shows"
           onChange={(e) => change({ caption: e.target.value })}

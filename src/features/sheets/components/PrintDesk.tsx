@@ -1,12 +1,14 @@
 /** One time slice on paper: the page as it will print in the middle, what is on it to the right, files below. */
 import { useDeferredValue, useEffect, useRef, useState } from 'react';
 import { sliceHref, sliceSearch, type SliceSettings } from '../address';
+import type { KnownPoint } from '../known-points';
 import {
   CaptionControls,
   LayerControls,
   MapControls,
   PageControls,
   PathControls,
+  VersionControl,
   type Choice,
 } from './PrintControls';
 
@@ -17,6 +19,11 @@ export interface PrintDeskProps {
   readonly frames: readonly Choice[];
   readonly blocks: readonly Choice[];
   readonly oldest_ma: number;
+  readonly versions: readonly Choice[];
+  /** Of each block that has one. */
+  readonly points: Readonly<Record<string, KnownPoint>>;
+  /** What the link says and cannot be used, each with why. */
+  readonly refused: readonly string[];
 }
 
 export type Change = (change: Partial<SliceSettings>) => void;
@@ -28,6 +35,9 @@ export default function PrintDesk({
   frames,
   blocks,
   oldest_ma,
+  versions,
+  points,
+  refused,
 }: PrintDeskProps) {
   const [settings, setSettings] = useState(initial);
   const change: Change = (part) => setSettings((now) => ({ ...now, ...part }));
@@ -42,10 +52,20 @@ export default function PrintDesk({
         onSubmit={(e) => e.preventDefault()}
       >
         <h1 className="sr-only">Print a time slice</h1>
+        {refused.length > 0 && (
+          <div className="wrong" role="alert">
+            <p>Left out of the link: {refused.join('; ')}.</p>
+          </div>
+        )}
+        <VersionControl
+          version={version}
+          versions={versions}
+          choose={(other) => window.location.assign(sliceSearch(settings, other))}
+        />
         <PageControls settings={settings} change={change} />
         <MapControls settings={settings} change={change} frames={frames} oldest_ma={oldest_ma} />
         <LayerControls settings={settings} change={change} />
-        <PathControls settings={settings} change={change} blocks={blocks} />
+        <PathControls settings={settings} change={change} blocks={blocks} points={points} opened={initial} />
         <CaptionControls settings={settings} change={change} />
         <div className="border-frame mt-auto border-t pt-4">
           <div className="flex flex-wrap gap-2">
