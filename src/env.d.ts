@@ -8,5 +8,7 @@ declare namespace App {
     session: { readonly id: string; readonly expires_at: Date } | null;
     /** The chosen theme; null leaves it to the browser's setting. */
     theme: 'light' | 'dark' | null;
+    /** Why a page of a project that the actor may see is not shown. */
+    refused?: { readonly words: string; readonly slug: string };
   }
 }

@@ -1,4 +1,7 @@
-/** How a page opens a project: the actor's project for an action, or nothing, which the page answers as 404. */
+/**
+ * How a page opens a project: the actor's project for an action, or nothing, which the page answers as 404; where the
+ * actor may see the project, the reason is kept for that page to say.
+ */
 import type { Project } from '~/features/projects/contract';
 import { readProject } from '~/features/projects/server';
 import type { Access } from './access';
@@ -21,7 +24,8 @@ export async function openPage(
     const access = await openProject(locals.actor, slug ?? '', action);
     return { access, project: await readProject(access) };
   } catch (error) {
-    if (error instanceof Problem && (error.name === 'NotFound' || error.name === 'Forbidden')) return null;
-    throw error;
+    if (!(error instanceof Problem) || (error.name !== 'NotFound' && error.name !== 'Forbidden')) throw error;
+    if (error.name === 'Forbidden') locals.refused = { words: error.message, slug: slug ?? '' };
+    return null;
   }
 }

@@ -83,6 +83,16 @@ test('another team’s project is not to be found', async ({ page, browser }) =>
   await theirs.close();
 });
 
+test('a page for another role says which it takes, and leads back', async ({ page }) => {
+  await signInAs(page, 'reviewer');
+  await page.goto(`${DEMO}/settings`);
+  await expect(page.getByText('This takes the role lead; yours is reviewer.')).toBeVisible();
+  await page.getByRole('link', { name: 'Back to the project' }).click();
+  await expect(page).toHaveURL(DEMO);
+  await page.goto(`${DEMO}/workbench?version=77`);
+  await expect(page.getByText('The project has no version 77 that you can see.')).toBeVisible();
+});
+
 test('an instructor sees no way to edit, and is told why', async ({ page }) => {
   await signInAs(page, 'instructor', `${DEMO}/workbench`);
   await expect(page.getByRole('region', { name: 'Ledger' }).or(page.getByLabel('Ledger'))).toContainText(

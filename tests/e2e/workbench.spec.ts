@@ -168,8 +168,10 @@ test.describe('reading', () => {
 
   test('the address keeps the version that is shown, whatever moves', async ({ page }) => {
     await page.goto(`${DEMO}/workbench?version=7&age=62.4&block=sable`);
-    await page.keyboard.press('2');
-    await expect(page).toHaveURL(/version=7&.*view=map/);
+    await expect(async () => {
+      await page.keyboard.press('2');
+      await expect(page).toHaveURL(/version=7&.*view=map/, { timeout: 1_000 });
+    }).toPass();
     await page.reload();
     await expect(page.getByText('v7').first()).toBeVisible();
     await expect(page).toHaveURL(/version=7&.*view=map/);

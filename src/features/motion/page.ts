@@ -25,7 +25,10 @@ export async function openWorkbench(
   const opened = await openPage(locals, slug, 'project.view');
   if (!opened) return null;
   const requested = queryVersion.safeParse(asked ?? undefined);
-  if (!requested.success) return null;
+  if (!requested.success) {
+    locals.refused = noVersion(opened.project.slug, asked);
+    return null;
+  }
   try {
     const state = await loadState(opened.access, requested.data);
     const { version, revision, blocks, features, directions, rotations } = state;
@@ -42,10 +45,19 @@ export async function openWorkbench(
           : 'Leads and researchers of the project edit.';
     return { project: opened.project, version, readOnly, ...(light ? { initial } : {}) };
   } catch (error) {
-    if (error instanceof Problem) return null;
-    throw error;
+    if (!(error instanceof Problem)) throw error;
+    locals.refused = noVersion(opened.project.slug, asked);
+    return null;
   }
 }
+
+/** What is said in place of a version that is not there, or not for the actor to see. */
+export const noVersion = (slug: string, asked: string | null | undefined) => ({
+  words: asked
+    ? `The project has no version ${asked.slice(0, 20)} that you can see.`
+    : 'No version is released yet.',
+  slug,
+});
 
 /** What the picture islands draw from: one state of a project as plain data. */
 export const payloadOf = (title: string, state: State): Payload => ({
