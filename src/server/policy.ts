@@ -23,6 +23,8 @@ export const PROJECT_POLICY = {
   'history.view': { roles: everyone },
   export: { roles: everyone, visitors: 'of public projects' },
   compute: { roles: everyone, visitors: 'of public projects' },
+  /** Minutes of computing are for who has a name here. */
+  'job.start': { roles: everyone },
   'ledger.edit': { roles: builders, changes: true },
   import: { roles: builders, changes: true },
   'sheet.edit': { roles: ['lead', 'researcher', 'instructor'], changes: true },
@@ -48,6 +50,7 @@ export const SITE_POLICY = {
   'project.list': { to: 'anyone' },
   'project.create': { to: 'signed in', changes: true },
   'geometry.view': { to: 'anyone' },
+  'job.own': { to: 'signed in' },
   'admin.outbox': { to: 'site admin', inPersonOnly: true },
 } as const satisfies Record<string, SiteRule>;
 

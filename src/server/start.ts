@@ -1,9 +1,11 @@
 import { openDatabase, useDatabase } from '~/db/client';
 import { seedIfEmpty } from '~/db/seed';
+import { cancelAll, endInterrupted } from '~/features/jobs/server';
 import { settings, type Settings } from './env';
 import { endStreams } from './events';
 import { log } from './log';
 import { keepSendingMail } from './mail';
+import { closeWorkers } from './workers';
 
 /** What server.mjs, which stands outside the bundle, takes over once the first request has started everything. */
 interface Runtime {
@@ -32,15 +34,18 @@ async function start(): Promise<void> {
   const { db, close } = await openDatabase(current);
   useDatabase(db);
   await seedIfEmpty(db, current);
+  await endInterrupted(db);
   const stopMail = keepSendingMail();
   holder[RUNTIME] = {
     settings: current,
     endStreams,
-    close: () => {
+    close: async () => {
       stopMail();
+      cancelAll();
+      await closeWorkers();
       useDatabase(undefined);
       delete holder[READY];
-      return close();
+      await close();
     },
   };
 }
