@@ -1,10 +1,10 @@
 /** Where the selected point is at an age, how surely, and through which rotations. */
 import { toPole } from '../../../kernel/rotations';
 import { poseAt } from '../scene/tolerant';
-import { toLatLon, toVector } from '../../../kernel/sphere';
+import { distanceKm, toLatLon, toVector } from '../../../kernel/sphere';
 import { rotate } from '../../../kernel/rotations/quaternion';
 import { pointEllipse, poseUncertainty, shares, type Ellipse } from '../../../kernel/uncertainty';
-import type { Evidence, Link, Model, Pose } from '../../../kernel/rotations/types';
+import type { Evidence, Link, Model, Pose, Quaternion, Vector3 } from '../../../kernel/rotations/types';
 import { shortAge } from '../format';
 import { oldestPlaced } from '../log/columns';
 import type { NamedPoint } from '../scene/points';
@@ -17,11 +17,15 @@ export interface LinkRow {
   readonly angle: number;
   readonly younger: number;
   readonly older: number;
+  /** Of the way from the younger to the older row. */
+  readonly fraction: number;
   readonly sources: readonly string[];
   readonly evidence: Evidence;
   /** Share of the variance of the position, 0 to 1. */
   readonly share: number;
   readonly withoutCovariance: boolean;
+  /** Where the point would be had the block stayed where it is today as seen from its reference, and how far off that is. */
+  readonly withoutIt: { readonly lat: number; readonly lon: number; readonly km: number };
 }
 
 export type Answer =
@@ -29,6 +33,7 @@ export type Answer =
       readonly placed: true;
       readonly lat: number;
       readonly lon: number;
+      readonly quaternion: Quaternion;
       readonly ellipse: Ellipse | null;
       readonly rows: readonly LinkRow[];
     }
@@ -47,23 +52,38 @@ export function answerAt(
   const present = toVector(point.lat, point.lon);
   const uncertainty = poseUncertainty(model, pose);
   const parts = shares(pose, uncertainty, present);
-  const { lat, lon } = toLatLon(rotate(pose.quaternion, present));
+  const there = rotate(pose.quaternion, present);
+  const { lat, lon } = toLatLon(there);
   const without = new Set(uncertainty.without.map(({ id }) => id));
   return {
     placed: true,
     lat,
     lon,
+    quaternion: pose.quaternion,
     ellipse: pointEllipse(pose, uncertainty, present),
-    rows: pose.links.map((link, i) => rowOf(link, parts.links[i] ?? 0, without)),
+    rows: pose.links.map((link, i) => ({
+      ...rowOf(link, parts.links[i] ?? 0, without),
+      withoutIt: withoutLink(pose.links, i, present, there),
+    })),
   };
+}
+
+function withoutLink(
+  links: readonly Link[],
+  left: number,
+  present: Vector3,
+  there: Vector3,
+): LinkRow['withoutIt'] {
+  const place = links.reduce((at, link, i) => (i === left ? at : rotate(link.quaternion, at)), present);
+  return { ...toLatLon(place), km: distanceKm(place, there) };
 }
 
 /** A link passed downwards is its inverse: the reference as seen from the block. */
 function rowOf(
-  { block, relative_to, direction, quaternion, younger, older }: Link,
+  { block, relative_to, direction, quaternion, younger, older, fraction }: Link,
   share: number,
   without: ReadonlySet<string>,
-): LinkRow {
+): Omit<LinkRow, 'withoutIt'> {
   const { pole_lat: lat, pole_lon: lon, angle_deg: angle } = toPole(quaternion);
   const north =
     lat < -1e-9 ? { lat: -lat, lon: lon > 0 ? lon - 180 : lon + 180, angle: -angle } : { lat, lon, angle };
@@ -73,6 +93,7 @@ function rowOf(
     ...{ block: from, relative_to: to, ...north, sources, share },
     younger: younger.age_ma,
     older: older.age_ma,
+    fraction,
     evidence: older.evidence,
     withoutCovariance: without.has(younger.id) || without.has(older.id),
   };

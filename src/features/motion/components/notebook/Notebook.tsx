@@ -1,5 +1,5 @@
 /** The notebook: one sentence, the shares of its uncertainty, the rows, and what rests on them. */
-import { memo, useDeferredValue, useMemo } from 'react';
+import { Fragment, memo, useDeferredValue, useMemo } from 'react';
 import {
   age as ageText,
   ageValue,
@@ -17,6 +17,7 @@ import { rootFrame } from '../../scene/defaults';
 import type { NamedPoint } from '../../scene/points';
 import { useBench, useWorkbench } from '../bench';
 import { useNames } from '../use-names';
+import { CopyAnswer } from './CopyAnswer';
 
 /** Follows the age line a moment behind it, so that the line, strips and globe never wait for words. */
 export function useAnswer(): { point: NamedPoint | null; answer: Answer | null; age: number } {
@@ -149,21 +150,31 @@ const Rows = memo(function Rows({ rows }: { rows: readonly LinkRow[] }) {
       </thead>
       <tbody>
         {rows.map((row) => (
-          <tr key={row.block} className="border-rule border-b [&>td]:py-1.5 [&>td]:pr-4">
-            <td className="whitespace-nowrap">
-              {nameOf(row.block)} in {nameOf(row.relative_to)}
-            </td>
-            <td className="tabular text-right whitespace-nowrap">
-              {latitude(row.lat)}, {longitude(row.lon)}
-            </td>
-            <td className="tabular text-right">{angle(row.angle)}</td>
-            <td className="tabular whitespace-nowrap">
-              {row.younger === row.older
-                ? `at ${ageText(row.older)}`
-                : `${ageValue(row.younger)} and ${ageText(row.older)}`}
-            </td>
-            <td className="text-ink-2">{row.sources.join('; ') || 'none given'}</td>
-          </tr>
+          <Fragment key={row.block}>
+            <tr className="[&>td]:pt-1.5 [&>td]:pr-4">
+              <td className="whitespace-nowrap">
+                {nameOf(row.block)} in {nameOf(row.relative_to)}
+              </td>
+              <td className="tabular text-right whitespace-nowrap">
+                {latitude(row.lat)}, {longitude(row.lon)}
+              </td>
+              <td className="tabular text-right">{angle(row.angle)}</td>
+              <td className="tabular whitespace-nowrap">
+                {row.younger === row.older
+                  ? `at ${ageText(row.older)}`
+                  : `${ageValue(row.younger)} and ${ageText(row.older)}`}
+              </td>
+              <td className="text-ink-2">{row.sources.join('; ') || 'none given'}</td>
+            </tr>
+            <tr className="border-rule border-b">
+              <td colSpan={5} className="t-label tabular text-ink-2 pb-1.5">
+                {row.evidence}
+                {row.younger !== row.older && `, ${number(100 * row.fraction)} % of the way to the older row`}
+                {row.withoutCovariance && ', no covariance'}; without it {number(row.withoutIt.km)} km off, at{' '}
+                {coordinates(row.withoutIt.lat, row.withoutIt.lon)}
+              </td>
+            </tr>
+          </Fragment>
         ))}
       </tbody>
     </table>
@@ -202,7 +213,7 @@ function Rests() {
 }
 
 export function Notebook() {
-  const { answer } = useAnswer();
+  const { point, answer, age } = useAnswer();
   const heldStill = useWorkbench((state) => state.heldStill);
   const rows = answer?.placed ? answer.rows : [];
   return (
@@ -212,7 +223,10 @@ export function Notebook() {
       className="grid h-full min-h-0 grid-cols-[minmax(0,1fr)_250px] max-lg:grid-cols-1"
     >
       <div className="min-h-0 overflow-auto px-5 py-3 max-md:px-3.5">
-        <h2 className="t-head">Why is it here?</h2>
+        <div className="flex flex-wrap items-baseline justify-between gap-x-4">
+          <h2 className="t-head">Why is it here?</h2>
+          {point && answer?.placed && <CopyAnswer point={point} answer={answer} age={age} />}
+        </div>
         <Sentence />
         {rows.length > 0 && (
           <>
