@@ -122,6 +122,7 @@ export function run(which: Renderer, vertices: number, frames: number, size: num
   const times: number[] = [];
   const drawn: DrawnBlock[] = moving.map((body, i) => ({
     evidence: body.evidence,
+    weak: false,
     shape: which === 'every vertex' ? whole(polygonShape(body.geometry)) : polygonShape(body.geometry),
     carrier: i,
   }));

@@ -7,6 +7,8 @@ import type { Shape } from './shape';
 
 export interface DrawnBlock {
   readonly evidence: Evidence;
+  /** Weakly constrained at the age shown. */
+  readonly weak: boolean;
   readonly shape: Shape;
   /** Index of the pose that moves it. */
   readonly carrier: number;
@@ -22,6 +24,7 @@ export interface BlockStyle {
 export const OUTLINE = 0.85;
 export const COAST = 0.7;
 export const UNCONSTRAINED_DASH = [6, 3.2];
+export const WEAK_DASH = [9, 2.4, 1.6, 2.4];
 export const COAST_DASH = [2.2, 1.9];
 
 /** Draws blocks in order; `poses` packs one 3 × 3 matrix per carrier, NaN where it has no position. */
@@ -37,7 +40,8 @@ export function paintBlocks(
   ctx.lineJoin = 'round';
   const solid: number[] = [];
   const dashed = UNCONSTRAINED_DASH.map((d) => d * scale);
-  for (const { shape, evidence, carrier } of blocks) {
+  const weakly = WEAK_DASH.map((d) => d * scale);
+  for (const { shape, evidence, weak, carrier } of blocks) {
     if (Number.isNaN(poses[9 * carrier])) continue;
     const seen = ground.load(shape, poses, 9 * carrier);
     if (seen === 'hidden') continue;
@@ -49,7 +53,7 @@ export function paintBlocks(
       ctx.beginPath();
       ground.edges(ctx, true);
     }
-    ctx.setLineDash(evidence === 'unconstrained' ? dashed : solid);
+    ctx.setLineDash(evidence === 'unconstrained' ? dashed : weak ? weakly : solid);
     ctx.stroke();
   }
   ctx.setLineDash(solid);
@@ -58,7 +62,7 @@ export function paintBlocks(
 export function paintLines(
   ctx: CanvasRenderingContext2D,
   ground: Ground,
-  lines: readonly Omit<DrawnBlock, 'evidence'>[],
+  lines: readonly Omit<DrawnBlock, 'evidence' | 'weak'>[],
   poses: Float64Array,
   { palette, scale }: BlockStyle,
 ): void {

@@ -3,6 +3,7 @@ import type { Frame } from '../scene/frame';
 import type { NamedPoint } from '../scene/points';
 import { holdsAt } from '../../../kernel/rotations/circuit';
 import { outlineAt, type Scene } from '../scene/scene';
+import { weaknessesAt } from '../scene/weak';
 import type { Separation } from '../scene/separation';
 import type { Track } from '../scene/track';
 import type { Layer } from '../store/state';
@@ -41,12 +42,15 @@ export function drawnBlocks(picture: Picture): DrawnBlock[] {
   return sorted.flatMap((block) => {
     const shape = outlineAt(block, frame.age);
     const carrier = frame.indexOf.get(block.code);
-    return shape && carrier !== undefined ? [{ evidence: block.evidence, shape, carrier }] : [];
+    if (!shape || carrier === undefined) return [];
+    const compiled = frame.model.blocks[carrier];
+    const weak = compiled !== undefined && weaknessesAt(compiled, frame.age).length > 0;
+    return [{ evidence: block.evidence, weak, shape, carrier }];
   });
 }
 
 /** Present coasts carried by the blocks that are shown. */
-export function drawnCoasts(picture: Picture): Omit<DrawnBlock, 'evidence'>[] {
+export function drawnCoasts(picture: Picture): Omit<DrawnBlock, 'evidence' | 'weak'>[] {
   const shown = new Set(visible(picture).blocks.map(({ code }) => code));
   return picture.scene.lines
     .filter(({ kind, block, appears_ma, disappears_ma }) => {

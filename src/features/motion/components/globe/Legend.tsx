@@ -1,10 +1,13 @@
 /** The legend is the control: press a line to turn it off; it stays, grey. */
-import type { ReactNode } from 'react';
+import { useMemo, type ReactNode } from 'react';
 import { EVIDENCE } from '../../../../kernel/rotations/types';
 import { toggleLayer } from '../../store/actions';
 import type { Drawn, Layer } from '../../store/state';
-import { useBench, useWorkbench } from '../bench';
+import { useBench, useCalmAge, useWorkbench } from '../bench';
+import { WEAK_DASH } from '../../globe/paint-blocks';
 import { ARROW_PX } from '../../globe/paint-marks';
+import { weaknessesAt } from '../../scene/weak';
+import { useNames } from '../use-names';
 
 const SWATCH = 'h-[14px] w-[26px] shrink-0 overflow-visible';
 
@@ -92,6 +95,41 @@ const Heading = ({ title, unit }: { title: string; unit: string }) => (
   </p>
 );
 
+/** Blocks whose rotation in use says less than it might: their outlines are drawn in dashes and dots. */
+function Weak() {
+  const { scene, model } = useBench();
+  const age = useCalmAge();
+  const weak = useMemo(() => {
+    const outlined = new Set(scene.blocks.flatMap(({ code, outlines }) => (outlines.length > 0 ? code : [])));
+    return model.blocks.flatMap((block) => {
+      const lacks = outlined.has(block.code) ? weaknessesAt(block, age) : [];
+      return lacks.length > 0 ? [{ code: block.code, lacks }] : [];
+    });
+  }, [scene, model, age]);
+  const nameOf = useNames();
+  return (
+    <p
+      className="t-body border-rule flex min-h-[25px] items-center gap-2.5 border-b py-0.5"
+      title={weak.map(({ code, lacks }) => `${nameOf(code)}: ${lacks.join(', ')}`).join('\n')}
+    >
+      <svg viewBox="0 0 26 14" className={SWATCH} aria-hidden="true">
+        <rect
+          x=".5"
+          y=".5"
+          width="25"
+          height="13"
+          fill="none"
+          className="stroke-ink"
+          strokeWidth=".8"
+          strokeDasharray={WEAK_DASH.join(' ')}
+        />
+      </svg>
+      <span className="grow leading-[17px]">weak at this age</span>
+      <span className="tabular text-ink-2">{weak.length}</span>
+    </p>
+  );
+}
+
 export function Legend() {
   const counts = useCounts();
   const step = useWorkbench((state) => state.path.step_ma);
@@ -114,6 +152,7 @@ export function Legend() {
           mark={<EvidenceSwatch evidence={evidence} />}
         />
       ))}
+      <Weak />
       <div className="h-3.5" />
       <Heading title="Drawn" unit="on or off" />
       {DRAWN.map(({ id, label }) => (
