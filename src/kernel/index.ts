@@ -15,5 +15,8 @@ export * from './rotations';
 /** Covariances of rotations, 95 % ellipses of places, shares of each row. */
 export * from './uncertainty';
 
+/** What two blocks do to each other: convergence, separation, overlap, contact, flow lines; a block's card. */
+export * from './kinematics';
+
 /** The chronostratigraphic chart. */
 export * from './timescale';

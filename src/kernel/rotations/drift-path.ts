@@ -1,22 +1,18 @@
-import { KernelError, requireAge, requireFinite } from '../errors';
-import { toLatLon, toVector } from '../sphere/vector';
+import { toLatLon } from '../sphere/vector';
 import { type Ellipse, pointEllipse } from '../uncertainty/ellipse';
 import { poseUncertainty } from '../uncertainty/pose-uncertainty';
 import { poseAt } from './circuit';
 import { rotate } from './quaternion';
 import { circuitRowAges } from './row-ages';
+import { requirePlace, requireSpan, type Span, spanAges } from './span';
 import type { Model, Status, Vector3 } from './types';
 import { poseVelocity, velocityAt } from './velocity';
 
-export interface DriftRequest {
+export interface DriftRequest extends Span {
   readonly block: string;
   /** Present position of the point, degrees. */
   readonly lat: number;
   readonly lon: number;
-  readonly older_ma: number;
-  readonly younger_ma: number;
-  /** Ages are asked at every step from younger_ma; above 0. */
-  readonly step_ma: number;
   readonly relative_to: string;
 }
 
@@ -35,11 +31,6 @@ export interface DriftPoint {
   readonly ellipse_95: Ellipse | null;
 }
 
-/** A path may not have more ages than this. */
-export const MOST_AGES = 100_000;
-/** Ages nearer than this, Myr, are one. */
-const SAME_AGE_MYR = 1e-9;
-
 /**
  * Positions of a point of a block as seen from relative_to, youngest first: at both ends of the span, every
  * step from the younger one, and every row's age of the circuit within.
@@ -47,11 +38,11 @@ const SAME_AGE_MYR = 1e-9;
  * step, latitude), `CircuitCycle`.
  */
 export function driftPath(model: Model, request: DriftRequest): DriftPoint[] {
-  const { block, older_ma, younger_ma, step_ma, relative_to } = request;
-  check(request);
+  const { block, older_ma, younger_ma, relative_to } = request;
+  requireSpan(request);
+  const present = requirePlace(request.lat, request.lon);
   const rows = circuitRowAges(model, block, older_ma, younger_ma, relative_to);
-  const present = toVector(request.lat, request.lon);
-  return mergeAges(steps(older_ma, younger_ma, step_ma), rows).map(({ age_ma, at_row }) =>
+  return spanAges(request, rows).map(({ age_ma, at_row }) =>
     driftPoint(model, block, present, age_ma, at_row, relative_to),
   );
 }
@@ -81,43 +72,4 @@ function driftPoint(
     azimuth_deg: velocity?.azimuth_deg ?? null,
     ellipse_95: pointEllipse(pose, poseUncertainty(model, pose), present),
   };
-}
-
-function check({ lat, lon, older_ma, younger_ma, step_ma }: DriftRequest): void {
-  requireAge('older_ma', older_ma);
-  requireAge('younger_ma', younger_ma);
-  requireFinite('step_ma', step_ma);
-  requireFinite('lon', lon);
-  const outOfRange = (quantity: string, value: number, problem: string): never => {
-    throw new KernelError('OutOfRange', { quantity, value, problem });
-  };
-  if (!(Math.abs(requireFinite('lat', lat)) <= 90))
-    outOfRange('lat', lat, 'a latitude lies between −90 and 90');
-  if (older_ma < younger_ma) outOfRange('older_ma', older_ma, `younger than younger_ma ${younger_ma}`);
-  if (!(step_ma > 0)) outOfRange('step_ma', step_ma, 'a step is above 0');
-  if ((older_ma - younger_ma) / step_ma > MOST_AGES)
-    outOfRange('step_ma', step_ma, `more than ${MOST_AGES} ages`);
-}
-
-function steps(older_ma: number, younger_ma: number, step_ma: number): number[] {
-  const count = Math.ceil((older_ma - younger_ma) / step_ma - SAME_AGE_MYR);
-  const ages = Array.from(
-    { length: Math.max(0, count) },
-    (_, k) => Math.round((younger_ma + k * step_ma) * 1e9) / 1e9,
-  );
-  return [...ages, older_ma];
-}
-
-function mergeAges(asked: readonly number[], rows: readonly number[]): { age_ma: number; at_row: boolean }[] {
-  const all = [
-    ...rows.map((age_ma) => ({ age_ma, at_row: true })),
-    ...asked.map((age_ma) => ({ age_ma, at_row: false })),
-  ];
-  const merged: { age_ma: number; at_row: boolean }[] = [];
-  for (const next of all.sort((a, b) => a.age_ma - b.age_ma || Number(b.at_row) - Number(a.at_row))) {
-    const last = merged.at(-1);
-    if (!last || next.age_ma - last.age_ma > SAME_AGE_MYR) merged.push(next);
-    else if (next.at_row && !last.at_row) merged[merged.length - 1] = next;
-  }
-  return merged;
 }

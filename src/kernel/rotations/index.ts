@@ -13,4 +13,5 @@ export * from './stage';
 export * from './velocity';
 export * from './hand-over';
 export * from './row-ages';
+export * from './span';
 export * from './drift-path';

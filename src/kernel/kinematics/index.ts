@@ -1,0 +1,3 @@
+export * from './convergence';
+export * from './outline';
+export * from './separation';
