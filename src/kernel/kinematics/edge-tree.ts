@@ -50,7 +50,8 @@ export function edgeTree(outline: Outline): EdgeTree {
 }
 
 const toGrid = (x: number): number => Math.round(x / GRID) * GRID;
-const onGrid = (v: Vector3): Vector3 => [toGrid(v[0]), toGrid(v[1]), toGrid(v[2])];
+/** A unit vector with its components on the grid. */
+export const onGrid = (v: Vector3): Vector3 => [toGrid(v[0]), toGrid(v[1]), toGrid(v[2])];
 
 /** A tree of the same edges turned; the inverse rotation turns it back, to rounding. */
 export function turnTree({ count, ends, balls, starts }: EdgeTree, quaternion: Quaternion): EdgeTree {

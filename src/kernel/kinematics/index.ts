@@ -1,3 +1,4 @@
 export * from './convergence';
 export * from './outline';
 export * from './separation';
+export * from './overlap';

@@ -38,7 +38,8 @@ export function coast(lat: number, lon: number, corners: number, km: number, see
   ]);
 }
 
-const radii = (max: number): fc.Arbitrary<number[]> =>
+/** Distances in km for the azimuths of a {@link star}. */
+export const radii = (max: number): fc.Arbitrary<number[]> =>
   fc.array(fc.double({ min: max / 20, max, noNaN: true }), { minLength: 3, maxLength: 12 });
 
 /** Up to 2,500 km across, one in three with a hole in its middle. */
