@@ -1,5 +1,5 @@
 /** The drift path as a table: its point, span, step and frame are set here; rows' ages stand apart from steps. */
-import { useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import type { DriftPoint } from '../../../../kernel/rotations';
 import { coordinates, ellipse, number, shortAge } from '../../format';
 import { driftPath } from '../../scene/tolerant';
@@ -7,13 +7,12 @@ import { findSceneBlock } from '../../scene/scene';
 import { holdStill, select, setAge, setPathSpan } from '../../store/actions';
 import { useBench, useWorkbench } from '../bench';
 import { useNames } from '../use-names';
+import { NumberField } from './NumberField';
 
 interface Props {
   readonly slug: string;
   readonly version: 'draft' | number;
 }
-
-const FIELD = 'border-edge bg-sheet tabular h-7 w-20 rounded-[3px] border px-1.5 text-right';
 
 export function DriftPathTable({ slug, version }: Props) {
   const { scene, model, point } = useBench();
@@ -151,43 +150,6 @@ function PathForm({ older, younger }: { readonly older: number; readonly younger
         </select>
       </label>
     </form>
-  );
-}
-
-interface NumberFieldProps {
-  readonly label: string;
-  readonly value: number;
-  readonly least: number;
-  readonly most: number;
-  readonly onKeep: (value: number) => void;
-}
-
-function NumberField({ label, value, least, most, onKeep }: NumberFieldProps) {
-  const shown = String(Math.round(value * 1e4) / 1e4);
-  const [typed, setTyped] = useState<string | null>(null);
-  const read = typed === null ? value : Number(typed.replace('\u2212', '-').replace(',', '.'));
-  const wrong = !(Number.isFinite(read) && read >= least && read <= most) || typed?.trim() === '';
-  const keep = (): void => {
-    if (typed !== null && !wrong && read !== value) onKeep(read);
-    if (!wrong) setTyped(null);
-  };
-  return (
-    <label>
-      <span className="t-label text-ink-2 block">{label}</span>
-      <input
-        className={`${FIELD} ${wrong ? 'border-madder text-madder' : ''}`}
-        inputMode="decimal"
-        value={typed ?? shown}
-        aria-invalid={wrong}
-        title={wrong ? `from ${least} to ${most}` : undefined}
-        onChange={(event) => setTyped(event.target.value)}
-        onBlur={keep}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') keep();
-          if (event.key === 'Escape') setTyped(null);
-        }}
-      />
-    </label>
   );
 }
 

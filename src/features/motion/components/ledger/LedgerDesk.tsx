@@ -5,6 +5,7 @@ import { useBench, useWorkbench } from '../bench';
 import { BlocksLedger } from './BlocksLedger';
 import { DirectionsLedger } from './DirectionsLedger';
 import { DriftPathTable } from './DriftPathTable';
+import { MarginTable } from './MarginTable';
 import { RotationsLedger } from './RotationsLedger';
 import { useDraft } from './use-draft';
 
@@ -15,7 +16,7 @@ interface Props {
   readonly readOnly: string | null;
 }
 
-const TABS = ['rotations', 'blocks', 'directions', 'path'] as const;
+const TABS = ['rotations', 'blocks', 'directions', 'path', 'margin'] as const;
 type Tab = (typeof TABS)[number];
 
 export function LedgerDesk({ slug, version, readOnly }: Props) {
@@ -33,6 +34,7 @@ export function LedgerDesk({ slug, version, readOnly }: Props) {
     blocks: ['Blocks', String(draft.blocks.length)],
     directions: ['Directions', block ? `${sites} of ${block.short}` : String(scene.directions.length)],
     path: ['Drift path', ''],
+    margin: ['Across a margin', ''],
   };
 
   function onTabKey(event: KeyboardEvent): void {
@@ -81,6 +83,7 @@ export function LedgerDesk({ slug, version, readOnly }: Props) {
         {tab === 'blocks' && <BlocksLedger draft={draft} readOnly={readOnly} />}
         {tab === 'directions' && <DirectionsLedger />}
         {tab === 'path' && <DriftPathTable slug={slug} version={version} />}
+        {tab === 'margin' && <MarginTable slug={slug} version={version} />}
       </div>
     </section>
   );

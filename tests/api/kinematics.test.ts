@@ -1,0 +1,60 @@
+/** Motion between two blocks over HTTP. The figures follow from the definition of a rotation about one pole. */
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { createTestApp, type Answer, type TestApp } from '../support/app';
+import { addRotations, createTeam, type Team } from '../support/team';
+
+let app: TestApp;
+let team: Team;
+beforeAll(async () => {
+  app = await createTestApp();
+});
+beforeEach(async () => {
+  await app.reset();
+  team = await createTeam(app);
+});
+afterAll(() => app.close());
+
+const get = (path: string): Promise<Answer> => app.call('GET', team.at(path), { as: team.reviewer });
+const KM_PER_DEG = (6371.0088 * Math.PI) / 180;
+
+describe('convergence', () => {
+  // B turns by 1° per Myr about 90°N as seen from A: forward in time due east at the equator where angles fall with age.
+  beforeEach(() => addRotations(app, team, [['b', 'a', 20, 90, 0, -20], ['a', 'axis', 20, 0, 0, 0]])); // prettier-ignore
+
+  it('is closing, slip and obliquity across a margin, by the signs of the definition', async () => {
+    const at = async (azimuth: number) =>
+      (
+        await get(
+          `convergence?block=b&relative_to=a&lat=0&lon=10&margin_azimuth=${azimuth}&older_ma=20&step_ma=10`,
+        )
+      ).json;
+    const north = await at(0);
+    expect(north).toMatchObject({ block: 'b', relative_to: 'a', coordinates_of: 'a', version: 'draft' });
+    expect(north.points.map(({ age_ma, at_row }: any) => [age_ma, at_row])).toEqual([[0, true], [10, false], [20, true]]); // prettier-ignore
+    for (const point of north.points) {
+      expect(point.normal_mm_yr).toBeCloseTo(KM_PER_DEG, 6);
+      expect(point.tangential_mm_yr).toBeCloseTo(0, 6);
+      expect(point.obliquity_deg).toBeCloseTo(0, 6);
+      expect(point.azimuth_deg).toBeCloseTo(90, 6);
+    }
+    const oblique = (await at(45)).points[1];
+    expect(oblique.normal_mm_yr).toBeCloseTo(KM_PER_DEG / Math.SQRT2, 6);
+    expect(oblique.tangential_mm_yr).toBeCloseTo(KM_PER_DEG / Math.SQRT2, 6);
+    expect(oblique.obliquity_deg).toBeCloseTo(45, 6);
+    expect((await at(180)).points[1].normal_mm_yr).toBeCloseTo(-KM_PER_DEG, 6);
+  });
+
+  it('comes as a table, and says by status where there is none', async () => {
+    const asked = 'convergence?block=b&relative_to=a&lat=0&lon=10&margin_azimuth=0&older_ma=30&step_ma=30';
+    const { text, headers } = await get(`${asked}&format=csv`);
+    expect(headers.get('content-type')).toContain('text/csv');
+    const [head, ...rows] = text
+      .trim()
+      .split('\r\n')
+      .map((line) => line.split(','));
+    expect(head!.slice(0, 8)).toEqual(['block', 'relative_to', 'coordinates_of', 'version', 'lat', 'lon', 'margin_azimuth', 'age_ma']); // prettier-ignore
+    expect(rows.map((row) => [row[7], row.at(-1)])).toEqual([['0', 'placed'], ['20', 'placed'], ['30', 'outside rotations']]); // prettier-ignore
+    expect((await get(asked.replace('lat=0', 'lat=95'))).status).toBe(400);
+    expect((await get(asked.replace('block=b', 'block=nobody'))).status).toBe(404);
+  });
+});
