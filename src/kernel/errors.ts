@@ -37,6 +37,7 @@ export class KernelError extends Error {
   readonly hint: string;
   readonly quantity: string;
   readonly value: unknown;
+  readonly problem: string;
   readonly loop: readonly string[] | null;
 
   constructor(name: KernelErrorName, { quantity, value, problem, loop }: KernelErrorFacts) {
@@ -46,9 +47,22 @@ export class KernelError extends Error {
     this.hint = KERNEL_ERRORS[name].hint;
     this.quantity = quantity;
     this.value = value;
+    this.problem = problem;
     this.loop = loop ?? null;
   }
 }
+
+/** An error of the kernel as plain data, to travel between threads. Inverse: {@link fromRefusal}. */
+export interface KernelRefusal extends KernelErrorFacts {
+  readonly name: KernelErrorName;
+}
+
+export const refusalOf = ({ name, quantity, value, problem, loop }: KernelError): KernelRefusal => ({
+  ...{ name, quantity, value, problem },
+  ...(loop ? { loop } : {}),
+});
+
+export const fromRefusal = ({ name, ...facts }: KernelRefusal): KernelError => new KernelError(name, facts);
 
 /** @throws {KernelError} `NonFinite` for NaN and ±∞. */
 export function requireFinite(quantity: string, value: number): number {

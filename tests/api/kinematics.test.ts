@@ -1,7 +1,8 @@
 /** Motion between two blocks over HTTP. The figures follow from the definition of a rotation about one pole. */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { createTestApp, type Answer, type TestApp } from '../support/app';
-import { addRotations, createTeam, type Team } from '../support/team';
+import { closeWorkers } from '~/server/workers';
+import { add, addRotations, createTeam, type Team } from '../support/team';
 
 let app: TestApp;
 let team: Team;
@@ -12,7 +13,10 @@ beforeEach(async () => {
   await app.reset();
   team = await createTeam(app);
 });
-afterAll(() => app.close());
+afterAll(async () => {
+  await closeWorkers();
+  await app.close();
+});
 
 const get = (path: string): Promise<Answer> => app.call('GET', team.at(path), { as: team.reviewer });
 const KM_PER_DEG = (6371.0088 * Math.PI) / 180;
@@ -56,5 +60,62 @@ describe('convergence', () => {
     expect(rows.map((row) => [row[7], row.at(-1)])).toEqual([['0', 'placed'], ['20', 'placed'], ['30', 'outside rotations']]); // prettier-ignore
     expect((await get(asked.replace('lat=0', 'lat=95'))).status).toBe(400);
     expect((await get(asked.replace('block=b', 'block=nobody'))).status).toBe(404);
+  });
+});
+
+describe('separation', () => {
+  // The southern tip of b lies 10° of meridian north of the equator, a's edge, at 60 Ma and comes south by 0.5° per Myr:
+  // the two meet at 40 Ma.
+  beforeEach(async () => {
+    await addRotations(app, team, [['b', 'a', 60, 0, 90, -30], ['a', 'axis', 60, 90, 0, 0]]); // prettier-ignore
+    const south = [
+      [-5, -30],
+      [5, -30],
+      [5, 0],
+      [-5, 0],
+      [-5, -30],
+    ];
+    const north = [
+      [0, -20],
+      [5, 10],
+      [-5, 10],
+      [0, -20],
+    ];
+    await add(app, team, 'outlines', { block: 'a', geometry: { type: 'Polygon', coordinates: [south] } });
+    await add(app, team, 'outlines', { block: 'b', geometry: { type: 'Polygon', coordinates: [north] } });
+  });
+
+  it('falls to nothing at first contact, and overlaps from there', async () => {
+    const { status, json } = await get('separation?block_a=a&block_b=b&older_ma=60&step_ma=10');
+    expect(status).toBe(200);
+    const at = (age: number) => json.points.find((point: any) => point.age_ma === age);
+    expect(at(60).distance_km).toBeCloseTo(10 * KM_PER_DEG, 3);
+    expect(at(60)).toMatchObject({ overlap_km2: 0, overlap_percent: 0, status: 'placed' });
+    expect(at(50).distance_km).toBeCloseTo(5 * KM_PER_DEG, 3);
+    expect(at(20).distance_km).toBe(0);
+    expect(at(20).overlap_percent).toBeGreaterThan(5);
+    expect(at(20).nearest_a.lat).toBeCloseTo(at(20).nearest_b.lat, 9);
+    expect(at(60).nearest_a).toMatchObject({ lat: expect.closeTo(0, 6), lon: expect.closeTo(0, 6) });
+    expect(json.first_contact).toMatchObject({ status: 'contact', by: 'motion' });
+    expect(json.first_contact_ma).toBeCloseTo(40, 2);
+    const near = (await get('separation?block_a=a&block_b=b&older_ma=60&step_ma=10&tolerance_km=100')).json;
+    expect(near.first_contact_ma).toBeCloseTo(40 + 100 / KM_PER_DEG / 0.5, 2);
+  });
+
+  it('comes as a table, and refuses what has no answer', async () => {
+    const { text } = await get('separation?block_a=a&block_b=b&older_ma=80&step_ma=40&format=csv');
+    const [head, ...rows] = text
+      .trim()
+      .split('\r\n')
+      .map((line) => line.split(','));
+    expect(rows.map((row) => [row[head!.indexOf('age_ma')], row.at(-1)])).toEqual([
+      ['0', 'placed'], ['40', 'placed'], ['60', 'placed'], ['80', 'outside rotations'],
+    ]); // prettier-ignore
+    expect((await get('separation?block_a=a&block_b=nobody&older_ma=60')).status).toBe(404);
+    expect((await get('separation?block_a=a&block_b=b&older_ma=60&step_ma=0.001')).status).toBe(400);
+    expect((await get('separation?block_a=a&block_b=b&older_ma=60&tolerance_km=-1')).status).toBe(400);
+    await addRotations(app, team, [['a', 'b', 30, 0, 0, 5]]);
+    const looped = await get('separation?block_a=a&block_b=b&older_ma=60');
+    expect([looped.status, looped.json.loop]).toEqual([409, ['a', 'b']]);
   });
 });

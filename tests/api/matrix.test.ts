@@ -102,6 +102,7 @@ const LINES: readonly (readonly [method: string, pattern: string, ...expected: (
   ['POST', `${P}/reconstruct`, ...team],
   ['GET', `${P}/drift-path`, ...team],
   ['GET', `${P}/convergence`, ...team],
+  ['GET', `${P}/separation`, ...team],
   ['GET', `${P}/versions`, ...team],
   ['POST', `${P}/versions`, ...leads],
   ['GET', `${P}/versions/[number]`, ...team],

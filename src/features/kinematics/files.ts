@@ -1,6 +1,6 @@
 /** The same answers as tables (RFC 4180). */
 import { csvTable } from '~/features/interchange/exports';
-import type { ConvergenceAnswer } from './contract';
+import type { ConvergenceAnswer, SeparationAnswer } from './contract';
 
 const CONVERGENCE = [
   'age_ma', 'normal_mm_yr', 'tangential_mm_yr', 'speed_mm_yr', 'azimuth_deg', 'obliquity_deg',
@@ -18,5 +18,27 @@ export function convergenceCsv({ points, ...asked }: ConvergenceAnswer): string 
       String(point.at_row),
       point.status,
     ]),
+  );
+}
+
+/** One row an age; the first contact is in the JSON answer. */
+export function separationCsv({
+  points,
+  block_a,
+  block_b,
+  coordinates_of,
+  version,
+}: SeparationAnswer): string {
+  const headings = [
+    'block_a', 'block_b', 'coordinates_of', 'version', 'age_ma', 'distance_km', 'overlap_km2', 'overlap_percent',
+    'nearest_a_lat', 'nearest_a_lon', 'nearest_b_lat', 'nearest_b_lon', 'at_row', 'status',
+  ]; // prettier-ignore
+  return csvTable(
+    headings,
+    points.map((point) => [
+      block_a, block_b, coordinates_of, version, point.age_ma, point.distance_km, point.overlap_km2,
+      point.overlap_percent, point.nearest_a?.lat, point.nearest_a?.lon, point.nearest_b?.lat, point.nearest_b?.lon,
+      String(point.at_row), point.status,
+    ]), // prettier-ignore
   );
 }

@@ -23,3 +23,15 @@ export const convergenceQuery = z.object({
   ...span,
   format,
 });
+
+export const separationQuery = z.object({
+  version: queryVersion,
+  block_a: slug,
+  block_b: slug,
+  /** Whose coordinates the nearest places are in; left out, those of block_a. */
+  coordinates_of: slug.optional(),
+  ...span,
+  /** Two blocks no further apart are in contact. */
+  tolerance_km: queryNumber.default(0),
+  format,
+});

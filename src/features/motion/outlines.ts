@@ -20,6 +20,9 @@ export interface LoadedOutline {
   readonly sha256: string;
   readonly inside: Inside;
   readonly parts: readonly Part[];
+  /** It holds for younger_ma < age ≤ older_ma; null where it has no such end. */
+  readonly older_ma: number | null;
+  readonly younger_ma: number | null;
   readonly holdsAt: (age_ma: number) => boolean;
 }
 
@@ -46,6 +49,8 @@ async function read(outlines: Ledger['outlines']): Promise<LoadedOutline[]> {
       sha256,
       inside,
       parts,
+      older_ma: outline_older_ma,
+      younger_ma: outline_younger_ma,
       holdsAt: (age_ma) => holdsAt(outline_older_ma, outline_younger_ma, age_ma),
     };
   });
