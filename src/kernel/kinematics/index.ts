@@ -6,3 +6,4 @@ export * from './pair';
 export * from './separation-path';
 export { ROOT_TOLERANCE_MYR, SHORTEST_EXCURSION_MYR } from './roots';
 export * from './first-contact';
+export * from './flow-line';
