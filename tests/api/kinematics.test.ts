@@ -119,3 +119,27 @@ describe('separation', () => {
     expect([looped.status, [...looped.json.loop].sort()]).toEqual([409, ['a', 'b']]);
   });
 });
+
+describe('a flow line', () => {
+  // The pair opens by 20° in 20 Myr about 90°N: 111.2 mm/yr at the equator, half of it on each flank.
+  beforeEach(() => addRotations(app, team, [['b', 'a', 20, 90, 0, -20], ['a', 'axis', 20, 0, 0, 0]])); // prettier-ignore
+
+  it('leaves the ridge on both flanks, by halves unless told otherwise', async () => {
+    const asked = 'flow-line?block_a=a&block_b=b&lat=0&lon=10&older_ma=20&step_ma=10';
+    const { json } = await get(asked);
+    const oldest = json.points.at(-1);
+    expect(json.fraction).toBe(0.5);
+    expect(oldest.full_rate_mm_yr).toBeCloseTo(KM_PER_DEG, 6);
+    expect(oldest.a.rate_mm_yr).toBeCloseTo(KM_PER_DEG / 2, 6);
+    // a lies west of the ridge, b east: floor of 20 Ma is 10° from the ridge on each.
+    expect(oldest.a).toMatchObject({ lat: expect.closeTo(0, 9), lon: expect.closeTo(0, 9) });
+    expect(oldest.b).toMatchObject({ lat: expect.closeTo(0, 9), lon: expect.closeTo(20, 9) });
+    const uneven = (await get(`${asked}&fraction=0.25`)).json.points.at(-1);
+    expect([uneven.a.lon, uneven.b.lon]).toEqual([expect.closeTo(5, 9), expect.closeTo(25, 9)]);
+    const { text } = await get(`${asked}&format=csv`);
+    expect(text.split('\r\n')[0]).toMatch(
+      /^block_a,block_b,coordinates_of,lat,lon,fraction,version,age_ma,a_lat/,
+    );
+    expect((await get(`${asked}&fraction=1.5`)).status).toBe(400);
+  });
+});

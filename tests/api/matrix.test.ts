@@ -103,6 +103,7 @@ const LINES: readonly (readonly [method: string, pattern: string, ...expected: (
   ['GET', `${P}/drift-path`, ...team],
   ['GET', `${P}/convergence`, ...team],
   ['GET', `${P}/separation`, ...team],
+  ['GET', `${P}/flow-line`, ...team],
   ['GET', `${P}/versions`, ...team],
   ['POST', `${P}/versions`, ...leads],
   ['GET', `${P}/versions/[number]`, ...team],

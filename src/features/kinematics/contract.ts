@@ -72,3 +72,28 @@ export const separationAnswer = z.object({
   first_contact: firstContact,
 });
 export type SeparationAnswer = z.infer<typeof separationAnswer>;
+
+const flank = z.object({ lat: z.number(), lon: z.number(), rate_mm_yr: z.number().nullable() });
+
+export const flowLineAnswer = z.object({
+  block_a: z.string(),
+  block_b: z.string(),
+  coordinates_of: z.string(),
+  lat: z.number(),
+  lon: z.number(),
+  /** Share of the opening that block_a gains. */
+  fraction: z.number(),
+  version,
+  points: z.array(
+    z.object({
+      age_ma: z.number(),
+      /** Sea floor of that age today, on each block in its own present coordinates. */
+      a: flank.nullable(),
+      b: flank.nullable(),
+      full_rate_mm_yr: z.number().nullable(),
+      at_row: z.boolean(),
+      status,
+    }),
+  ),
+});
+export type FlowLineAnswer = z.infer<typeof flowLineAnswer>;

@@ -1,6 +1,6 @@
 /** The same answers as tables (RFC 4180). */
 import { csvTable } from '~/features/interchange/exports';
-import type { ConvergenceAnswer, SeparationAnswer } from './contract';
+import type { ConvergenceAnswer, FlowLineAnswer, SeparationAnswer } from './contract';
 
 const CONVERGENCE = [
   'age_ma', 'normal_mm_yr', 'tangential_mm_yr', 'speed_mm_yr', 'azimuth_deg', 'obliquity_deg',
@@ -40,5 +40,27 @@ export function separationCsv({
       point.overlap_percent, point.nearest_a?.lat, point.nearest_a?.lon, point.nearest_b?.lat, point.nearest_b?.lon,
       String(point.at_row), point.status,
     ]), // prettier-ignore
+  );
+}
+
+export function flowLineCsv({ points, ...asked }: FlowLineAnswer): string {
+  const headings = [
+    'age_ma',
+    'a_lat',
+    'a_lon',
+    'a_rate_mm_yr',
+    'b_lat',
+    'b_lon',
+    'b_rate_mm_yr',
+    'full_rate_mm_yr',
+  ];
+  return csvTable(
+    [...Object.keys(asked), ...headings, 'at_row', 'status'],
+    points.map(({ age_ma, a, b, full_rate_mm_yr, at_row, status }) => [
+      ...Object.values(asked),
+      ...[age_ma, a?.lat, a?.lon, a?.rate_mm_yr, b?.lat, b?.lon, b?.rate_mm_yr, full_rate_mm_yr],
+      String(at_row),
+      status,
+    ]),
   );
 }

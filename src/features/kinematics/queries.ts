@@ -35,3 +35,16 @@ export const separationQuery = z.object({
   tolerance_km: queryNumber.default(0),
   format,
 });
+
+export const flowLineQuery = z.object({
+  version: queryVersion,
+  block_a: slug,
+  block_b: slug,
+  /** The ridge point at younger_ma. */
+  lat: queryLatitude,
+  lon: queryLongitude,
+  coordinates_of: slug.optional(),
+  ...span,
+  fraction: queryNumber.default(0.5),
+  format,
+});

@@ -1,12 +1,12 @@
 import type { z } from 'zod';
 import type { Motion } from '~/features/motion/queries';
-import { convergencePath } from '~/kernel/kinematics';
+import { convergencePath, flowLine } from '~/kernel/kinematics';
 import { fromRefusal, KernelError } from '~/kernel/errors';
 import { requireBlock } from '~/kernel/rotations/model-index';
 import { runInWorker } from '~/server/workers';
-import type { ConvergenceAnswer, SeparationAnswer } from './contract';
+import type { ConvergenceAnswer, FlowLineAnswer, SeparationAnswer } from './contract';
 import { datedOutlines } from './outlines';
-import type { convergenceQuery, separationQuery } from './queries';
+import type { convergenceQuery, flowLineQuery, separationQuery } from './queries';
 import type { SeparationJob, SeparationResult } from './separation.task';
 import separationTask from './separation.task.ts?nodeworker';
 
@@ -37,6 +37,27 @@ export function convergenceOf(
     step_ma,
   });
   return { block, relative_to, coordinates_of, lat, lon, margin_azimuth, version: state.version, points };
+}
+
+/** @throws KernelError as `flowLine` */
+export function flowLineOf(
+  { state, model }: Pick<Motion, 'state' | 'model'>,
+  query: z.output<typeof flowLineQuery>,
+): FlowLineAnswer {
+  const {
+    block_a,
+    block_b,
+    coordinates_of = block_a,
+    lat,
+    lon,
+    fraction,
+    older_ma,
+    younger_ma,
+    step_ma,
+  } = query;
+  const asked = { block_a, block_b, coordinates_of, lat, lon, fraction };
+  const points = flowLine(model, { ...asked, older_ma, younger_ma, step_ma });
+  return { ...asked, version: state.version, points };
 }
 
 /** The most ages of one answer: each is a search over both outlines. */
