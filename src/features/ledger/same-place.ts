@@ -1,5 +1,9 @@
+/** 0.1 mm at most: 530.1 − 360 is not quite 170.1 in binary. */
+const ROUNDING_DEG = 1e-9;
+
 /** One place on the globe, of [longitude, latitude]: longitudes a whole turn apart, or any longitude at a pole. */
 export function samePlace(a: readonly number[], b: readonly number[]): boolean {
   if (a[1] !== b[1]) return false;
-  return Math.abs(a[1]!) === 90 || (a[0]! - b[0]!) % 360 === 0;
+  const turns = (a[0]! - b[0]!) / 360;
+  return Math.abs(a[1]!) === 90 || Math.abs(turns - Math.round(turns)) * 360 < ROUNDING_DEG;
 }

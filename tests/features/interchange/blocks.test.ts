@@ -246,9 +246,15 @@ describe('what else an outline can hold', () => {
   });
 
   it('a ring round a pole may run on through all longitudes', () => {
-    const ring = [-180, -90, 0, 90, 180].map((lon) => [lon, -60]);
-    const plan = planBlocks(readBlocks(one(polygon(ring))), []);
-    expect([plan.accepted, plan.rejected]).toEqual([1, []]);
+    // 530.1 − 170.1 is 360.00000000000006 in binary.
+    for (const longitudes of [
+      [-180, -90, 0, 90, 180],
+      [170.1, 250, 350, 440, 530.1],
+    ]) {
+      const ring = longitudes.map((lon) => [lon, -60]);
+      const plan = planBlocks(readBlocks(one(polygon(ring))), []);
+      expect([plan.accepted, plan.rejected]).toEqual([1, []]);
+    }
   });
 
   it('a hole lies within, and does not cross', () => {

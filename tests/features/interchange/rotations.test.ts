@@ -5,6 +5,7 @@
 import { describe, expect, it } from 'vitest';
 import { decode } from '~/features/interchange/rules/decode';
 import { readRotations } from '~/features/interchange/rules/rotations';
+import { rejectedFile } from '~/features/interchange/rules/rejected-file';
 import { resolveRotations } from '~/features/interchange/rules/resolve-rotations';
 
 const HEAD = 'block,relative_to,age_ma,pole_lat,pole_lon,angle_deg';
@@ -388,6 +389,16 @@ describe('where a row stands and what its cells may be', () => {
     const { rejected, candidates } = readRotations(text);
     expect(candidates.map(({ line }) => line)).toEqual([4]);
     expect(rejected).toMatchObject([{ line: 6, column: 'age_ma', read: 'x' }]);
+  });
+
+  it('is the line by which a row with cells of several lines is kept to mend', () => {
+    const text =
+      file('sable,tarn,10,1,2,3').replace(HEAD, `${HEAD},note`) + ',\nsable,tarn,x,1,2,3,"two\nlines"\n';
+    const { rejected } = readRotations(text);
+    expect(rejected).toMatchObject([{ line: 3, read: 'x' }]);
+    const kept = rejectedFile('rotations', text, rejected);
+    expect(kept).toContain('sable,tarn,x,1,2,3,"two\nlines",age_ma: not a number,');
+    expect(kept).not.toContain('sable,tarn,10');
   });
 
   it.each([

@@ -2,12 +2,11 @@
  * The rows that were not taken, as a file of the same kind: mended, it is imported as it stands. What is wrong with each
  * stands beside it under `problem` and `hint`, which are not read.
  */
-import { parse } from 'csv-parse/sync';
 import type { RejectedRow } from '../contract';
 import { csvTable } from '../exports';
 import type { ImportKind } from '../files';
 import { featureLines } from './geojson-text';
-import { sniffDelimiter } from './table';
+import { readRecords } from './table';
 
 export function rejectedFile(kind: ImportKind, text: string, rows: readonly RejectedRow[]): string {
   return kind === 'blocks' || kind === 'features' ? rejectedFeatures(text, rows) : rejectedTable(text, rows);
@@ -24,23 +23,19 @@ const words = (faults: readonly RejectedRow[], which: 'problem' | 'hint'): strin
     .join('; ');
 
 function rejectedTable(text: string, rows: readonly RejectedRow[]): string {
-  const parsed = parse(text, {
-    ...{ delimiter: sniffDelimiter(text), info: true, bom: true },
-    ...{ relax_column_count: true, relax_quotes: true, skip_empty_lines: true },
-  }) as unknown as { record: string[]; info: { lines: number } }[];
-  const [heading, ...rest] = parsed;
+  const [heading, ...rest] = readRecords(text);
   const byLine = new Map<number | null, RejectedRow[]>();
   for (const row of rows) byLine.set(row.line, [...(byLine.get(row.line) ?? []), row]);
-  const wide = Math.max(heading?.record.length ?? 0, ...rest.map(({ record }) => record.length));
+  const wide = Math.max(heading?.cells.length ?? 0, ...rest.map(({ cells }) => cells.length));
   const filled = (record: readonly string[]): string[] => [
     ...record,
     ...Array<string>(wide - record.length).fill(''),
   ];
-  const kept = rest.flatMap(({ record, info }) => {
-    const faults = byLine.get(info.lines);
-    return faults ? [[...filled(record), words(faults, 'problem'), words(faults, 'hint')]] : [];
+  const kept = rest.flatMap(({ cells, line }) => {
+    const faults = byLine.get(line);
+    return faults ? [[...filled(cells), words(faults, 'problem'), words(faults, 'hint')]] : [];
   });
-  return csvTable([...filled(heading?.record ?? []), 'problem', 'hint'], kept);
+  return csvTable([...filled(heading?.cells ?? []), 'problem', 'hint'], kept);
 }
 
 function rejectedFeatures(text: string, rows: readonly RejectedRow[]): string {

@@ -38,28 +38,40 @@ interface Parsed {
 const linesWithin = (raw: string): number =>
   (raw.replace(/^[\r\n]+|[\r\n]+$/g, '').match(/\r\n|\r|\n/g) ?? []).length;
 
+export interface TableRecord {
+  readonly cells: readonly string[];
+  /** Of its beginning, whatever lines its cells hold. */
+  readonly line: number;
+}
+
+/** Every record of a table, the heading line's too. @throws where a quoted cell is not closed */
+export function readRecords(text: string): TableRecord[] {
+  const parsed = parse(text, {
+    delimiter: sniffDelimiter(text),
+    info: true,
+    bom: true,
+    relax_column_count: true,
+    relax_quotes: true,
+    skip_empty_lines: true,
+    max_record_size: 1_000_000,
+    raw: true,
+  }) as unknown as Parsed[];
+  return parsed.map(({ record, info, raw }) => ({ cells: record, line: info.lines - linesWithin(raw) }));
+}
+
 export function readTable(text: string): Table {
   const delimiter = sniffDelimiter(text);
-  let parsed: Parsed[];
+  let records: TableRecord[];
   try {
-    parsed = parse(text, {
-      delimiter,
-      info: true,
-      bom: true,
-      relax_column_count: true,
-      relax_quotes: true,
-      skip_empty_lines: true,
-      max_record_size: 1_000_000,
-      raw: true,
-    }) as unknown as Parsed[];
+    records = readRecords(text);
   } catch (error) {
     const line = (error as { lines?: number }).lines ?? 1;
     const problem = 'a quoted cell is not closed';
     const hint = 'Close the double quote, or write two of them for one inside a cell.';
     return { delimiter, headings: [], rows: [], broken: [{ line, read: '', problem, hint }] };
   }
-  const [first, ...rest] = parsed;
-  const headings = (first?.record ?? []).map((h) => h.trim());
+  const [first, ...rest] = records;
+  const headings = (first?.cells ?? []).map((h) => h.trim());
   const twice = headings.find((h, i) => h !== '' && headings.indexOf(h) !== i);
   if (twice !== undefined) {
     const problem = 'two columns have this heading';
@@ -68,9 +80,8 @@ export function readTable(text: string): Table {
   }
   const rows: TableRow[] = [];
   const broken: Table['broken'][number][] = [];
-  for (const { record, info, raw } of rest) {
+  for (const { cells: record, line } of rest) {
     if (record.every((cell) => cell.trim() === '')) continue;
-    const line = info.lines - linesWithin(raw);
     const unplain = record.find((cell) => !isPlain(cell));
     if (unplain !== undefined) {
       const problem = 'holds control characters or half a character';
