@@ -1,4 +1,4 @@
-/** 0.1 mm at most: 530.1 − 360 is not quite 170.1 in binary. */
+/** 0.1 mm at most: 512.2 − 152.2 is not quite 360 in binary. */
 const ROUNDING_DEG = 1e-9;
 
 /** One place on the globe, of [longitude, latitude]: longitudes a whole turn apart, or any longitude at a pole. */
