@@ -106,3 +106,48 @@ test('without a line the steps are taken back and done again one by one', async 
   await expect.poll(texts).toEqual([younger, '9.64', older]);
   await context.setOffline(false);
 });
+
+test('the cell under edit stays with its row while rows come and go', async ({ page, browser }) => {
+  await signInAs(page, 'researcher', LINK);
+  await expect(cell(page, '66.0')).toHaveText('9.64');
+  const before = await saved(page);
+  await cell(page, '108.0').dblclick();
+  await page.getByRole('textbox', { name: 'Angle, °' }).fill('28.8');
+
+  const other = await browser.newContext();
+  const theirs = await other.newPage();
+  await signInAs(theirs, 'lead', LINK);
+  const origin = new URL(page.url()).origin;
+  const made = await theirs.request.post(`${API}/rotations`, {
+    data: { block: 'sable', relative_to: 'old-harrow', age_ma: 41, pole_lat: 1, pole_lon: 2, angle_deg: 3 },
+    headers: { origin, 'if-match': '*' },
+  });
+  expect(made.status()).toBe(201);
+  await expect(cell(page, '41.0')).toHaveText('3.00');
+  await page.keyboard.press('Enter');
+  await expect.poll(() => saved(page)).toEqual({ ...before, 41: 3, 108: 28.8 });
+
+  // Chosen by its row too: what is typed next goes where the reader sees the frame.
+  await cell(page, '66.0').dblclick();
+  await page.getByRole('textbox', { name: 'Angle, °' }).fill('9.9');
+  const { items } = (await (
+    await theirs.request.get(`${API}/rotations?version=draft&block=sable`)
+  ).json()) as {
+    items: { id: string; age_ma: number }[];
+  };
+  const row = items.find(({ age_ma }) => age_ma === 66)!;
+  await theirs.request.delete(`${API}/rotations/${row.id}`, { headers: { origin, 'if-match': '*' } });
+  await expect(page.getByRole('status').filter({ hasText: /Changed by .+ at|no such row/i })).toBeVisible();
+  const { 66: _gone, ...rest } = before;
+  await expect.poll(() => saved(page)).toEqual({ ...rest, 41: 3, 108: 28.8 });
+
+  await theirs.request.post(`${API}/changes/undo`, { headers: { origin } });
+  await theirs.request.post(`${API}/changes/undo`, { headers: { origin } });
+  await page
+    .getByRole('button', { name: 'Keep theirs' })
+    .or(page.getByRole('button', { name: 'Put back' }))
+    .click();
+  await page.getByRole('button', { name: 'Undo' }).click();
+  await expect.poll(() => saved(page)).toEqual(before);
+  await other.close();
+});

@@ -83,7 +83,16 @@ export function Grid(props: GridProps) {
                   {slots.map((slot) => {
                     if (slot.shown) {
                       return (
-                        <div key={slot.of.key} role="gridcell" className="truncate px-2 leading-[20px]">
+                        <div
+                          key={slot.of.key}
+                          role="gridcell"
+                          className="truncate px-2 leading-[20px]"
+                          // What is typed after a press here must not land in the cell chosen before.
+                          onPointerDown={(event) => {
+                            event.preventDefault();
+                            grid.current?.blur();
+                          }}
+                        >
                           {slot.shown.show(row)}
                         </div>
                       );

@@ -19,11 +19,40 @@ interface Surroundings {
   readonly scrollTo: (row: number, align?: 'center') => void;
 }
 
+interface Edited {
+  /** Its id. */
+  readonly row: string;
+  readonly column: number;
+  readonly text: string;
+}
+
+interface Chosen {
+  readonly selection: Selection;
+  /** Ids of the rows of both corners. */
+  readonly at: string | null;
+  readonly from: string | null;
+}
+
+/** The selection where its rows stand now; a row that is gone leaves its place, within the table. */
+function anchored({ selection, at, from }: Chosen, rows: GridProps['rows']): Selection {
+  const place = (corner: Place, id: string | null): Place => {
+    const row = id === null ? -1 : rows.findIndex((one) => one.id === id);
+    return { ...corner, row: row >= 0 ? row : Math.min(corner.row, Math.max(0, rows.length - 1)) };
+  };
+  return { at: place(selection.at, at), from: place(selection.from, from) };
+}
+
 export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
   const { columns, rows, pending, readOnly, onChanges, onEditing, onDelete, onAdd, onRow } = props;
   const { start = null, inSight = null } = props;
-  const [selection, setSelection] = useState<Selection>(START);
-  const [edit, setEdit] = useState<{ place: Place; text: string } | null>(null);
+  // Rows come and go while others edit: what is chosen and what is edited stay with their rows, not with their places.
+  const [chosen, setChosen] = useState<Chosen>({ selection: START, at: null, from: null });
+  const [editing, setEdit] = useState<Edited | null>(null);
+  const selection = useMemo(() => anchored(chosen, rows), [chosen, rows]);
+  const edit = useMemo(() => {
+    const row = editing ? rows.findIndex(({ id }) => id === editing.row) : -1;
+    return editing && row >= 0 ? { place: { row, column: editing.column }, text: editing.text } : null;
+  }, [editing, rows]);
   // Moving the focus away blurs the field, which keeps the cell: this says that it has been dealt with.
   const open = useRef(false);
   const size = { rows: rows.length, columns: columns.length };
@@ -31,7 +60,11 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
 
   const goTo = useCallback(
     (next: Selection) => {
-      setSelection(next);
+      setChosen({
+        selection: next,
+        at: rows[next.at.row]?.id ?? null,
+        from: rows[next.from.row]?.id ?? null,
+      });
       scrollTo(next.at.row);
       const row = rows[next.at.row];
       if (row && !row.computed) onRow(row.id);
@@ -49,14 +82,14 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
     const column = columns[place.column];
     if (readOnly || !row || row.computed || !column) return;
     open.current = true;
-    setEdit({ place, text });
+    setEdit({ row: row.id, column: place.column, text });
     onEditing({ row: row.id, key: column.key, text, column });
   };
   const type = (text: string): void => {
-    if (!edit) return;
-    setEdit({ ...edit, text });
-    const column = columns[edit.place.column]!;
-    onEditing({ row: rows[edit.place.row]!.id, key: column.key, text, column });
+    if (!editing) return;
+    setEdit({ ...editing, text });
+    const column = columns[editing.column]!;
+    onEditing({ row: editing.row, key: column.key, text, column });
   };
   const putBack = (): void => {
     open.current = false;
@@ -76,6 +109,18 @@ export function useGrid(props: GridProps, { grid, scrollTo }: Surroundings) {
     goTo({ at, from: at });
     grid.current?.focus();
   };
+
+  // The row under edit was deleted by someone: what was typed goes the way of any edit, so that the refusal is told.
+  const orphaned = editing !== null && edit === null;
+  useEffect(() => {
+    if (!orphaned) return;
+    open.current = false;
+    onChanges([{ row: editing.row, key: columns[editing.column]!.key, text: editing.text }], []);
+    // The row goes with the props, once.
+    // eslint-disable-next-line react-hooks/set-state-in-effect
+    setEdit(null);
+    onEditing(null);
+  }, [orphaned, editing, columns, onChanges, onEditing]);
 
   useEffect(() => {
     if (inSight === null || grid.current?.contains(document.activeElement)) return;
